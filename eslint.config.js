@@ -92,5 +92,21 @@ module.exports = [
       'no-restricted-imports': ['error', pure],
     },
   },
+  {
+    files: ['**/*.{ts,tsx}'],
+    ignores: ['**/*.test.{ts,tsx}'],
+    rules: { 'max-lines': ['error', { max: 300, skipBlankLines: true }] },
+  },
+  {
+    files: ['server/**/*.ts', 'workers/**/*.ts'],
+    ignores: ['server/config.ts', '**/*.test.ts'],
+    rules: {
+      'no-restricted-properties': [
+        'error',
+        { object: 'process', property: 'env', message: 'Only server/config.ts reads the environment.' },
+      ],
+    },
+  },
   { files: ['**/*.test.{ts,tsx}'], rules: { 'import/no-restricted-paths': 'off' } },
+  { files: ['**/*.{js,mjs}'], rules: { 'no-unused-vars': ['error', { argsIgnorePattern: '^_' }] } },
 ];
