@@ -1,0 +1,119 @@
+import type { ProblemBody } from '@/shared/contract/problem';
+import type { CubeHead } from '@/shared/fits/cubeHead';
+import { rows, type Db } from './db';
+
+export interface CubeStatistics {
+  minimum: number | null;
+  maximum: number | null;
+  rms: number | null;
+  blanks: number;
+}
+export interface CubeRow {
+  id: string;
+  teamId: string;
+  regionId: string;
+  name: string;
+  fileName: string;
+  fileKey: string;
+  planesKey: string | null;
+  sizeBytes: number;
+  checksum: string;
+  head: CubeHead | null;
+  status: 'uploaded' | 'ingesting' | 'ready' | 'failed' | 'cancelled';
+  progress: number;
+  activity: string | null;
+  problem: ProblemBody | null;
+  statistics: CubeStatistics | null;
+  windowLow: number | null;
+  windowHigh: number | null;
+  createdById: string | null;
+  createdByName: string | null;
+  createdAt: Date;
+  readyAt: Date | null;
+  removedAt: Date | null;
+}
+
+const columns = `
+  cubes.id, regions.team_id as "teamId", cubes.region_id as "regionId", cubes.name, cubes.file_name as "fileName",
+  cubes.file_key as "fileKey", cubes.planes_key as "planesKey", cubes.size_bytes::float8 as "sizeBytes",
+  cubes.checksum, cubes.head, cubes.status, cubes.progress, cubes.activity, cubes.problem, cubes.statistics,
+  cubes.window_low as "windowLow", cubes.window_high as "windowHigh", cubes.created_by as "createdById",
+  people.name as "createdByName", cubes.created_at as "createdAt", cubes.ready_at as "readyAt",
+  cubes.removed_at as "removedAt"`;
+const from = `from cubes join regions on regions.id = cubes.region_id left join people on people.id = cubes.created_by`;
+
+export const listCubes = (db: Db, regionId: string) =>
+  rows<CubeRow>(
+    db,
+    `select ${columns} ${from} where cubes.region_id = ? and cubes.removed_at is null order by cubes.created_at desc, cubes.id`,
+    [regionId],
+  );
+
+/** Also a removed one: the service decides what may be done with it. */
+export async function findCube(db: Db, id: string): Promise<CubeRow | undefined> {
+  return (await rows<CubeRow>(db, `select ${columns} ${from} where cubes.id = ?`, [id]))[0];
+}
+
+export async function findCubeByChecksum(
+  db: Db,
+  regionId: string,
+  checksum: string,
+): Promise<CubeRow | undefined> {
+  const found = await rows<CubeRow>(
+    db,
+    `select ${columns} ${from} where cubes.region_id = ? and cubes.checksum = ? and cubes.removed_at is null`,
+    [regionId, checksum],
+  );
+  return found[0];
+}
+
+export const insertCube = (
+  db: Db,
+  cube: {
+    id: string;
+    regionId: string;
+    name: string;
+    fileName: string;
+    fileKey: string;
+    sizeBytes: number;
+    checksum: string;
+    head: CubeHead;
+    createdBy: string;
+  },
+) =>
+  db('cubes').insert({
+    id: cube.id,
+    region_id: cube.regionId,
+    name: cube.name,
+    file_name: cube.fileName,
+    file_key: cube.fileKey,
+    size_bytes: cube.sizeBytes,
+    checksum: cube.checksum,
+    head: JSON.stringify(cube.head),
+    activity: 'waiting for a worker',
+    created_by: cube.createdBy,
+  });
+
+export const renameCube = (db: Db, id: string, name: string) => db('cubes').where({ id }).update({ name });
+
+export const setCubeRemoved = (db: Db, id: string, removed: boolean) =>
+  db('cubes')
+    .where({ id })
+    .update({ removed_at: removed ? db.fn.now() : null });
+
+/** From one of `before` to `after`; false when it was in another state by then. */
+export async function moveCube(
+  db: Db,
+  id: string,
+  before: CubeRow['status'][],
+  after: CubeRow['status'],
+  activity: string | null,
+): Promise<boolean> {
+  const found = await rows(
+    db,
+    `update cubes set status = ?, activity = ?, progress = 0, problem = null, lease_holder = null, lease_until = null
+     where id = ? and status = any(?) and removed_at is null returning id`,
+    [after, activity, id, before],
+  );
+  return found.length > 0;
+}

@@ -1,0 +1,144 @@
+/** What one worker does to one cube. Every write names the lease, so that a late twin changes nothing. */
+import type { ProblemBody } from '@/shared/contract/problem';
+import type { CubeHead } from '@/shared/fits/cubeHead';
+import type { CubeStatistics } from './cubes';
+import { rows, type Db } from './db';
+
+export const LEASE_SECONDS = 15;
+
+/** Take the cube if it waits, or if the worker that had it stopped renewing its lease. */
+export async function claimCube(db: Db, id: string, holder: string): Promise<boolean> {
+  const found = await rows(
+    db,
+    `update cubes set status = 'ingesting', lease_holder = ?, lease_until = now() + make_interval(secs => ?),
+            progress = 0, problem = null, activity = 'opening the file'
+     where id = ? and removed_at is null
+       and (status = 'uploaded' or (status = 'ingesting' and lease_until < now()))
+     returning id`,
+    [holder, LEASE_SECONDS, id],
+  );
+  return found.length > 0;
+}
+
+/** Renew the lease and say how far it is. False: cancelled, removed or taken over; stop. */
+export async function renewCube(
+  db: Db,
+  id: string,
+  holder: string,
+  progress: number,
+  activity: string,
+): Promise<boolean> {
+  const found = await rows(
+    db,
+    `update cubes set lease_until = now() + make_interval(secs => ?), progress = ?, activity = ?
+     where id = ? and lease_holder = ? and status = 'ingesting' and removed_at is null returning id`,
+    [LEASE_SECONDS, progress, activity, id, holder],
+  );
+  return found.length > 0;
+}
+
+export interface ChannelDraft {
+  channel: number;
+  velocity: number;
+  minimum: number | null;
+  maximum: number | null;
+  mean: number | null;
+  rms: number | null;
+  rmsAboutZero: number | null;
+  blanks: number;
+  thumbnail: Buffer;
+}
+export interface ImageDraft {
+  kind: 'total' | 'strip' | 'mean-spectrum';
+  meta: Record<string, unknown>;
+  bytes: Buffer;
+}
+
+/** Replace whatever an earlier attempt left, and finish, in the caller's transaction. False: the lease is lost. */
+export async function finishCube(
+  db: Db,
+  id: string,
+  holder: string,
+  result: {
+    head: CubeHead;
+    planesKey: string | null;
+    statistics: CubeStatistics;
+    window: [number, number];
+    channels: ChannelDraft[];
+    images: ImageDraft[];
+  },
+): Promise<boolean> {
+  const found = await rows(
+    db,
+    `update cubes set status = 'ready', progress = 1, activity = null, ready_at = now(), lease_holder = null,
+            lease_until = null, head = ?::jsonb, planes_key = ?, statistics = ?::jsonb, window_low = ?, window_high = ?
+     where id = ? and lease_holder = ? and status = 'ingesting' returning id`,
+    [
+      JSON.stringify(result.head),
+      result.planesKey,
+      JSON.stringify(result.statistics),
+      result.window[0],
+      result.window[1],
+      id,
+      holder,
+    ],
+  );
+  if (found.length === 0) return false;
+  await db('channels').where({ cube_id: id }).delete();
+  await db('cube_images').where({ cube_id: id }).delete();
+  for (let first = 0; first < result.channels.length; first += 256) {
+    await db('channels').insert(
+      result.channels.slice(first, first + 256).map((c) => ({
+        cube_id: id,
+        channel: c.channel,
+        velocity: c.velocity,
+        minimum: c.minimum,
+        maximum: c.maximum,
+        mean: c.mean,
+        rms: c.rms,
+        rms_about_zero: c.rmsAboutZero,
+        blanks: c.blanks,
+        thumbnail: c.thumbnail,
+      })),
+    );
+  }
+  for (const image of result.images)
+    await db('cube_images').insert({
+      cube_id: id,
+      kind: image.kind,
+      meta: JSON.stringify(image.meta),
+      bytes: image.bytes,
+    });
+  return true;
+}
+
+/** The input is at fault: say so on the cube. False: the lease is lost. */
+export async function failCube(db: Db, id: string, holder: string, problem: ProblemBody): Promise<boolean> {
+  const found = await rows(
+    db,
+    `update cubes set status = 'failed', activity = null, problem = ?::jsonb, lease_holder = null, lease_until = null
+     where id = ? and lease_holder = ? and status = 'ingesting' returning id`,
+    [JSON.stringify(problem), id, holder],
+  );
+  return found.length > 0;
+}
+
+/** Give the cube back to the queue, for a fault that may pass. */
+export const releaseCube = (db: Db, id: string, holder: string) =>
+  rows(
+    db,
+    `update cubes set status = 'uploaded', activity = 'waiting for a worker', lease_holder = null, lease_until = null
+     where id = ? and lease_holder = ? and status = 'ingesting'`,
+    [id, holder],
+  );
+
+/** Cubes that wait without a job, or whose worker died. */
+export const abandonedCubes = (db: Db) =>
+  rows<{ id: string }>(
+    db,
+    `select cubes.id from cubes
+     where cubes.removed_at is null and (
+       (cubes.status = 'ingesting' and cubes.lease_until < now())
+       or (cubes.status = 'uploaded' and not exists (
+         select 1 from graphile_worker.jobs as jobs where jobs.key = 'ingest:' || cubes.id::text)))`,
+  );
