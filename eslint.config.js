@@ -65,15 +65,18 @@ module.exports = [
   ...tseslint.configs.recommended.map((c) => ({ ...c, files: ['**/*.{ts,tsx}'] })),
   {
     files: ['**/*.{ts,tsx}'],
-    plugins: { import: imports, 'react-hooks': hooks },
+    plugins: { import: imports },
     settings: { 'import/resolver': { typescript: { project: 'tsconfig.json' } } },
     rules: {
       'import/no-restricted-paths': ['error', { zones }],
-      'react-hooks/rules-of-hooks': 'error',
-      'react-hooks/exhaustive-deps': 'error',
       '@typescript-eslint/no-require-imports': 'off',
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_' }],
     },
+  },
+  {
+    files: ['{app,components,hooks}/**/*.{ts,tsx}'],
+    plugins: { 'react-hooks': hooks },
+    rules: { 'react-hooks/rules-of-hooks': 'error', 'react-hooks/exhaustive-deps': 'error' },
   },
   {
     files: ['shared/**/*.ts'],
