@@ -55,15 +55,15 @@ export const FitProvenance = z.looseObject({
   marks: z.number().int(),
   startValues: z.record(z.string(), z.number().nullable()),
   iterations: z.number().int(),
-  seed: z.number().int(),
-  codeVersion: z.string().nullable(),
+  seed: z.number().int().nullable(),
+  codeVersion: z.string().nullish(),
 });
 
 /** What the engine finds; the columns a fit has only once it is done. */
 export const FitOutcome = z.looseObject({
   model: z.enum(MODELS),
   parameters: z.record(z.string(), Parameter),
-  correlation: z.object({ names: z.array(z.string()), matrix: z.array(z.array(z.number())) }),
+  correlation: z.object({ names: z.array(z.string()), matrix: z.array(z.array(z.number().nullable())) }),
   chi2: z.number(),
   dof: z.number().int(),
   aicc: z.number().nullable(),
@@ -73,6 +73,14 @@ export const FitOutcome = z.looseObject({
   residuals: z.array(z.object({ mark: z.number().int(), degrees: z.number(), weight: z.number() })),
   rings: z.array(FitRing),
   provenance: FitProvenance,
+  extra: z
+    .looseObject({
+      riseSigma: z
+        .number()
+        .describe('how far the rings rise above a straight line, in units of a mark error'),
+      setAside: z.array(z.number().int()).describe('marks left out of the fit, by index'),
+    })
+    .describe('what the error bars were made of and what the warnings were judged by'),
 });
 
 export const Fit = z
