@@ -1,3 +1,6 @@
+// The store's client would print on every run that it will want a newer Node some day.
+process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= 'true';
+
 // Four projects: node (server, workers, shared, scripts), e2e (browser), ui (native render), web (DOM render).
 const moduleNameMapper = { '^@/(.*)$': '<rootDir>/$1' };
 const cacheDirectory = '<rootDir>/.cache/jest'; // not the system's temporary folder, which a test run empties
