@@ -1,0 +1,249 @@
+import { evaluate } from '@/shared/shell/residuals';
+import { evaluation, recentred, type Evaluation, type Frame } from '@/shared/shell/frame';
+import { velocityReach, type MarkSet } from '@/shared/shell/markSet';
+import { accumulate, factorise, hold, substitute } from '@/shared/shell/normalEquations';
+import { robustWeights } from '@/shared/shell/robust';
+import {
+  EXTRA_1,
+  EXTRA_2,
+  LN_W,
+  THETA,
+  V0,
+  X,
+  Y,
+  parameterCount,
+  type ModelName,
+} from '@/shared/shell/shellModel';
+
+/** What is to be minimised: a model on marks, with v_sys free, under a prior, or held. */
+export interface ShellProblem {
+  model: ModelName;
+  marks: MarkSet;
+  /** sigma 0: v_sys is held at the value. */
+  vSys: { value: number; sigma: number } | null;
+}
+
+/** A point in parameter space: offsets in p refer to the frame. */
+export interface ShellState {
+  frame: Frame;
+  p: Float64Array;
+}
+
+export interface SolveOptions {
+  /** Down-weight marks by their residuals instead of fitting all alike. */
+  robust?: boolean;
+  /** Stop when a step is shorter than this many standard errors. */
+  tolerance?: number;
+  maxIterations?: number;
+}
+
+export interface Outcome extends ShellState {
+  iterations: number;
+  /** The step fell below the tolerance, or the fit sits on a kink and gains nothing more. */
+  settled: boolean;
+  /** The expansion velocity ran into the bound of its range. */
+  atBound: 'low' | 'high' | null;
+}
+
+/** Arrays of one solver, reused from fit to fit. */
+export interface Workspace {
+  now: Evaluation;
+  trial: Evaluation;
+  /** Working variance: the model's own, damped from step to step once it should have settled. */
+  variance: Float64Array;
+  robust: Float64Array;
+  weight: Float64Array;
+  scratch: Float64Array;
+  A: Float64Array;
+  damped: Float64Array;
+  g: Float64Array;
+  step: Float64Array;
+  scale: Float64Array;
+  next: Float64Array;
+}
+
+export function workspace(marks: MarkSet, size: number): Workspace {
+  const perMark = () => new Float64Array(marks.count);
+  const perParameter = () => new Float64Array(size);
+  return {
+    now: evaluation(marks, size),
+    trial: evaluation(marks, size),
+    variance: perMark(),
+    robust: perMark(),
+    weight: perMark(),
+    scratch: perMark(),
+    A: new Float64Array(size * size),
+    damped: new Float64Array(size * size),
+    g: perParameter(),
+    step: perParameter(),
+    scale: perParameter(),
+    next: perParameter(),
+  };
+}
+
+const HOLD_STEPS = 8; // from this iteration on the variance is the geometric mean of old and new
+const ROBUST_EVERY = 3;
+const ROBUST_LAST = 15;
+const ROBUST_SETTLED = 17;
+const KINK_GAIN = 1e-6;
+const FAILURES_ALLOWED = 12;
+
+/** Bounds of ln w in units of the marks' velocity reach: at the upper one the expansion velocity is unconstrained. */
+export const WIDEST = 20;
+const NARROWEST = 0.3;
+
+/**
+ * Damped Gauss-Newton (Marquardt 1963) on residuals over their effective standard deviations, the deviations being
+ * taken from the parameters reached so far: the answer is the fixed point of reweighting. Works on `state.p` in place.
+ */
+export function solve(
+  problem: ShellProblem,
+  state: ShellState,
+  options: SolveOptions = {},
+  ws = workspace(problem.marks, parameterCount(problem.model)),
+): Outcome {
+  const { robust = false, tolerance = 1e-6, maxIterations = 80 } = options;
+  const { model, marks, vSys } = problem;
+  const { frame, p } = state;
+  const size = p.length;
+  const bounds = boundsOf(marks);
+  const held = vSys !== null && vSys.sigma === 0;
+  const priorWeight = vSys !== null && vSys.sigma > 0 ? 1 / vSys.sigma ** 2 : 0;
+  const priorValue = vSys?.value ?? 0;
+  if (held) p[V0] = priorValue;
+
+  ws.robust.fill(1);
+  evaluate(model, marks, frame, p, ws.now);
+  let damping = 1e-4;
+  let failures = 0;
+  let settled = false;
+  let iteration = 0;
+  for (; iteration < maxIterations && !settled; iteration++) {
+    if (robust && iteration % ROBUST_EVERY === 0 && iteration <= ROBUST_LAST)
+      robustWeights(ws.now.residual, ws.now.variance, iteration >= ROBUST_EVERY, ws.scratch, ws.robust);
+    for (let i = 0; i < marks.count; i++) {
+      const fresh = ws.now.variance[i]!;
+      ws.variance[i] = iteration < HOLD_STEPS ? fresh : Math.sqrt(ws.variance[i]! * fresh);
+      ws.weight[i] = ws.robust[i]! / ws.variance[i]!;
+    }
+
+    let cost = accumulate(size, ws.now.residual, ws.now.jacobian, ws.weight, ws.A, ws.g);
+    const fromPrior = p[V0]! - priorValue;
+    cost += priorWeight * fromPrior * fromPrior;
+    ws.A[V0 * size + V0] = ws.A[V0 * size + V0]! + priorWeight;
+    ws.g[V0] = ws.g[V0]! + priorWeight * fromPrior;
+    if (held) hold(size, V0, ws.A, ws.g);
+    if (p[LN_W]! >= bounds.lnWHigh && ws.g[LN_W]! < 0) hold(size, LN_W, ws.A, ws.g);
+
+    const solved = dampedStep(size, damping, ws);
+    let gain = 0; // expected fall of chi2 along the full step
+    for (let a = 0; a < size; a++) gain -= ws.g[a]! * ws.step[a]!;
+    let accepted = false;
+    if (solved) {
+      limitStep(p, ws.step);
+      for (let a = 0; a < size; a++) ws.next[a] = p[a]! + ws.step[a]!;
+      intoBounds(model, ws.next, bounds);
+      if (held) ws.next[V0] = priorValue;
+      evaluate(model, marks, frame, ws.next, ws.trial);
+      let trialCost = priorWeight * (ws.next[V0]! - priorValue) ** 2;
+      for (let i = 0; i < marks.count; i++) trialCost += ws.weight[i]! * ws.trial.residual[i]! ** 2;
+      accepted = trialCost <= cost * (1 + 1e-9) + 1e-12;
+    }
+    const perDof = Math.max(1, cost / Math.max(marks.count - size, 1));
+    failures = accepted ? 0 : failures + 1;
+    if (!robust || iteration > ROBUST_SETTLED)
+      settled = (accepted && gain < tolerance * tolerance * perDof) || failures > FAILURES_ALLOWED;
+    if (iteration === maxIterations - 1) settled ||= gain < KINK_GAIN * perDof;
+    damping = accepted ? Math.max(damping * 0.15, 1e-10) : Math.min(damping * 6, 1e8);
+    if (accepted) {
+      p.set(ws.next);
+      [ws.now, ws.trial] = [ws.trial, ws.now];
+    }
+  }
+  const atBound =
+    p[LN_W]! >= bounds.lnWHigh - 1e-3 ? 'high' : p[LN_W]! <= bounds.lnWLow + 1e-3 ? 'low' : null;
+  return { frame, p, iterations: iteration, settled, atBound };
+}
+
+/**
+ * Solve, move the tangent plane on to the solution, and go on until nothing moves: the offsets are then zero and their
+ * errors are errors on the sky. The robust pass needs that only where the parameters are tied to the plane's axes.
+ */
+export function solveAndRecentre(
+  problem: ShellProblem,
+  state: ShellState,
+  options: SolveOptions = {},
+  ws = workspace(problem.marks, parameterCount(problem.model)),
+): Outcome {
+  const rounds = options.robust ? (problem.model === 'drifting' ? 2 : 1) : 6;
+  let outcome: Outcome = { ...state, iterations: 0, settled: false, atBound: null };
+  for (let round = 0; round < rounds; round++) {
+    const next = solve(problem, outcome, options, ws);
+    const moved = Math.hypot(next.p[X]!, next.p[Y]!);
+    outcome = {
+      ...next,
+      frame: recentred(problem.marks, next.frame, next.p),
+      iterations: outcome.iterations + next.iterations,
+    };
+    if (moved < 1e-6) break;
+  }
+  return outcome;
+}
+
+/** Solve the damped equations, each parameter in units of its own curvature. False when even damped they are singular. */
+function dampedStep(size: number, damping: number, ws: Workspace): boolean {
+  for (let a = 0; a < size; a++) ws.scale[a] = 1 / Math.sqrt(ws.A[a * size + a]! + 1e-300);
+  for (let a = 0; a < size; a++) {
+    for (let b = 0; b < size; b++)
+      ws.damped[a * size + b] = ws.A[a * size + b]! * ws.scale[a]! * ws.scale[b]!;
+    ws.damped[a * size + a] = ws.damped[a * size + a]! + damping + 1e-13;
+    ws.step[a] = -ws.g[a]! * ws.scale[a]!;
+  }
+  if (!factorise(size, ws.damped)) return false;
+  substitute(size, ws.damped, ws.step);
+  for (let a = 0; a < size; a++) ws.step[a] = ws.step[a]! * ws.scale[a]!;
+  return true;
+}
+
+/** No step may change ln w by more than 0.6, theta by half of itself, the centre by 0.3 rad. */
+function limitStep(p: Float64Array, step: Float64Array): void {
+  const clip = (a: number, limit: number) => {
+    step[a] = Math.min(Math.max(step[a]!, -limit), limit);
+  };
+  clip(LN_W, 0.6);
+  clip(THETA, 0.5 * p[THETA]!);
+  clip(X, 0.3);
+  clip(Y, 0.3);
+}
+
+export interface Bounds {
+  thetaLow: number;
+  thetaHigh: number;
+  lnWLow: number;
+  lnWHigh: number;
+  vLow: number;
+  vHigh: number;
+}
+
+export function boundsOf(marks: MarkSet): Bounds {
+  const { low, high, half } = velocityReach(marks);
+  return {
+    thetaLow: 1e-6,
+    thetaHigh: 1.45,
+    lnWLow: Math.log(half * NARROWEST),
+    lnWHigh: Math.log(half * WIDEST),
+    vLow: low - 40 * half,
+    vHigh: high + 40 * half,
+  };
+}
+
+function intoBounds(model: ModelName, p: Float64Array, bounds: Bounds): void {
+  p[THETA] = Math.min(Math.max(p[THETA]!, bounds.thetaLow), bounds.thetaHigh);
+  p[V0] = Math.min(Math.max(p[V0]!, bounds.vLow), bounds.vHigh);
+  p[LN_W] = Math.min(Math.max(p[LN_W]!, bounds.lnWLow), bounds.lnWHigh);
+  if (model !== 'elliptical') return;
+  const flattening = Math.hypot(p[EXTRA_1]!, p[EXTRA_2]!);
+  if (flattening <= 0.95) return;
+  p[EXTRA_1] = (p[EXTRA_1]! * 0.95) / flattening;
+  p[EXTRA_2] = (p[EXTRA_2]! * 0.95) / flattening;
+}

@@ -1,0 +1,60 @@
+import type { ErrorModel } from '@/shared/shell/errorModel';
+import type { ShellState } from '@/shared/shell/gaussNewton';
+import type { Parameter } from '@/shared/shell/fitResult';
+import { naturalJacobian, naturalValues, transformed } from '@/shared/shell/naturalParameters';
+import { LN_W, PARAMETER_NAMES, PARAMETER_UNITS, V0, type ModelName } from '@/shared/shell/shellModel';
+import { tHalfWidth } from '@/shared/shell/studentT';
+
+export interface Reported {
+  names: readonly string[];
+  parameters: Record<string, Parameter>;
+  /** Covariances in natural units: of the four-source error model, and of independent marks. */
+  covariance: Float64Array;
+  plain: Float64Array;
+  correlation: number[][];
+}
+
+/**
+ * Values, standard errors and central 68 % intervals. An interval is value +- t se, with Student's t; the expansion
+ * velocity's is symmetric in 1/v_exp^2, the quantity that rings measure nearly linearly, and open above where zero
+ * lies inside it.
+ */
+export function report(model: ModelName, state: ShellState, errors: ErrorModel, held: boolean): Reported {
+  const size = state.p.length;
+  const names = PARAMETER_NAMES[model];
+  const values = naturalValues(model, state);
+  const G = naturalJacobian(model, state);
+  const covariance = transformed(size, G, errors.covariance);
+  const plain = transformed(size, G, errors.plain);
+  const se = Float64Array.from({ length: size }, (_, a) => Math.sqrt(covariance[a * size + a]!));
+  const parameters: Record<string, Parameter> = {};
+  names.forEach((name, a) => {
+    const value = values[a]!;
+    const unit = PARAMETER_UNITS[name] ?? '';
+    if (held && a === V0) {
+      parameters[name] = { value, se: 0, lo: value, hi: value, unit };
+      return;
+    }
+    const half = tHalfWidth(errors.tDof[a]!) * se[a]!;
+    let lo = value - half;
+    let hi: number | null = value + half;
+    if (a === LN_W) {
+      const inverseSquare = (2 * half) / value; // half-width of 1/v_exp^2 in units of itself
+      lo = value / Math.sqrt(1 + inverseSquare);
+      hi = inverseSquare < 1 ? value / Math.sqrt(1 - inverseSquare) : null;
+    }
+    parameters[name] = { value, se: finite(se[a]!), lo: finite(lo), hi: finite(hi), unit };
+  });
+  const correlation = names.map((_, a) =>
+    names.map((_, b) => {
+      if (a === b) return 1;
+      const product = se[a]! * se[b]!;
+      return product > 0 ? covariance[a * size + b]! / product : 0;
+    }),
+  );
+  return { names, parameters, covariance, plain, correlation };
+}
+
+/** The number where JSON can carry it, else null. */
+export const finite = (value: number | null): number | null =>
+  value !== null && Number.isFinite(value) ? value : null;
