@@ -1,6 +1,7 @@
 import { Matrix, SingularValueDecomposition } from 'ml-matrix';
 import { channelProducts, type ChannelDirections } from '@/shared/shell/channelDirections';
 import type { MarkSet } from '@/shared/shell/markSet';
+import { transformed } from '@/shared/shell/naturalParameters';
 import { median } from '@/shared/shell/robust';
 
 /**
@@ -20,7 +21,6 @@ const TIE = 0.1;
 /** Fewer spare rings than this: the ring scatter is invisible and assumed to equal one mark's error. */
 const SPARE_RINGS = 0.5;
 const LEAST_MARK_SCALE = 0.02;
-const SOURCES = 4;
 
 /**
  * Estimate the scales by equating four quadratic forms of the residuals to their expectations (Henderson 1953;
@@ -75,8 +75,9 @@ export function estimateScales(
 }
 
 /**
- * The matrix of expectations, and the row for the plain sum of squares. M is not stored: its elements are formed once
- * and added to what the sums need, first of all M times the channels' directions.
+ * The matrix of expectations tr(P_j M G_i M), and the row for the plain sum of squares. M = 1 - B X' with B = X A^-1
+ * is the unit matrix less one of low rank, so every sum over its elements, squared or along a direction, falls into
+ * sums over the marks of small matrices: the cost grows with the number of marks, not with its square.
  */
 function expectations(
   marks: MarkSet,
@@ -85,69 +86,98 @@ function expectations(
   size: number,
 ): { E: number[][]; total: number[] } {
   const { count: n, channels: K, channel } = marks;
-  const H = new Float64Array(n * size); // X A^-1
+  const X = d.scaled;
+  const B = new Float64Array(n * size);
   for (let i = 0; i < n; i++)
-    for (let a = 0; a < size; a++) {
-      let sum = 0;
-      for (let b = 0; b < size; b++) sum += d.scaled[i * size + b]! * inverse[b * size + a]!;
-      H[i * size + a] = sum;
-    }
-  const table = () => new Float64Array(n * K);
-  const [mU, mA, mB, mUnitU, mUnitA, mUnitB] = [table(), table(), table(), table(), table(), table()];
-  const E = [0, 1, 2, 3].map(() => new Array<number>(SOURCES).fill(0));
-  const total = new Array<number>(SOURCES).fill(0);
-  for (let i = 0; i < n; i++) {
-    for (let j = 0; j < n; j++) {
-      let m = i === j ? 1 : 0;
-      for (let a = 0; a < size; a++) m -= H[i * size + a]! * d.scaled[j * size + a]!;
-      const square = m * m;
-      E[0]![0]! += d.own[i]! * square * d.own[j]!;
-      E[0]![1]! += d.own[i]! * square * d.spread[j]!;
-      E[1]![1]! += d.spread[i]! * square * d.spread[j]!;
-      total[0]! += square * d.own[j]!;
-      total[1]! += square * d.spread[j]!;
-      const at = i * K + channel[j]!;
-      mU[at] = mU[at]! + m * d.u[j]!;
-      mA[at] = mA[at]! + m * d.a[j]!;
-      mB[at] = mB[at]! + m * d.b[j]!;
-      mUnitU[at] = mUnitU[at]! + m * d.unitU[j]!;
-      mUnitA[at] = mUnitA[at]! + m * d.unitA[j]!;
-      mUnitB[at] = mUnitB[at]! + m * d.unitB[j]!;
-    }
-  }
-  E[1]![0] = E[0]![1]!;
-  for (let i = 0; i < n; i++) {
-    for (let at = i * K; at < (i + 1) * K; at++) {
-      const ring = mU[at]! ** 2;
-      const shift = mA[at]! ** 2 + mB[at]! ** 2;
-      E[0]![2]! += d.own[i]! * ring;
-      E[1]![2]! += d.spread[i]! * ring;
-      E[0]![3]! += d.own[i]! * shift;
-      E[1]![3]! += d.spread[i]! * shift;
-      total[2]! += ring;
-      total[3]! += shift;
-      const ringUnit = mUnitU[at]! ** 2;
-      const shiftUnit = mUnitA[at]! ** 2 + mUnitB[at]! ** 2;
-      E[2]![0]! += d.own[i]! * ringUnit;
-      E[2]![1]! += d.spread[i]! * ringUnit;
-      E[3]![0]! += d.own[i]! * shiftUnit;
-      E[3]![1]! += d.spread[i]! * shiftUnit;
-    }
-  }
-  const products = (q: Float64Array, moved: Float64Array) => {
-    const sums = new Float64Array(K * K);
+    for (let a = 0; a < size; a++)
+      for (let b = 0; b < size; b++)
+        B[i * size + a] = B[i * size + a]! + X[i * size + b]! * inverse[b * size + a]!;
+  const leverage = new Float64Array(n);
+  for (let i = 0; i < n; i++)
+    for (let a = 0; a < size; a++) leverage[i] = leverage[i]! + B[i * size + a]! * X[i * size + a]!;
+
+  const diagonals = [d.own, d.spread, new Float64Array(n).fill(1)].map((weight) => ({
+    weight,
+    B: outerSum(size, B, weight),
+    X: outerSum(size, X, weight),
+  }));
+  type Diagonal = (typeof diagonals)[number];
+  const [own, spread, ones] = diagonals as [Diagonal, Diagonal, Diagonal];
+  /** Directions of all channels with their projections X'u_k, one row a channel. */
+  const along = (u: Float64Array) => {
+    const rows = new Float64Array(K * size);
     for (let i = 0; i < n; i++)
-      for (let l = 0; l < K; l++) {
-        const at = channel[i]! * K + l;
-        sums[at] = sums[at]! + q[i]! * moved[i * K + l]!;
+      for (let a = 0; a < size; a++) {
+        const at = channel[i]! * size + a;
+        rows[at] = rows[at]! + X[i * size + a]! * u[i]!;
       }
-    return sums.reduce((sum, value) => sum + value * value, 0);
+    return { u, rows, sum: outerSum(size, rows) };
   };
-  E[2]![2] = products(d.unitU, mU);
-  E[2]![3] = products(d.unitU, mA) + products(d.unitU, mB);
-  E[3]![2] = products(d.unitA, mU) + products(d.unitB, mU);
-  E[3]![3] = [d.unitA, d.unitB].reduce((sum, q) => sum + products(q, mA) + products(q, mB), 0);
-  return { E, total };
+  type Direction = ReturnType<typeof along>;
+  const rings = [along(d.u)];
+  const shifts = [along(d.a), along(d.b)];
+  const unitRings = [along(d.unitU)];
+  const unitShifts = [along(d.unitA), along(d.unitB)];
+
+  /** Sum over i, j of p_i M_ij^2 q_j. */
+  const both = (p: Diagonal, q: Diagonal) => {
+    let sum = inner(p.B, q.X);
+    for (let i = 0; i < n; i++) sum += p.weight[i]! * q.weight[i]! * (1 - 2 * leverage[i]!);
+    return sum;
+  };
+  /** Sum over marks i and channels k of p_i (M u_k)_i^2. */
+  const one = (p: Diagonal, directions: Direction[]) =>
+    directions.reduce((total, { u, rows, sum }) => {
+      total += inner(p.B, sum);
+      for (let i = 0; i < n; i++) {
+        let projected = 0;
+        for (let a = 0; a < size; a++) projected += B[i * size + a]! * rows[channel[i]! * size + a]!;
+        total += p.weight[i]! * u[i]! * (u[i]! - 2 * projected);
+      }
+      return total;
+    }, 0);
+  /** Sum over channels k, l of (q_k' M u_l)^2. */
+  const none = (units: Direction[], directions: Direction[]) => {
+    let total = 0;
+    for (const q of units)
+      for (const v of directions) {
+        total += inner(transformed(size, inverse, q.sum), v.sum);
+        const product = channelProducts(marks, q.u, v.u);
+        for (let k = 0; k < K; k++)
+          total += product[k]! * (product[k]! - 2 * bilinear(size, inverse, q.rows, v.rows, k * size));
+      }
+    return total;
+  };
+  const row = (p: Diagonal) => [both(p, own), both(p, spread), one(p, rings), one(p, shifts)];
+  const shared = (units: Direction[]) => [
+    one(own, units),
+    one(spread, units),
+    none(units, rings),
+    none(units, shifts),
+  ];
+  return { E: [row(own), row(spread), shared(unitRings), shared(unitShifts)], total: row(ones) };
+}
+
+/** Sum of w r r' over the rows r of a table. */
+function outerSum(size: number, rows: Float64Array, weight?: Float64Array): Float64Array {
+  const out = new Float64Array(size * size);
+  for (let i = 0; i * size < rows.length; i++)
+    for (let a = 0; a < size; a++) {
+      const left = (weight ? weight[i]! : 1) * rows[i * size + a]!;
+      for (let b = 0; b < size; b++) out[a * size + b] = out[a * size + b]! + left * rows[i * size + b]!;
+    }
+  return out;
+}
+
+/** Sum of the products of two matrices' elements. */
+const inner = (P: Float64Array, Q: Float64Array) => P.reduce((sum, value, at) => sum + value * Q[at]!, 0);
+
+/** p' C q for the rows of two tables that start at `from`. */
+function bilinear(size: number, C: Float64Array, p: Float64Array, q: Float64Array, from: number): number {
+  let sum = 0;
+  for (let a = 0; a < size; a++)
+    for (let b = 0; b < size; b++) sum += p[from + a]! * C[a * size + b]! * q[from + b]!;
+  return sum;
 }
 
 /** Least-norm solution, columns scaled first; singular values under 1e-10 of the largest are dropped. */
