@@ -43,7 +43,10 @@ export function stacked(pile: readonly Step[], step: Step, limit = 500): Step[] 
     const first = merged.get(change.id);
     merged.set(change.id, first ? { ...first, after: change.after } : change);
   }
-  return [...pile.slice(0, -1), { gesture: step.gesture, changes: [...merged.values()] }];
+  const changes = [...merged.values()].filter(
+    ({ before, after }) => !before || !after || !sameMark(before, after), // a mark put back where it was
+  );
+  return changes.length > 0 ? [...pile.slice(0, -1), { gesture: step.gesture, changes }] : pile.slice(0, -1);
 }
 
 /** The changes that lead from one list of marks to another. */

@@ -1,0 +1,124 @@
+import { useEffect, useRef, type RefObject } from 'react';
+import {
+  AT_REST,
+  gesture,
+  type GestureCommand,
+  type GestureEvent,
+  type PointerKind,
+} from '@/components/map/gestures';
+import type { ChannelMapProps } from '@/components/map/ChannelMap';
+import { HIT_PX, markAt } from '@/components/map/scene';
+import { panned, toImage, within, zoomedAbout, type ImagePoint } from '@/shared/image/viewport';
+
+let drags = 0;
+
+/** Wire the map's element to the gesture steps, and the commands to viewport, marks and callbacks. */
+export function usePointerGestures(element: RefObject<HTMLElement | null>, props: ChannelMapProps): void {
+  const latest = useRef(props);
+  useEffect(() => {
+    latest.current = props;
+  });
+
+  useEffect(() => {
+    const target = element.current;
+    if (!target) return;
+    const { store } = latest.current;
+    let state = AT_REST;
+    /** A mark in the air: where the pointer has it, and where it came from. */
+    let dragged: { id: string; at: ImagePoint; from: ImagePoint; gesture: string } | null = null;
+    let frame = 0;
+
+    const place = (e: MouseEvent) => {
+      const box = target.getBoundingClientRect();
+      return { sx: e.clientX - box.left, sy: e.clientY - box.top };
+    };
+    const hand = () => {
+      frame = 0;
+      if (dragged) latest.current.onMove(dragged.id, within(latest.current, dragged.at), dragged.gesture);
+    };
+    const endDrag = () => {
+      cancelAnimationFrame(frame);
+      hand();
+      dragged = null;
+    };
+
+    const obey = (command: GestureCommand) => {
+      const v = store.viewport.get();
+      if (!v) return;
+      switch (command.do) {
+        case 'pan':
+          return store.viewport.set(panned(v, command.dsx, command.dsy));
+        case 'zoom':
+          return store.viewport.set(zoomedAbout(v, command.factor, command.at));
+        case 'hover':
+          store.crosshair.set(null);
+          return store.hover.set(command.at ? toImage(v, command.at) : null);
+        case 'select':
+          return latest.current.onSelect(command.mark);
+        case 'place': {
+          const at = toImage(v, command.at);
+          const inside = within(latest.current, at);
+          if (at.x === inside.x && at.y === inside.y) latest.current.onPlace(at);
+          return;
+        }
+        case 'drag': {
+          if (dragged?.id !== command.mark) {
+            const mark = latest.current.scene.marks.find((m) => m.id === command.mark && m.away === 0);
+            if (!mark) return;
+            drags++;
+            dragged = { id: mark.id, at: mark, from: mark, gesture: `drag ${drags}` };
+          }
+          dragged.at = { x: dragged.at.x + command.dsx / v.scale, y: dragged.at.y - command.dsy / v.scale };
+          if (!frame) frame = requestAnimationFrame(hand); // at most one render a frame
+          return;
+        }
+        case 'drop':
+          return endDrag();
+        case 'restore':
+          if (dragged) dragged.at = dragged.from;
+          return endDrag();
+      }
+    };
+    const take = (event: GestureEvent) => {
+      const [next, commands] = gesture(state, event);
+      state = next;
+      commands.forEach(obey);
+    };
+
+    const onDown = (e: PointerEvent) => {
+      if (e.button !== 0) return;
+      target.setPointerCapture?.(e.pointerId);
+      const at = place(e);
+      const v = store.viewport.get();
+      const kind = (e.pointerType || 'mouse') as PointerKind;
+      const { scene, marking } = latest.current;
+      const hit = v ? markAt(scene.marks, toImage(v, at), v.scale, HIT_PX[kind] ?? HIT_PX.mouse) : null;
+      take({ type: 'down', id: e.pointerId, at, kind, hit, marking });
+    };
+    const onMove = (e: PointerEvent) => take({ type: 'move', id: e.pointerId, at: place(e) });
+    const onUp = (e: PointerEvent) => take({ type: 'up', id: e.pointerId, at: place(e) });
+    const onCancel = (e: PointerEvent) => take({ type: 'cancel', id: e.pointerId });
+    const onLeave = () => take({ type: 'leave' });
+    const onWheel = (e: WheelEvent) => {
+      e.preventDefault();
+      const unit = e.deltaMode === 1 ? 16 : e.deltaMode === 2 ? target.clientHeight : 1;
+      take({ type: 'wheel', at: place(e), delta: e.deltaY * unit, pinch: e.ctrlKey });
+    };
+
+    target.addEventListener('pointerdown', onDown);
+    target.addEventListener('pointermove', onMove);
+    target.addEventListener('pointerup', onUp);
+    target.addEventListener('pointercancel', onCancel);
+    target.addEventListener('pointerleave', onLeave);
+    target.addEventListener('wheel', onWheel, { passive: false });
+    return () => {
+      cancelAnimationFrame(frame);
+      target.removeEventListener('pointerdown', onDown);
+      target.removeEventListener('pointermove', onMove);
+      target.removeEventListener('pointerup', onUp);
+      target.removeEventListener('pointercancel', onCancel);
+      target.removeEventListener('pointerleave', onLeave);
+      target.removeEventListener('wheel', onWheel);
+    };
+  }, [element]);
+}

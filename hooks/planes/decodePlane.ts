@@ -1,0 +1,54 @@
+import { brightnessOf } from '@/shared/image/quantise';
+
+/** One channel as numbers, whole or reduced; row y = 0 first. */
+export interface ChannelPlane {
+  channel: number;
+  values: Uint16Array;
+  width: number;
+  height: number;
+  /** Image pixels along a side of one of its pixels. */
+  block: number;
+  scale: number;
+  offset: number;
+  blank: number;
+}
+
+/**
+ * Read the answer of the plane route: little-endian 16-bit numbers, and headers that say what they mean.
+ *
+ * @throws Error when a header is missing or the length is not width times height
+ */
+export function decodePlane(
+  channel: number,
+  body: ArrayBuffer,
+  header: (name: string) => string | null,
+): ChannelPlane {
+  const read = (name: string): number => {
+    const text = header(name);
+    const value = text === null || text.trim() === '' ? NaN : Number(text);
+    if (!Number.isFinite(value)) throw new Error(`The plane of channel ${channel} came without ${name}.`);
+    return value;
+  };
+  const plane = {
+    channel,
+    width: read('Plane-Width'),
+    height: read('Plane-Height'),
+    block: read('Plane-Block'),
+    scale: read('Plane-Scale'),
+    offset: read('Plane-Offset'),
+    blank: read('Plane-Blank'),
+  };
+  if (body.byteLength !== plane.width * plane.height * 2)
+    throw new Error(
+      `The plane of channel ${channel} has ${body.byteLength} bytes, not ${plane.width} × ${plane.height} × 2.`,
+    );
+  return { ...plane, values: new Uint16Array(body) };
+}
+
+/** Brightness at an image pixel; NaN for a blank, and outside the image. */
+export function brightnessAt(plane: ChannelPlane, i: number, j: number): number {
+  const x = Math.floor(i / plane.block);
+  const y = Math.floor(j / plane.block);
+  if (x < 0 || y < 0 || x >= plane.width || y >= plane.height) return NaN;
+  return brightnessOf(plane.values[y * plane.width + x]!, plane);
+}
