@@ -27,28 +27,60 @@ interface Hdu {
  * @throws Problem not-fits, fits-card, fits-shape, fits-truncated; of several HDUs without a cube, the first image's
  */
 export async function findCube(read: ReadBytes, size: number, hdu?: number): Promise<CubeHead> {
+  const { head, end } = await firstCube(read, size, hdu);
+  const after = await cautionsAfter(read, end, size, head.hdu, hdu === undefined);
+  return { ...head, cautions: [...head.cautions, ...after] };
+}
+
+/**
+ * Judge a file by its first bytes, while the rest is still on its way.
+ *
+ * @param bytes what has arrived, from the start of the file
+ * @param size  bytes the whole file will have
+ * @returns the cube's head, or null while more bytes are needed to tell
+ * @throws Problem as soon as the file cannot be read as a cube
+ */
+export async function checkBeginning(bytes: Uint8Array, size: number): Promise<CubeHead | null> {
+  const read: ReadBytes = async (offset, length) => {
+    if (offset >= bytes.length && offset < size) throw new MoreBytesNeeded();
+    return bytes.subarray(offset, offset + length);
+  };
+  try {
+    return (await firstCube(read, size)).head;
+  } catch (error) {
+    if (error instanceof MoreBytesNeeded) return null;
+    throw error;
+  }
+}
+
+class MoreBytesNeeded extends Error {}
+
+async function firstCube(
+  read: ReadBytes,
+  size: number,
+  hdu?: number,
+): Promise<{ head: CubeHead; end: number }> {
   if (size === 0) throw new Problem('not-fits', 'The file is empty.');
   let offset = 0;
   let refusal: Problem | null = null;
+  let tables = 0;
   for (let n = 0; n < MAX_HDUS; n++) {
     const found = await readHdu(read, offset, size, n);
     if (found === null) break;
     if (hdu === undefined ? found.hasImage || n === 0 : n === hdu) {
-      const described = tryDescribe(found, size, offset, n);
-      if (!(described instanceof Problem)) {
-        described.cautions.push(...(await cautionsAfter(read, found.end, size, n, hdu === undefined)));
-        return described;
-      }
-      if (hdu !== undefined || described.type !== 'fits-shape') throw described;
-      if (refusal === null || (found.hasImage && n > 0 && refusal.extra.card === 'NAXIS'))
-        refusal = described;
+      const head = tryDescribe(found, size, offset, n);
+      if (!(head instanceof Problem)) return { head, end: found.end };
+      if (hdu !== undefined || head.type !== 'fits-shape') throw head;
+      if (found.hasImage) refusal ??= head;
     }
+    if (!found.hasImage && n > 0) tables++;
     offset = found.end;
   }
   if (hdu !== undefined) {
     throw new Problem('invalid-input', `The file has no HDU ${hdu} (they count from 0).`, { field: 'hdu' });
   }
-  throw refusal ?? new Problem('fits-shape', 'The file holds no image.', { card: 'NAXIS' });
+  const what = tables > 0 ? 'a table' : 'a header';
+  throw refusal ?? new Problem('fits-shape', `The file holds ${what} and no image.`, { card: 'NAXIS' });
 }
 
 function tryDescribe(found: Hdu, size: number, offset: number, n: number): CubeHead | Problem {
@@ -66,7 +98,8 @@ async function readHdu(read: ReadBytes, offset: number, size: number, n: number)
   if (n > 0 && !startsExtension(await read(offset, 9))) return null;
   const kind = n === 0 ? 'primary' : 'extension';
   for (let length = FIRST_READ; ; length *= 4) {
-    const bytes = await read(offset, Math.min(length, size - offset, MAX_HEADER_BYTES + BLOCK));
+    const wanted = Math.min(length, size - offset, MAX_HEADER_BYTES + BLOCK);
+    const bytes = await read(offset, wanted);
     const scan = scanHeader(bytes, kind);
     if (scan.status === 'complete') {
       const header = bytes.subarray(0, scan.headerBytes);

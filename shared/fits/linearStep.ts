@@ -28,7 +28,7 @@ export function linearStep(header: Header, axes: CubeAxes, cautions: string[]): 
   const rowHasCd = (i: number) => naxis.some((_, j) => header.has(`CD${i + 1}_${j + 1}`));
   const element = (i: number, j: number): number => {
     if (rowHasCd(i)) return number(`CD${i + 1}_${j + 1}`, 0);
-    return number(`PC${i + 1}_${j + 1}`, i === j ? 1 : 0) * delta(i);
+    return number(`PC${i + 1}_${j + 1}`, i === j ? 1 : 0) * delta(i) + 0; // never -0, which JSON loses
   };
   const delta = (axis: number): number => {
     const keyword = `CDELT${axis + 1}`;
