@@ -1,0 +1,164 @@
+import type { ChannelPlane } from '@/hooks/planes/decodePlane';
+
+/** Longest side of a plane as asked for; null: as it is in the cube. */
+export type PlaneSize = number | null;
+
+export interface PlaneStoreOptions {
+  load: (channel: number, size: PlaneSize, signal: AbortSignal) => Promise<ChannelPlane>;
+  /** The cube's longest side in pixels. */
+  side: number;
+  channels: number;
+  /** What the planes held may take together. */
+  budgetBytes: number;
+  /** Requests at a time. */
+  lanes?: number;
+}
+
+export interface PlaneStore {
+  /** The finest plane held of a channel. */
+  best(channel: number): ChannelPlane | null;
+  /** Show this channel next, sharp enough for an image that is `sidePx` device pixels long; neighbours follow. */
+  want(channel: number, sidePx: number): void;
+  problem(channel: number): unknown;
+  retry(): void;
+  subscribe(listener: () => void): () => void;
+  /** Counts changes, for `useSyncExternalStore`. */
+  version(): number;
+  close(): void;
+}
+
+/** Reduced sizes on the way to the whole plane: the first is there soon, the second serves cubes of survey size. */
+const STEPS = [256, 1024];
+const NEIGHBOUR_BYTES = 24e6;
+const MOST_NEIGHBOURS = 12;
+
+/**
+ * Planes in memory: the least recently used go first when they no longer fit.
+ *
+ * What is wanted is loaded first, small before large; then its neighbours on both sides, so that the next step is
+ * there before it is asked for. What is no longer wanted is given up.
+ */
+export function planeStore(options: PlaneStoreOptions): PlaneStore {
+  const { load, side, channels, budgetBytes, lanes = 4 } = options;
+  const sizes: PlaneSize[] = [...STEPS.filter((step) => step < side / 1.5), null];
+  const held = new Map<string, ChannelPlane>();
+  const loading = new Map<string, AbortController>();
+  const failed = new Map<string, unknown>();
+  const listeners = new Set<() => void>();
+  let bytes = 0;
+  let version = 0;
+  let wanted: { channel: number; size: PlaneSize } | null = null;
+  let closed = false;
+
+  const keyOf = (channel: number, size: PlaneSize) => `${channel}/${size ?? 'whole'}`;
+  const bytesOf = (size: PlaneSize) => 2 * Math.min(size ?? side, side) ** 2;
+  const tell = () => {
+    version++;
+    for (const listener of [...listeners]) listener();
+  };
+
+  const keep = (key: string, plane: ChannelPlane) => {
+    bytes += plane.values.byteLength - (held.get(key)?.values.byteLength ?? 0);
+    held.delete(key);
+    held.set(key, plane);
+    for (const [old, { values }] of held) {
+      if (bytes <= budgetBytes) break;
+      if (old === key) continue;
+      held.delete(old);
+      bytes -= values.byteLength;
+    }
+  };
+
+  /** What should be there, most urgent first. */
+  const wishes = (): { channel: number; size: PlaneSize }[] => {
+    if (!wanted) return [];
+    const { channel, size } = wanted;
+    const list = sizes.slice(0, sizes.indexOf(size) + 1).map((s) => ({ channel, size: s }));
+    const neighbours = Math.min(
+      MOST_NEIGHBOURS,
+      Math.max(2, Math.floor(NEIGHBOUR_BYTES / 2 / bytesOf(size))),
+    );
+    for (let d = 1; d <= neighbours; d++)
+      for (const c of [channel + d, channel - d])
+        if (c >= 0 && c < channels) list.push({ channel: c, size: d <= 2 ? size : sizes[0]! });
+    return list;
+  };
+
+  const covered = (channel: number, size: PlaneSize) =>
+    sizes.slice(sizes.indexOf(size)).some((s) => held.has(keyOf(channel, s)));
+
+  const pump = () => {
+    if (closed) return;
+    const list = wishes();
+    const keys = new Set(list.map((w) => keyOf(w.channel, w.size)));
+    for (const [key, controller] of loading)
+      if (!keys.has(key)) {
+        loading.delete(key);
+        controller.abort();
+      }
+    for (const { channel, size } of list) {
+      if (loading.size >= lanes) break;
+      const key = keyOf(channel, size);
+      if (covered(channel, size) || loading.has(key) || failed.has(key)) continue;
+      const controller = new AbortController();
+      loading.set(key, controller);
+      load(channel, size, controller.signal).then(
+        (plane) => {
+          if (loading.get(key) !== controller) return; // given up meanwhile
+          loading.delete(key);
+          keep(key, plane);
+          tell();
+          pump();
+        },
+        (problem: unknown) => {
+          if (loading.get(key) !== controller) return;
+          loading.delete(key);
+          failed.set(key, problem);
+          tell();
+          pump();
+        },
+      );
+    }
+  };
+
+  return {
+    best(channel) {
+      for (let i = sizes.length - 1; i >= 0; i--) {
+        const key = keyOf(channel, sizes[i]!);
+        const plane = held.get(key);
+        if (!plane) continue;
+        held.delete(key); // to the end of the line of those that must go
+        held.set(key, plane);
+        return plane;
+      }
+      return null;
+    },
+    want(channel, sidePx) {
+      // The smallest step that still has a pixel for each of the screen's.
+      const size = sizes.find((s) => s === null || s >= sidePx * 0.75) ?? null;
+      if (wanted?.channel === channel && wanted.size === size) return;
+      if (wanted?.channel !== channel) for (const s of sizes) failed.delete(keyOf(channel, s));
+      wanted = { channel, size };
+      pump();
+    },
+    problem(channel) {
+      for (const s of sizes) if (failed.has(keyOf(channel, s))) return failed.get(keyOf(channel, s));
+      return null;
+    },
+    retry() {
+      failed.clear();
+      tell();
+      pump();
+    },
+    subscribe(listener) {
+      listeners.add(listener);
+      return () => listeners.delete(listener);
+    },
+    version: () => version,
+    close() {
+      closed = true;
+      for (const controller of loading.values()) controller.abort();
+      loading.clear();
+    },
+  };
+}
