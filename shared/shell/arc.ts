@@ -1,5 +1,5 @@
 import { DEGREE, eastNorth, type Vector } from '@/shared/sky/greatCircle';
-import { centroid, subset, type MarkSet } from '@/shared/shell/markSet';
+import { allOf, centroid, type MarkSet } from '@/shared/shell/markSet';
 import { median } from '@/shared/shell/robust';
 
 /** Position angles covered by the marks as seen from a centre, degrees: 360 less the largest gap. */
@@ -22,30 +22,34 @@ const SCATTER_RANGE = 3;
  * looks long.
  */
 export function riseAboveLine(marks: MarkSet): number {
+  const ofChannel: number[][] = Array.from({ length: marks.channels }, () => []);
+  for (let i = 0; i < marks.count; i++) ofChannel[marks.channel[i]!]!.push(i);
   const rises: number[] = [];
-  for (let k = 0; k < marks.channels; k++) {
-    const ring = subset(marks, (i) => marks.channel[i] === k);
-    if (ring.count < 4) continue;
-    const points = planeCoordinates(ring, centroid(ring));
-    const mean = [0, 1].map((a) => points.reduce((sum, p) => sum + p[a]!, 0) / points.length);
+  for (const members of ofChannel) {
+    if (members.length < 4) continue;
+    const points = planeCoordinates(marks, centroid(marks, members), members);
+    const meanX = points.reduce((sum, [x]) => sum + x, 0) / points.length;
+    const meanY = points.reduce((sum, [, y]) => sum + y, 0) / points.length;
     let [xx, xy, yy] = [0, 0, 0];
-    for (const p of points) {
-      const [x, y] = [p[0] - mean[0]!, p[1] - mean[1]!];
-      [xx, xy, yy] = [xx + x * x, xy + x * y, yy + y * y];
+    for (const [x, y] of points) {
+      xx += (x - meanX) ** 2;
+      xy += (x - meanX) * (y - meanY);
+      yy += (y - meanY) ** 2;
     }
     const minor = 0.5 * Math.atan2(2 * xy, xx - yy) + Math.PI / 2; // direction of the smaller variance
-    const along = points.map(([x, y]) => x * Math.cos(minor) + y * Math.sin(minor));
-    const sigma = Math.sqrt(median(ring.sigma2));
-    rises.push((Math.max(...along) - Math.min(...along)) / sigma - SCATTER_RANGE);
+    const across = points.map(([x, y]) => x * Math.cos(minor) + y * Math.sin(minor));
+    const sigma = Math.sqrt(median(members.map((i) => marks.sigma2[i]!)));
+    rises.push((Math.max(...across) - Math.min(...across)) / sigma - SCATTER_RANGE);
   }
   return rises.length > 0 ? median(rises) : 0;
 }
 
 /** Sines of the marks' offsets east and north of a direction. */
-function planeCoordinates(marks: MarkSet, at: Vector): [number, number][] {
+function planeCoordinates(marks: MarkSet, at: Vector, members = allOf(marks)): [number, number][] {
   const { east, north } = eastNorth(at);
-  return Array.from({ length: marks.count }, (_, i) => {
-    const [x, y, z] = marks.direction.subarray(3 * i, 3 * i + 3) as unknown as Vector;
+  const { direction: q } = marks;
+  return members.map((i) => {
+    const [x, y, z] = [q[3 * i]!, q[3 * i + 1]!, q[3 * i + 2]!];
     return [x * east[0] + y * east[1] + z * east[2], x * north[0] + y * north[1] + z * north[2]];
   });
 }

@@ -1,6 +1,8 @@
 import { DEGREE, lonLatOf } from '@/shared/sky/greatCircle';
+import { bootstrap, percentiles } from '@/shared/shell/bootstrap';
 import { arcCovered, riseAboveLine } from '@/shared/shell/arc';
 import { channelCurve, curveTable } from '@/shared/shell/channelCurve';
+import type { ErrorModel } from '@/shared/shell/errorModel';
 import type { FitOptions, Solved } from '@/shared/shell/fit';
 import type { FitExtra, FitResult, FitRing } from '@/shared/shell/fitResult';
 import { evaluation, frameAt } from '@/shared/shell/frame';
@@ -10,7 +12,8 @@ import type { MarkSet } from '@/shared/shell/markSet';
 import { evaluate } from '@/shared/shell/residuals';
 import { fitRing } from '@/shared/shell/ring';
 import { median } from '@/shared/shell/robust';
-import { LN_W, THETA, V0 } from '@/shared/shell/shellModel';
+import { EXTRA_1, EXTRA_2, LN_W, THETA, V0 } from '@/shared/shell/shellModel';
+import { upperF } from '@/shared/shell/studentT';
 import { warningsOf } from '@/shared/shell/warnings';
 
 /** A solved problem as the JSON that is stored and shown. */
@@ -70,6 +73,7 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
     channels: marks.channels,
     sigmaUsedDeg: Math.sqrt(median(all.sigma2)) / DEGREE,
     settled: outcome.settled,
+    ...(size > EXTRA_1 ? { extraParameters: extraParameters(p, errors) } : {}),
   };
   return {
     model,
@@ -99,6 +103,42 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
     },
     extra,
   };
+}
+
+/**
+ * How far the model's two extra parameters lie from the sphere's zeros (Wald's test): their squared distance in units
+ * of the channel-aware covariance, against Fisher's F. This decides between models; the information criteria take marks
+ * as independent and favour the richer model where channels share errors.
+ */
+function extraParameters(p: Float64Array, { covariance, tDof }: ErrorModel): FitExtra['extraParameters'] {
+  const size = p.length;
+  const V = (a: number, b: number) => covariance[a * size + b]!;
+  const [x, y] = [p[EXTRA_1]!, p[EXTRA_2]!];
+  const [xx, xy, yy] = [V(EXTRA_1, EXTRA_1), V(EXTRA_1, EXTRA_2), V(EXTRA_2, EXTRA_2)];
+  const f = (x * x * yy - 2 * x * y * xy + y * y * xx) / (xx * yy - xy * xy) / 2;
+  const dof = Math.min(tDof[EXTRA_1]!, tDof[EXTRA_2]!);
+  return { f, probability: upperF(f, 2, dof), dof };
+}
+
+/** Replace the interval ends by the bootstrap's percentiles, and say how the draws went. */
+export function withBootstrap(fit: FitResult, solved: Solved, options: FitOptions): FitResult {
+  const draws = options.bootstrap ?? 0;
+  const { problem, outcome, errors } = solved;
+  const drawn = bootstrap(problem, outcome, errors, { ...options, draws, seed: options.seed ?? 1 });
+  options.onDraws?.(drawn.values);
+  const { names } = fit.correlation;
+  const parameters = { ...fit.parameters };
+  const sd: Record<string, number | null> = {};
+  names.forEach((name, a) => {
+    const fitted = fit.parameters[name]!;
+    const period = name === 'l' ? 360 : name === 'positionAngle' ? 180 : undefined;
+    const found = percentiles(drawn.values, names.length, a, fitted.value, period);
+    parameters[name] = { ...fitted, lo: finite(found.lo), hi: finite(found.hi) };
+    sd[name] = finite(found.sd);
+  });
+  const { failed, unbounded } = drawn;
+  const summary = { draws, sd, failed, vExpUnbounded: unbounded };
+  return { ...fit, parameters, errorBars: 'bootstrap', extra: { ...fit.extra, bootstrap: summary } };
 }
 
 /** Residuals of all marks, those set aside included: they are shown where they lie. */

@@ -7,9 +7,9 @@ import { solveAndRecentre, workspace, type Outcome, type ShellProblem } from '@/
 import { subset, velocityReach, type MarkSet } from '@/shared/shell/markSet';
 import { offTheirRing } from '@/shared/shell/outliers';
 import { solveForRecord } from '@/shared/shell/recordFit';
-import { describeFit } from '@/shared/shell/describeFit';
+import { describeFit, withBootstrap } from '@/shared/shell/describeFit';
 import { evaluate } from '@/shared/shell/residuals';
-import { LN_W, THETA, V0, parameterCount, type ModelName } from '@/shared/shell/shellModel';
+import { LN_W, PARAMETER_NAMES, THETA, V0, parameterCount, type ModelName } from '@/shared/shell/shellModel';
 import { startValues, type StartValues } from '@/shared/shell/start';
 
 export interface FitOptions {
@@ -24,6 +24,8 @@ export interface FitOptions {
   seed?: number;
   /** Kept in the provenance. */
   codeVersion?: string;
+  /** Receives the draws, one row of parameters each, in the order of `correlation.names`. */
+  onDraws?: (values: Float64Array) => void;
   /** Called with 0 … 1 while the bootstrap runs; what it throws ends the fit. */
   onProgress?: (done: number) => void;
 }
@@ -52,8 +54,22 @@ export interface Solved {
  */
 export function fitShell(input: FitInput, options: FitOptions = {}): FitResult {
   const model = options.model ?? 'sphere';
+  checkOptions(options);
   const solved = solveShell(readMarks(input, model), model, input, options);
-  return describeFit(solved, options);
+  const described = describeFit(solved, options);
+  return options.bootstrap ? withBootstrap(described, solved, options) : described;
+}
+
+function checkOptions({ model, bootstrap, seed }: FitOptions): void {
+  const refuse = (field: string, detail: string): never => {
+    throw new Problem('invalid-input', detail, { field });
+  };
+  if (model !== undefined && !Object.hasOwn(PARAMETER_NAMES, model))
+    refuse('model', `There is no model "${String(model)}": take ${Object.keys(PARAMETER_NAMES).join(', ')}.`);
+  if (bootstrap !== undefined && !(Number.isInteger(bootstrap) && bootstrap >= 0 && bootstrap <= MOST_DRAWS))
+    refuse('bootstrap', `The number of bootstrap draws is a whole number from 0 to ${MOST_DRAWS}.`);
+  if (seed !== undefined && !(Number.isInteger(seed) && seed >= 0 && seed <= 0xffffffff))
+    refuse('seed', 'The seed is a whole number from 0 to 4294967295.');
 }
 
 /** The fit for every frame while a person marks: no library optimiser, no bootstrap, the same answer. */
@@ -64,6 +80,7 @@ export function liveFit(
   return fitShell(input, { ...options, optimiser: 'live' });
 }
 
+const MOST_DRAWS = 100_000;
 /** Where marks carry no sigma the fit starts with this share of theta, and takes it from the scatter. */
 const START_SIGMA = 0.03;
 const SIGMA_ROUNDS = 8;

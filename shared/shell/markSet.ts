@@ -18,7 +18,7 @@ export interface MarkSet {
 
 /** The marks for which `keep` holds, with the channels that are left counted anew. */
 export function subset(marks: MarkSet, keep: (mark: number) => boolean): MarkSet {
-  const kept = Array.from({ length: marks.count }, (_, i) => i).filter(keep);
+  const kept = allOf(marks).filter(keep);
   const used = [...new Set(kept.map((i) => marks.channel[i]!))].sort((a, b) => a - b);
   const renumbered = new Map(used.map((channel, k) => [channel, k]));
   return {
@@ -32,11 +32,14 @@ export function subset(marks: MarkSet, keep: (mark: number) => boolean): MarkSet
   };
 }
 
-/** Direction of the mean of the marks' unit vectors. */
-export function centroid(marks: MarkSet): Vector {
-  const { direction: q } = marks;
+/** Indices of all marks. */
+export const allOf = (marks: MarkSet): number[] => Array.from({ length: marks.count }, (_, i) => i);
+
+/** Direction of the mean of the marks' unit vectors, or of some of them. */
+export function centroid({ direction: q, count }: MarkSet, members?: readonly number[]): Vector {
   let [x, y, z] = [0, 0, 0];
-  for (let i = 0; i < q.length; i += 3) {
+  for (let m = 0; m < (members?.length ?? count); m++) {
+    const i = 3 * (members ? members[m]! : m);
     x += q[i]!;
     y += q[i + 1]!;
     z += q[i + 2]!;

@@ -48,14 +48,16 @@ function evaluateRound(size: number, marks: MarkSet, frame: Frame, p: Float64Arr
   const driftX = drifting ? p[EXTRA_1]! : 0;
   const driftY = drifting ? p[EXTRA_2]! : 0;
   const v0 = p[V0]!;
+  const centreX = p[X]!;
+  const centreY = p[Y]!;
   for (let i = 0; i < marks.count; i++) {
     const k = marks.channel[i]!;
     const a = frame.along[i]!;
     const e = frame.eastward[i]!;
     const n = frame.northward[i]!;
     const fromV0 = marks.velocity[k]! - v0;
-    const x = p[X]! + driftX * fromV0;
-    const y = p[Y]! + driftY * fromV0;
+    const x = centreX + driftX * fromV0;
+    const y = centreY + driftY * fromV0;
     const perLength = 1 / Math.sqrt(1 + x * x + y * y);
     const cosine = (a + x * e + y * n) * perLength;
     const c1 = e * y - n * x;
@@ -67,15 +69,15 @@ function evaluateRound(size: number, marks: MarkSet, frame: Frame, p: Float64Arr
     const dY = slope * (n - cosine * y * perLength);
     out.residual[i] = Math.atan2(sine, cosine) - curve.radius[k]!;
     out.variance[i] = marks.sigma2[i]! + curve.variance[k]!;
-    const row = i * size;
-    J[row + X] = dX;
-    J[row + Y] = dY;
-    J[row + THETA] = -curve.dTheta[k]!;
-    J[row + V0] = -curve.dV0[k]! - driftX * dX - driftY * dY;
-    J[row + LN_W] = -curve.dLnW[k]!;
+    let at = i * size; // in the order of shellModel.ts
+    J[at++] = dX;
+    J[at++] = dY;
+    J[at++] = -curve.dTheta[k]!;
+    J[at++] = -curve.dV0[k]! - driftX * dX - driftY * dY;
+    J[at++] = -curve.dLnW[k]!;
     if (drifting) {
-      J[row + EXTRA_1] = dX * fromV0;
-      J[row + EXTRA_2] = dY * fromV0;
+      J[at++] = dX * fromV0;
+      J[at] = dY * fromV0;
     }
   }
 }

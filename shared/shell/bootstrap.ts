@@ -1,0 +1,177 @@
+import { channelProducts } from '@/shared/shell/channelDirections';
+import { channelDof, FLOOR, unsharedNoise, type ErrorModel } from '@/shared/shell/errorModel';
+import { centreAt, projectMarks, type Frame } from '@/shared/shell/frame';
+import { solve, workspace, type ShellProblem, type ShellState } from '@/shared/shell/gaussNewton';
+import type { MarkSet } from '@/shared/shell/markSet';
+import { naturalValues } from '@/shared/shell/naturalParameters';
+import { seededRandom, type Random } from '@/shared/shell/random';
+import { EXTRA_1, EXTRA_2, LN_W, V0, X, Y } from '@/shared/shell/shellModel';
+
+export interface BootstrapOptions {
+  draws: number;
+  seed: number;
+  onProgress?: (done: number) => void;
+}
+
+export interface BootstrapDraws {
+  /** Natural parameters, one row a draw; v_exp is infinite in a draw that ran to its upper bound. */
+  values: Float64Array;
+  failed: number;
+  unbounded: number;
+}
+
+/** Draws are refitted to this many standard errors: far below what a few hundred draws resolve. */
+const TOLERANCE = 1e-3;
+const PROGRESS_EVERY = 25;
+
+/**
+ * Channel-aware parametric bootstrap of a recentred solution (Efron & Tibshirani 1993, for the principle).
+ *
+ * Each draw makes a new reading: marks on the model rings, moved along their radii by errors with the four sources of
+ * the error model, whose variances are themselves redrawn (scaled inverse chi-square), as they are known only from few
+ * channels. The draw is refitted from the fitted values; a prior on v_sys is redrawn about the fit. Marks set aside
+ * stay out. The same seed gives the same draws.
+ */
+export function bootstrap(
+  problem: ShellProblem,
+  state: ShellState,
+  errors: ErrorModel,
+  options: BootstrapOptions,
+): BootstrapDraws {
+  const { model, marks, vSys } = problem;
+  const size = state.p.length;
+  const random = seededRandom(options.seed);
+  const drawn: MarkSet = { ...marks, direction: new Float64Array(marks.direction.length) };
+  const frame: Frame = {
+    ...state.frame,
+    along: new Float64Array(marks.count),
+    eastward: new Float64Array(marks.count),
+    northward: new Float64Array(marks.count),
+  };
+  const place = placer(problem, state, errors, drawn);
+  const draw = errorDrawer(problem, errors, random);
+  const ws = workspace(marks, size);
+  const e = new Float64Array(marks.count);
+  const p = new Float64Array(size);
+  const out: BootstrapDraws = { values: new Float64Array(options.draws * size), failed: 0, unbounded: 0 };
+
+  for (let d = 0; d < options.draws; d++) {
+    draw(e);
+    place(e);
+    projectMarks(drawn, frame);
+    const known =
+      vSys === null || vSys.sigma === 0
+        ? vSys
+        : { value: state.p[V0]! + vSys.sigma * random.normal(), sigma: vSys.sigma };
+    p.set(state.p);
+    const fit = solve({ model, marks: drawn, vSys: known }, { frame, p }, { tolerance: TOLERANCE }, ws);
+    const origin = centreAt(frame, p[X]!, p[Y]!);
+    const values = naturalValues(model, { frame: { ...frame, origin }, p });
+    if (fit.atBound === 'high' && p[LN_W]! > state.p[LN_W]!) {
+      values[LN_W] = Infinity;
+      out.unbounded++;
+    } else if (!fit.settled || fit.atBound !== null) {
+      out.failed++;
+    }
+    out.values.set(values, d * size);
+    if (d % PROGRESS_EVERY === PROGRESS_EVERY - 1) options.onProgress?.((d + 1) / options.draws);
+  }
+  return out;
+}
+
+/** A function that fills an array with one draw of scaled errors. */
+function errorDrawer({ marks, vSys }: ShellProblem, errors: ErrorModel, random: Random) {
+  const { directions: d, scales } = errors;
+  const noise = unsharedNoise(d, scales);
+  const root = noise.map(Math.sqrt);
+  const dof = channelDof(marks.channels, vSys !== null);
+  const unsharedDof = Math.max(marks.count - marks.channels - 2, 2);
+  const shared = [
+    { unit: d.unitA, full: d.a, scale: scales.shift, dof: dof.shift, source: 0 },
+    { unit: d.unitB, full: d.b, scale: scales.shift, dof: dof.shift, source: 0 },
+    { unit: d.unitU, full: d.u, scale: scales.ring, dof: dof.ring, source: 1 },
+  ].map(({ unit, full, ...rest }) => {
+    const square = channelProducts(marks, full, full);
+    const own = channelProducts(
+      marks,
+      unit.map((q, i) => q * noise[i]!),
+      unit,
+    );
+    const total = own.map((o, k) => Math.max(o + rest.scale * square[k]!, FLOOR * o));
+    return { unit, own, total, ...rest };
+  });
+
+  return (e: Float64Array): void => {
+    const inflation = unsharedDof / random.chiSquare(unsharedDof);
+    for (let i = 0; i < e.length; i++) e[i] = root[i]! * Math.sqrt(inflation) * random.normal();
+    let source = -1;
+    let redrawn = 1;
+    for (const direction of shared) {
+      if (direction.source !== source) redrawn = direction.dof / random.chiSquare(direction.dof); // one a source
+      source = direction.source;
+      // Along each channel's direction: shrink the component, or add to it, until it has the variance wanted.
+      const component = channelProducts(marks, direction.unit, e);
+      const change = component.map((value, k) => {
+        const want = direction.total[k]! * redrawn;
+        const have = direction.own[k]! * inflation;
+        const keep = Math.sqrt(Math.min(want / Math.max(have, 1e-300), 1));
+        return (keep - 1) * value + Math.sqrt(Math.max(want - have, 0)) * random.normal();
+      });
+      for (let i = 0; i < e.length; i++) e[i] = e[i]! + change[marks.channel[i]!]! * direction.unit[i]!;
+    }
+  };
+}
+
+/** A function that puts every mark on its model ring, moved along its own radius by scaled errors. */
+function placer({ model, marks }: ShellProblem, { frame, p }: ShellState, errors: ErrorModel, into: MarkSet) {
+  const { residual, variance } = errors.evaluation;
+  const n = marks.count;
+  const centre = new Float64Array(3 * n);
+  const outward = new Float64Array(3 * n);
+  const radius = new Float64Array(n);
+  const drifting = model === 'drifting';
+  for (let i = 0; i < n; i++) {
+    const fromV0 = marks.velocity[marks.channel[i]!]! - p[V0]!;
+    const c = drifting ? centreAt(frame, p[EXTRA_1]! * fromV0, p[EXTRA_2]! * fromV0) : frame.origin;
+    const q = marks.direction.subarray(3 * i, 3 * i + 3);
+    const cosine = q[0]! * c[0] + q[1]! * c[1] + q[2]! * c[2];
+    const off = [0, 1, 2].map((a) => q[a]! - cosine * c[a]!);
+    const sine = Math.hypot(...off);
+    centre.set(c, 3 * i);
+    outward.set(
+      off.map((x) => x / Math.max(sine, 1e-12)),
+      3 * i,
+    );
+    radius[i] = Math.atan2(sine, cosine) - residual[i]!;
+  }
+  return (e: Float64Array): void => {
+    for (let i = 0; i < n; i++) {
+      const angle = radius[i]! + e[i]! * Math.sqrt(variance[i]!);
+      const [c, s] = [Math.cos(angle), Math.sin(angle)];
+      for (let a = 3 * i; a < 3 * i + 3; a++) into.direction[a] = c * centre[a]! + s * outward[a]!;
+    }
+  };
+}
+
+/**
+ * The 16th and 84th percentiles of one parameter over the draws (the nearest draw), angles unwrapped about the fitted
+ * value first; half their distance is the standard deviation. Infinite where that share of the draws is unbounded.
+ *
+ * @param period 360 for a longitude, 180 for the direction of an axis
+ */
+export function percentiles(
+  values: Float64Array,
+  size: number,
+  column: number,
+  about: number,
+  period?: number,
+): { lo: number; hi: number; sd: number } {
+  const draws = values.length / size;
+  const sorted = Float64Array.from({ length: draws }, (_, d) => {
+    const value = values[d * size + column]!;
+    return period === undefined ? value : value - period * Math.round((value - about) / period);
+  }).sort();
+  const at = (share: number) => sorted[Math.round(share * (draws - 1))]!;
+  const [lo, hi] = [at(0.1587), at(0.8413)];
+  return { lo, hi, sd: 0.5 * (hi - lo) };
+}
