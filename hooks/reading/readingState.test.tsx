@@ -145,6 +145,11 @@ describe('coming back', () => {
     expect([ids(s), s.conflict?.revision]).toEqual(['an', 9]);
     expect(shouldSend(run(s, { type: 'resolve', keep: 'mine' }))).toBe(true);
   });
+  test('a draft kept while its save was on the way goes on from that save', () => {
+    const left = { ...draft, sent: [mark('a')] };
+    const s = run(EMPTY_READING, { type: 'loaded', reading: stored(4, mark('a')), draft: left });
+    expect([ids(s), s.revision, s.conflict, shouldSend(s)]).toEqual(['an', 4, null, true]);
+  });
   test('a draft that did reach the server is no news', () => {
     const s = run(EMPTY_READING, { type: 'loaded', reading: stored(4, ...draft.marks), draft });
     expect([saveStatus(s).kind, s.revision]).toEqual(['saved', 4]);

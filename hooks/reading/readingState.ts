@@ -8,11 +8,15 @@ export interface ReadingDraftCopy {
   marks: readonly PlacedMark[];
   /** The revision they build on. */
   revision: number;
+  /** Marks that were on their way to the server when this was kept: they may have arrived. */
+  sent?: readonly PlacedMark[] | null;
 }
 
 /** A marking session: the marks as they stand, and how far the server knows of them. */
 export interface ReadingState {
   ready: boolean;
+  /** Whose shell these marks are of: they must never be saved under another. */
+  shellId: string | null;
   readingId: string | null;
   /** The cube the stored marks lie on; null while there are none. */
   cubeId: string | null;
@@ -33,6 +37,7 @@ export interface ReadingState {
 
 export const EMPTY_READING: ReadingState = {
   ready: false,
+  shellId: null,
   readingId: null,
   cubeId: null,
   marks: [],
@@ -138,6 +143,7 @@ export function readingReducer(state: ReadingState, action: ReadingAction): Read
 }
 
 const known = (reading: Reading) => ({
+  shellId: reading.shellId,
   readingId: reading.id,
   cubeId: reading.cubeId,
   revision: reading.revision,
@@ -149,7 +155,8 @@ function loaded(reading: Reading, draft: ReadingDraftCopy | null): ReadingState 
   if (!draft || sameMarks(draft.marks, stored)) return fresh;
   // The draft goes on from what is stored, or someone has saved since: then a person must choose.
   const drafted = { ...fresh, marks: draft.marks, edits: 1 };
-  if (draft.revision === reading.revision) return drafted;
+  const arrived = draft.sent != null && sameMarks(draft.sent, stored);
+  if (draft.revision === reading.revision || arrived) return drafted;
   return { ...drafted, revision: draft.revision, conflict: reading };
 }
 
@@ -182,6 +189,13 @@ function resolved(state: ReadingState, keep: 'mine' | 'stored' | 'both'): Readin
   // A conflict only comes up over unsaved changes, so anything but the stored marks is still to be saved.
   return sameMarks(marks, stored) ? { ...after, marks, savedEdits: after.edits } : after;
 }
+
+/** What the browser keeps until the server has it. */
+export const draftOf = (state: ReadingState): ReadingDraftCopy => ({
+  marks: state.marks,
+  revision: state.revision,
+  sent: state.sending?.marks ?? state.doubtful,
+});
 
 /** Whether something made here has not reached the server. */
 export const isDirty = (state: ReadingState): boolean => state.edits !== state.savedEdits;
