@@ -1,0 +1,38 @@
+import { Redirect, Slot, useRouter } from 'expo-router';
+import { View } from 'react-native';
+import { useCommands } from '@/components/ui/commands/CommandsProvider';
+import { ProblemNotice } from '@/components/ui/ProblemNotice';
+import { useTheme } from '@/components/ui/theme';
+import { space } from '@/components/ui/tokens';
+import { sections } from '@/components/frame/sections';
+import { useLiveEvents } from '@/hooks/useLiveEvents';
+import { useMe, useSessionWatch } from '@/hooks/useMe';
+
+/** Everything behind sign-in. The guard is comfort: the server checks every request. */
+export default function SignedIn() {
+  const { data: me, problem, signedOut, reload } = useMe();
+  const router = useRouter();
+  const { color } = useTheme();
+  useSessionWatch();
+  useLiveEvents(me?.role != null);
+  useCommands(
+    sections.map((s, i) => ({
+      name: `go.${s.label}`,
+      label: `Go to ${s.label}`,
+      keys: [`Alt+${i + 1}`],
+      group: 'Everywhere',
+      perform: () => router.push(s.href),
+    })),
+  );
+  if (signedOut)
+    return <Redirect href={{ pathname: '/sign-in', params: path === '/regions' ? {} : { to: path } }} />;
+  if (me && me.role === null) return <Redirect href="/sign-in" />;
+  if (problem && !me)
+    return (
+      <View role="main" style={{ flex: 1, padding: space(6), backgroundColor: color.ground }}>
+        <ProblemNotice problem={problem} onRetry={() => void reload()} />
+      </View>
+    );
+  if (!me) return <View role="main" style={{ flex: 1, backgroundColor: color.ground }} />;
+  return <Slot />;
+}

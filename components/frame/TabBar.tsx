@@ -1,0 +1,74 @@
+import { usePathname } from 'expo-router';
+import { View } from 'react-native';
+import { Icon } from '../ui/Icon';
+import { Press } from '../ui/Press';
+import { Text } from '../ui/Text';
+import { useTheme } from '../ui/theme';
+import { hairline, layout, radius, space } from '../ui/tokens';
+import { holds, sections } from './sections';
+
+/** The phone's navigation, under the thumb. */
+export function TabBar({ inbox }: { inbox: number }) {
+  const { color } = useTheme();
+  const path = usePathname();
+  return (
+    <View
+      role="navigation"
+      aria-label="Main"
+      style={{
+        flexDirection: 'row',
+        minHeight: layout.tabBar,
+        backgroundColor: color.panel,
+        borderTopWidth: hairline,
+        borderTopColor: color.line,
+        paddingBottom: 'env(safe-area-inset-bottom)' as unknown as number,
+      }}
+    >
+      {sections.map((section) => {
+        const current = holds(section, path);
+        const tone = current ? 'text' : 'quiet';
+        const waiting = section.href === '/inbox' ? inbox : 0;
+        return (
+          <Press
+            key={section.href}
+            href={section.href}
+            aria-label={waiting > 0 ? `${section.label}, ${waiting} waiting` : section.label}
+            {...(current && ({ 'aria-current': 'page' } as object))}
+            style={{
+              flex: 1,
+              alignItems: 'center',
+              justifyContent: 'center',
+              gap: space(1),
+              minHeight: layout.tabBar,
+            }}
+          >
+            <View>
+              <Icon name={section.icon} size={22} tone={tone} />
+              {waiting > 0 && (
+                <View
+                  style={{
+                    position: 'absolute',
+                    top: -space(1),
+                    left: space(4),
+                    minWidth: space(4),
+                    paddingHorizontal: space(1),
+                    alignItems: 'center',
+                    borderRadius: radius.round,
+                    backgroundColor: color.person,
+                  }}
+                >
+                  <Text size="small" tone="onPerson" weight="semibold">
+                    {waiting}
+                  </Text>
+                </View>
+              )}
+            </View>
+            <Text size="small" tone={tone} weight={current ? 'semibold' : 'regular'}>
+              {section.label}
+            </Text>
+          </Press>
+        );
+      })}
+    </View>
+  );
+}
