@@ -18,14 +18,27 @@ export default async function setup() {
   const dir = mkdtempSync(join(tmpdir(), 'outswell-test-'));
   const cluster = await startCluster(dir, { durable: false });
   globalThis.outswellCluster = { cluster, dir };
-  const admin = knexFactory({ client: 'pg', connection: cluster.url });
-  await admin.raw('create database template_outswell');
-  await admin.destroy();
-  const url = cluster.url.replace(/postgres$/, 'template_outswell');
-  const knex = knexFactory({ client: 'pg', connection: url });
-  await knex.migrate.latest(require('../knexfile.js').migrations);
-  await knex.destroy();
+  try {
+    await makeTemplate(cluster.url);
+  } catch (error) {
+    await teardown(); // jest does not call it after a set-up that failed
+    throw error;
+  }
   process.env.TEST_CLUSTER_URL = cluster.url;
+}
+
+async function makeTemplate(clusterUrl: string) {
+  const admin = knexFactory({ client: 'pg', connection: { connectionString: clusterUrl } });
+  const template = knexFactory({
+    client: 'pg',
+    connection: { connectionString: clusterUrl.replace(/postgres$/, 'template_outswell') },
+  });
+  try {
+    await admin.raw('create database template_outswell');
+    await template.migrate.latest(require('../knexfile.js').migrations);
+  } finally {
+    await Promise.all([admin.destroy(), template.destroy()]);
+  }
 }
 
 export async function teardown() {

@@ -34,7 +34,12 @@ export async function ownDatabase(root, clusterUrl) {
 export async function migrate(root, url, { alone }) {
   const load = packages(root);
   const { migrations } = load('./knexfile.js');
-  const db = load('knex')({ client: 'pg', connection: url, pool: { min: 0, max: 2 }, migrations });
+  const db = load('knex')({
+    client: 'pg',
+    connection: { connectionString: url },
+    pool: { min: 0, max: 2 },
+    migrations,
+  });
   try {
     await db.raw('select 1').catch((/** @type {Error} */ error) => {
       throw new Stop(`The database at ${new URL(url).host} cannot be used: ${error.message}`);
