@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { isProblem, type Problem } from '@/shared/contract/problem';
 import { destination } from '@/shared/sky/greatCircle';
 import { fitShell } from '@/shared/shell/fit';
@@ -100,4 +101,43 @@ test('a short straight arc says that the radius is not measured', () => {
   );
   const warning = fitShell({ ...good, marks }).warnings.find((w) => w.code === 'arc-too-short');
   expect(warning?.message).toContain('not measured');
+});
+
+test('whatever the marks, the answer is a fit that JSON can carry or a problem with a reason', () => {
+  const number = (min: number, max: number) => fc.double({ min, max, noNaN: true });
+  const mark = fc.record(
+    {
+      l: number(0, 360),
+      b: number(-90, 90),
+      velocity: fc.oneof(fc.integer({ min: -5, max: 5 }), number(-1e6, 1e6)),
+      sigma: number(1e-9, 90),
+    },
+    { requiredKeys: ['l', 'b', 'velocity'] },
+  );
+  const close = fc.record({
+    l: number(100, 100.001),
+    b: fc.oneof(number(10, 10.001), fc.constant(10)),
+    velocity: fc.integer({ min: -3, max: 3 }),
+    sigma: fc.constantFrom(0.0001, 1),
+  });
+  const marks = fc.oneof(fc.array(mark, { maxLength: 40 }), fc.array(close, { minLength: 6, maxLength: 40 }));
+  const width = fc.constantFrom(1e-6, 1, 3, 1e5);
+  const model = fc.constantFrom('sphere', 'cap', 'drifting', 'elliptical');
+  const vSys = fc.constantFrom({ value: 0, sigma: 0 }, { value: 1, sigma: 2 }, { value: 1e5, sigma: 1e-6 });
+  fc.assert(
+    fc.property(marks, width, model, vSys, (list, channelWidth, name, known) => {
+      try {
+        const input = { marks: list, channelWidth, vSys: known };
+        const fit = fitShell(input, { model: name as 'sphere', bootstrap: 3 });
+        expect(JSON.parse(JSON.stringify(fit))).toEqual(fit);
+        for (const { value } of Object.values(fit.parameters)) expect(Number.isFinite(value)).toBe(true);
+        expect(Number.isFinite(fit.chi2)).toBe(true);
+        fit.residuals.forEach((r) => expect(Number.isFinite(r.degrees)).toBe(true));
+      } catch (error) {
+        if (!isProblem(error)) throw error;
+        expect(error.detail).toMatch(/\.$/);
+      }
+    }),
+    { numRuns: 400 },
+  );
 });
