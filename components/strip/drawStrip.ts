@@ -2,13 +2,20 @@ import { seen, xOf, type StripLayout } from '@/components/strip/stripLayout';
 import { positionOfVelocity, type StripOrder } from '@/components/strip/stripOrder';
 import { labelOf, niceTicks } from '@/shared/image/ticks';
 
+export interface StripPicture {
+  image: CanvasImageSource;
+  width: number;
+  height: number;
+  step: number;
+}
+
 export interface StripScene {
   layout: StripLayout;
   order: StripOrder;
   /** The position under the box; fractional while a film runs. */
   current: number;
-  /** All thumbnails side by side in the order of the file; null until loaded. */
-  picture: { image: CanvasImageSource; width: number; height: number } | null;
+  /** Thumbnails side by side in the order of the file, one for each `step` channels; null until loaded. */
+  picture: StripPicture | null;
   /** Mean brightness of each channel, in the order of the file; null where there is none. */
   spectrum: readonly (number | null)[];
   /** Marks on each channel, by channel. */
@@ -18,15 +25,15 @@ export interface StripScene {
 }
 
 export interface StripColours {
-  ground: string;
   image: string;
   text: string;
   quiet: string;
-  line: string;
   person: string;
   model: string;
   edge: string;
   box: string;
+  /** Of the small triangle above the box, which lies on the page's ground. */
+  pointer: string;
   font: string;
 }
 
@@ -64,11 +71,12 @@ function drawThumbnail(
   width: number,
 ): void {
   if (!s.picture) return;
-  const { image, height } = s.picture;
-  const each = s.picture.width / s.layout.count;
+  const { image, height, step } = s.picture;
+  const each = s.picture.width / Math.ceil(s.layout.count / step);
   const scale = Math.min(each / width, height / THUMBNAILS);
   const [w, h] = [width * scale, THUMBNAILS * scale];
-  ctx.drawImage(image, channel * each + (each - w) / 2, (height - h) / 2, w, h, left, TOP, width, THUMBNAILS);
+  const from = Math.floor(channel / step) * each + (each - w) / 2;
+  ctx.drawImage(image, from, (height - h) / 2, w, h, left, TOP, width, THUMBNAILS);
 }
 
 function drawThumbnails(ctx: CanvasRenderingContext2D, s: StripScene, c: StripColours): void {
@@ -149,7 +157,7 @@ function drawBox(ctx: CanvasRenderingContext2D, s: StripScene, c: StripColours):
   ctx.strokeStyle = c.box;
   ctx.lineWidth = 2;
   ctx.stroke();
-  ctx.fillStyle = c.box; // where exactly the channel lies, under a box wider than it
+  ctx.fillStyle = c.pointer; // where exactly the channel lies, under a box wider than it
   ctx.beginPath();
   ctx.moveTo(x - 4, TOP - 7);
   ctx.lineTo(x + 4, TOP - 7);

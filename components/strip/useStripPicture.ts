@@ -1,0 +1,67 @@
+import { useEffect, useMemo, useState } from 'react';
+import type { StripPicture } from '@/components/strip/drawStrip';
+import { API, apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
+import { TONE_CURVES, type Tone } from '@/shared/image/tone';
+
+interface Grey {
+  pixels: ImageData;
+  step: number;
+}
+
+/** The cube's thumbnails in the palette and tone of the map; they keep one brightness window, so that they compare. */
+export function useStripPicture(
+  cubeId: string | null,
+  ramp: Uint32Array,
+  tone: Tone,
+): { picture: StripPicture | null; problem: ApiProblem | null } {
+  const [grey, setGrey] = useState<Grey | null>(null);
+  const [problem, setProblem] = useState<ApiProblem | null>(null);
+
+  useEffect(() => {
+    if (!cubeId || typeof createImageBitmap === 'undefined') return;
+    const leaving = new AbortController();
+    setGrey(null);
+    setProblem(null);
+    readStrip(cubeId, leaving.signal).then(
+      (found) => !leaving.signal.aborted && setGrey(found),
+      (error: unknown) => !leaving.signal.aborted && setProblem(asProblem(error)),
+    );
+    return () => leaving.abort();
+  }, [cubeId]);
+
+  const picture = useMemo(() => (grey ? coloured(grey, ramp, tone) : null), [grey, ramp, tone]);
+  return { picture, problem };
+}
+
+async function readStrip(cubeId: string, signal: AbortSignal): Promise<Grey | null> {
+  const answer = await apiResponse(`${API}/cubes/${cubeId}/strip`, { signal });
+  const bitmap = await createImageBitmap(await answer.blob());
+  const canvas = document.createElement('canvas');
+  canvas.width = bitmap.width;
+  canvas.height = bitmap.height;
+  const ctx = canvas.getContext('2d', { willReadFrequently: true });
+  if (!ctx) return null;
+  ctx.drawImage(bitmap, 0, 0);
+  bitmap.close();
+  const pixels = ctx.getImageData(0, 0, canvas.width, canvas.height);
+  return { pixels, step: Math.max(1, Number(answer.headers.get('Strip-Step') ?? 1) || 1) };
+}
+
+/** Grey levels 1 … 255 through the tone into the palette; 0 is a blank and stays dark. */
+function coloured({ pixels, step }: Grey, ramp: Uint32Array, tone: Tone): StripPicture | null {
+  const { forward } = TONE_CURVES[tone];
+  const colour = Uint32Array.from({ length: 256 }, (_, level) =>
+    level === 0 ? 0xff000000 : ramp[Math.round(forward((level - 1) / 254) * (ramp.length - 1))]!,
+  );
+  const canvas = document.createElement('canvas');
+  canvas.width = pixels.width;
+  canvas.height = pixels.height;
+  const ctx = canvas.getContext('2d');
+  if (!ctx) return null;
+  const image = ctx.createImageData(pixels.width, pixels.height);
+  const from = new Uint32Array(pixels.data.buffer, pixels.data.byteOffset, pixels.width * pixels.height);
+  const to = new Uint32Array(image.data.buffer);
+  for (let i = 0; i < to.length; i++) to[i] = colour[from[i]! & 255]!;
+  ctx.putImageData(image, 0, 0);
+  return { image: canvas, width: canvas.width, height: canvas.height, step };
+}

@@ -1,0 +1,60 @@
+import { useDeferredValue, useMemo } from 'react';
+import { advice } from '@/hooks/reading/advice';
+import type { PlacedMark } from '@/hooks/reading/placedMark';
+import { readingByChannel, skyMarks, type ChannelReading, type SkyRimMark } from '@/hooks/reading/skyMarks';
+import { isProblem, Problem } from '@/shared/contract/problem';
+import { liveFit } from '@/shared/shell/fit';
+import { LEAST_CHANNELS, LEAST_MARKS } from '@/shared/shell/fitInput';
+import type { FitResult } from '@/shared/shell/fitResult';
+import type { Wcs } from '@/shared/sky/wcs';
+
+export interface LiveFit {
+  marks: readonly SkyRimMark[];
+  readings: readonly ChannelReading[];
+  fit: FitResult | null;
+  /** Why marks that are enough in number make no fit. */
+  problem: Problem | null;
+  sentence: string;
+}
+
+/** Rings and the shell's fit as the marks stand, worked out in the browser by the code that the worker runs too. */
+export function useLiveFit(
+  marks: readonly PlacedMark[],
+  wcs: Wcs,
+  channelWidth: number,
+  range: readonly [number, number],
+): LiveFit {
+  // The map follows the finger first; the fit follows when there is time.
+  const deferred = useDeferredValue(marks);
+  return useMemo(() => {
+    const onSky = skyMarks(deferred, wcs);
+    const readings = readingByChannel(onSky);
+    const { fit, problem } = fitted(onSky, readings.length, channelWidth);
+    const value = (name: string) => fit?.parameters[name]?.value ?? NaN;
+    const model = fit ? { vSys: value('vSys'), vExp: value('vExp') } : null;
+    const sentence = advice({
+      readings,
+      marks: onSky.length,
+      model,
+      problem: problem?.detail ?? null,
+      range,
+    });
+    return { marks: onSky, readings, fit, problem, sentence };
+  }, [deferred, wcs, channelWidth, range]);
+}
+
+function fitted(
+  marks: readonly SkyRimMark[],
+  channels: number,
+  channelWidth: number,
+): { fit: FitResult | null; problem: Problem | null } {
+  if (marks.length < LEAST_MARKS || channels < LEAST_CHANNELS) return { fit: null, problem: null };
+  try {
+    return { fit: liveFit({ marks, channelWidth }), problem: null };
+  } catch (error) {
+    if (isProblem(error)) return { fit: null, problem: error };
+    // A fault of ours must not take the marks from under the person's hand.
+    const detail = `The live fit stopped: ${error instanceof Error ? error.message : String(error)}`;
+    return { fit: null, problem: new Problem('fit-failed', detail) };
+  }
+}
