@@ -24,8 +24,11 @@ export default function SignedIn() {
       perform: () => router.push(s.href),
     })),
   );
-  if (signedOut)
-    return <Redirect href={{ pathname: '/sign-in', params: path === '/regions' ? {} : { to: path } }} />;
+  if (signedOut) {
+    const { pathname, search } = globalThis.location; // the whole address: it holds channel, zoom and filters
+    const params = pathname === '/regions' ? {} : { to: pathname + search };
+    return <Redirect href={{ pathname: '/sign-in', params }} />;
+  }
   if (me && me.role === null) return <Redirect href="/sign-in" />;
   if (problem && !me)
     return (

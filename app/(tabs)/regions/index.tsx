@@ -1,0 +1,1 @@
+export { RegionList as default } from '@/components/regions/RegionList';
