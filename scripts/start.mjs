@@ -14,6 +14,7 @@ import { root } from './machine/place.mjs';
 import { startCluster } from './machine/postgres.mjs';
 import { Stop, explain } from './machine/stop.mjs';
 import { chooseAddress, untilServed } from './start/address.mjs';
+import { whenNpmIsGone } from './start/ancestors.mjs';
 import { startChild } from './start/children.mjs';
 import { migrate, ownDatabase } from './start/database.mjs';
 import { demoBegins, demoEnds, demoWanted, signInLines } from './start/demo.mjs';
@@ -43,19 +44,10 @@ for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'])
     void leave(0);
   });
 
-/** npm passes signals on, but killed by force it cannot: then nobody is left to stop us. */
-function stopWithNpm() {
-  const parent = process.ppid;
-  const watch = setInterval(() => {
-    if (process.ppid !== parent) void leave(0);
-  }, 500);
-  watch.unref();
-}
-
 async function main() {
   const began = Date.now();
   checkNode();
-  if (process.env.npm_lifecycle_event) stopWithNpm();
+  whenNpmIsGone(() => void leave(0));
   const lock = takeLock(join(root, '.data', 'start.lock'), 'Outswell');
   undo.push(lock.release);
   const address = await chooseAddress(process.env, { patience: lock.tookOver ? 5000 : 0 });
