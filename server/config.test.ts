@@ -1,4 +1,7 @@
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
 import { ConfigError, loadConfig } from './config';
+import { variables } from './configTable';
 
 const database = { DATABASE_URL: 'postgres://outswell:pw@127.0.0.1:5433/outswell' };
 const production = {
@@ -139,4 +142,10 @@ test('the message names the variables and never their values', () => {
   } catch (error) {
     expect(String(error)).not.toMatch(/hunter2|swordfish|opensesame/);
   }
+});
+
+test('README.md lists every variable, and no other', () => {
+  const readme = readFileSync(join(__dirname, '..', 'README.md'), 'utf8');
+  const listed = [...readme.matchAll(/^\| `([A-Z0-9_]+)` \|/gm)].map((row) => row[1]);
+  expect(listed.sort()).toEqual(Object.keys(variables).sort());
 });
