@@ -27,6 +27,7 @@ test.each([
   [{ value: 28.13, se: 1, lo: 27.2, hi: 29.3, unit: 'km/s' }, '28.1 +1.2 \u22120.9 km/s'],
   [{ value: 28.13, se: 0.7, lo: 27.43, hi: 28.84, unit: 'km/s' }, '28.1 ± 0.7 km/s'],
   [{ value: 28.13, se: null, lo: 27.2, hi: null, unit: 'km/s' }, '28.1 no upper bound \u22120.9 km/s'],
+  [{ value: 15.647, se: 0.205, lo: 15.435, hi: 15.868, unit: 'km/s' }, '15.65 ± 0.20 km/s'],
   [{ value: 3.25, se: null, unit: 'Myr' }, '3.25 Myr'],
   [{ value: -0.001, se: 0.2, unit: 'km/s' }, '0.00 ± 0.20 km/s'],
 ])('%j is written %s', (quantity, line) => expect(formatQuantity(quantity).line).toBe(line));

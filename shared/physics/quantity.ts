@@ -75,30 +75,37 @@ const spokenUnits: Record<string, string> = {
 /** deg is written °, everything else as it is. */
 export const displayUnit = (unit: string): string => unit.replace(/\bdeg\b/, '°');
 
+/** Sides that differ by less than this share of their mean are one error: the difference says nothing. */
+const LOPSIDED = 0.15;
+
 /**
- * Value, error and unit as the interface and tables print them: rounded by the error's leading digits, asymmetric
- * errors as +a −b where the two sides differ after rounding, a side without a bound as 'no upper bound'.
+ * Value, error and unit as the interface and tables print them, rounded by the error's leading digits.
+ *
+ * Where the two sides of the interval agree within 15 % the error is the standard error, as ± a; otherwise the sides
+ * are given as +a −b, and a side without a bound as 'no upper bound'.
  *
  * @param quantity any finite value; se, lo, hi null where unknown (lo or hi null with the other given: unbounded)
  */
 export function formatQuantity({ value, se, lo, hi, unit = '' }: QuantityInput): QuantityText {
   const shownUnit = displayUnit(unit);
-  const below = lo == null ? null : value - lo;
-  const above = hi == null ? null : hi - value;
-  const sides = [below, above].filter((x): x is number => x !== null && x > 0);
-  const decimals = errorDecimals(sides.length > 0 ? Math.min(...sides) : (se ?? 0));
   if (!Number.isFinite(value)) return assemble('–', null, null, shownUnit, unit);
-  if (decimals === null) return assemble(plainNumber(value), null, null, shownUnit, unit);
-
-  const number = fixed(value, decimals);
-  const [a, b] = [above, below].map((x) => (x === null || x < 0 ? null : fixed(x, decimals)));
-  if (sides.length === 0 || (a != null && a === b)) {
-    const error = a ?? fixed(se ?? 0, decimals);
-    return assemble(number, `± ${error}`, `plus or minus ${error}`, shownUnit, unit);
+  const below = lo == null || lo > value ? null : value - lo;
+  const above = hi == null || hi < value ? null : hi - value;
+  const even =
+    below !== null && above !== null && Math.abs(above - below) <= (LOPSIDED * (above + below)) / 2;
+  const single = below === null && above === null ? se : even ? (se ?? (above + below) / 2) : null;
+  if (single !== null || (below === null && above === null)) {
+    const decimals = errorDecimals(single ?? 0);
+    if (decimals === null) return assemble(plainNumber(value), null, null, shownUnit, unit);
+    const error = fixed(single!, decimals);
+    return assemble(fixed(value, decimals), `± ${error}`, `plus or minus ${error}`, shownUnit, unit);
   }
-  const written = `${a == null ? 'no upper bound' : `+${a}`} ${b == null ? 'no lower bound' : `${MINUS}${b}`}`;
-  const heard = `${a == null ? 'no upper bound' : `plus ${a}`}, ${b == null ? 'no lower bound' : `minus ${b}`}`;
-  return assemble(number, written, heard, shownUnit, unit);
+  const decimals = errorDecimals(Math.min(above ?? Infinity, below ?? Infinity)) ?? 3;
+  const side = (x: number | null) => (x === null ? null : fixed(x, decimals));
+  const [a, b] = [side(above), side(below)];
+  const written = `${a === null ? 'no upper bound' : `+${a}`} ${b === null ? 'no lower bound' : `${MINUS}${b}`}`;
+  const heard = `${a === null ? 'no upper bound' : `plus ${a}`}, ${b === null ? 'no lower bound' : `minus ${b}`}`;
+  return assemble(fixed(value, decimals), written, heard, shownUnit, unit);
 }
 
 function assemble(
