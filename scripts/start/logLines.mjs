@@ -3,19 +3,9 @@
 
 /** @type {Record<number, string>} */
 const levels = { 10: 'trace', 20: 'debug', 30: '', 40: 'WARN', 50: 'ERROR', 60: 'FATAL' };
-const hidden = new Set([
-  'level',
-  'time',
-  'pid',
-  'hostname',
-  'name',
-  'msg',
-  'req',
-  'res',
-  'responseTime',
-  'err',
-  'v',
-]);
+const hidden = new Set('level time pid hostname name msg req res responseTime v'.split(' '));
+const isError = (/** @type {unknown} */ value) =>
+  typeof value === 'object' && value !== null && 'stack' in value;
 
 /**
  * One line of a process's output as a person reads it: time, who, level when it matters, what, and the rest as
@@ -31,7 +21,7 @@ export function readable(who, line, now = new Date()) {
   const level = levels[Number(fields.level)] ?? String(fields.level);
   const text = [level, request(fields) ?? String(fields.msg ?? ''), rest(fields)].filter(Boolean).join('  ');
   const time = new Date(/** @type {number | string} */ (fields.time ?? now));
-  return `${clock(Number.isNaN(time.getTime()) ? now : time)} ${who.padEnd(6)} ${text}${trace(fields.err)}`;
+  return `${clock(Number.isNaN(time.getTime()) ? now : time)} ${who.padEnd(6)} ${text}${trace(fields)}`;
 }
 
 /** @param {string} line @returns {Fields | null} */
@@ -57,15 +47,14 @@ function request({ req, res, responseTime, msg }) {
 /** @param {Fields} fields */
 const rest = (fields) =>
   Object.entries(fields)
-    .filter(([key, value]) => !hidden.has(key) && value !== undefined && value !== null)
+    .filter(([key, value]) => !hidden.has(key) && !isError(value) && value !== undefined && value !== null)
     .map(([key, value]) => `${key}=${typeof value === 'object' ? JSON.stringify(value) : value}`)
     .join(' ');
 
-/** @param {unknown} err */
-function trace(err) {
-  const { stack, message } = /** @type {{ stack?: string, message?: string }} */ (err ?? {});
-  const text = stack ?? message;
-  return text ? `\n${text.replace(/^/gm, '         | ')}` : '';
+/** Of whichever field carries an error. @param {Fields} fields */
+function trace(fields) {
+  const found = /** @type {{ stack?: string } | undefined} */ (Object.values(fields).find(isError));
+  return found?.stack ? `\n${found.stack.replace(/^/gm, '         | ')}` : '';
 }
 
 /** @param {Date} time */

@@ -27,8 +27,12 @@ test.each([
   expect(readable('server', line, at)).toBe(`17:04:09 server ${shown}`);
 });
 
-test('shows the trace of an error below it', () => {
-  const line = json({ level: 50, msg: 'ingest failed', err: { message: 'no', stack: 'Error: no\n  at x' } });
+test.each(['err', 'error'])('shows the trace under %s below it', (key) => {
+  const line = json({
+    level: 50,
+    msg: 'ingest failed',
+    [key]: { message: 'no', stack: 'Error: no\n  at x' },
+  });
   expect(readable('worker', line)).toBe(
     '17:04:09 worker ERROR  ingest failed\n         | Error: no\n         |   at x',
   );
