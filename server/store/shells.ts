@@ -2,6 +2,12 @@ import type { CatalogueQuery } from '@/shared/contract/shells';
 import type { FitOutcome } from '@/shared/contract/fits';
 import { rows, type Db } from './db';
 
+/** Of the adopted fit, what a list needs: not its residuals and rings. */
+export type AdoptedOutcome = Pick<
+  FitOutcome,
+  'model' | 'parameters' | 'correlation' | 'chi2' | 'dof' | 'warnings' | 'provenance'
+>;
+
 export interface ShellRow {
   id: string;
   teamId: string;
@@ -12,7 +18,7 @@ export interface ShellRow {
   status: 'draft' | 'in review' | 'returned' | 'accepted' | 'withdrawn';
   designation: string | null;
   adoptedFitId: string | null;
-  outcome: FitOutcome | null;
+  outcome: AdoptedOutcome | null;
   distancePc: number | null;
   distanceErrorPc: number | null;
   regionDistancePc: number | null;
@@ -37,7 +43,7 @@ export interface ShellRow {
 const select = `
   select shells.id, regions.team_id as "teamId", shells.region_id as "regionId", regions.name as "regionName",
          shells.name, shells.note, shells.status, shells.designation, shells.adopted_fit_id as "adoptedFitId",
-         fits.outcome - '{residuals,rings,correlation}'::text[] as outcome, newest.pc as "distancePc", newest.error_pc as "distanceErrorPc",
+         fits.outcome - '{residuals,rings}'::text[] as outcome, newest.pc as "distancePc", newest.error_pc as "distanceErrorPc",
          regions.distance_pc as "regionDistancePc", regions.distance_error_pc as "regionDistanceErrorPc",
          coalesce(marked.readings, '[]') as readings, coalesce(counted.fits, 0)::int as fits,
          shells.created_by as "createdById", people.name as "createdByName", shells.created_at as "createdAt",

@@ -3,6 +3,7 @@ import { rows, type Db } from './db';
 
 export interface UploadRow {
   id: string;
+  teamId: string;
   regionId: string;
   personId: string;
   fileName: string;
@@ -15,15 +16,16 @@ export interface UploadRow {
   createdAt: Date;
 }
 const columns = `
-  uploads.id, uploads.region_id as "regionId", uploads.person_id as "personId", uploads.file_name as "fileName",
+  uploads.id, regions.team_id as "teamId", uploads.region_id as "regionId", uploads.person_id as "personId", uploads.file_name as "fileName",
   uploads.size_bytes::float8 as "sizeBytes", uploads.received_bytes::float8 as "receivedBytes", uploads.status,
   uploads.head_checked as "headChecked", uploads.problem, uploads.cube_id as "cubeId", uploads.created_at as "createdAt"`;
+const from = 'from uploads join regions on regions.id = uploads.region_id';
 
 /** Uploads that still concern somebody: coming in, being checked, or refused within the last day. */
 export const listUploads = (db: Db, regionId: string) =>
   rows<UploadRow>(
     db,
-    `select ${columns} from uploads
+    `select ${columns} ${from}
      where uploads.region_id = ? and (uploads.status in ('receiving', 'checking')
        or (uploads.status = 'refused' and uploads.updated_at > now() - interval '1 day'))
      order by uploads.created_at desc`,
@@ -31,7 +33,7 @@ export const listUploads = (db: Db, regionId: string) =>
   );
 
 export async function findUpload(db: Db, id: string): Promise<UploadRow | undefined> {
-  return (await rows<UploadRow>(db, `select ${columns} from uploads where uploads.id = ?`, [id]))[0];
+  return (await rows<UploadRow>(db, `select ${columns} ${from} where uploads.id = ?`, [id]))[0];
 }
 
 export const insertUpload = (
@@ -68,11 +70,6 @@ export const updateUpload = (
       ...(change.cubeId !== undefined && { cube_id: change.cubeId }),
     });
 
-/** Uploads nobody sent a byte to for so many days; their bytes may go. */
-export const staleUploads = (db: Db, days: number) =>
-  rows<{ id: string }>(
-    db,
-    `select uploads.id from uploads
-     where uploads.status = 'receiving' and uploads.updated_at < now() - make_interval(days => ?)`,
-    [days],
-  );
+/** Every upload that is not over. */
+export const openUploads = (db: Db) =>
+  rows<UploadRow>(db, `select ${columns} ${from} where uploads.status in ('receiving', 'checking')`);

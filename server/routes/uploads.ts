@@ -1,0 +1,117 @@
+import { randomUUID } from 'node:crypto';
+import { mkdirSync } from 'node:fs';
+import { Readable } from 'node:stream';
+import { FileStore } from '@tus/file-store';
+import { Server, type ServerOptions } from '@tus/server';
+import type { Request, Response, RequestHandler } from 'express';
+import { isProblem, Problem } from '@/shared/contract/problem';
+import { contextOf } from '../auth/requests';
+import { HeadGate } from '../files/headGate';
+import type { Parts } from '../services/context';
+import * as uploads from '../services/uploads';
+import { PROBLEM_TYPE, toProblem, unforeseen } from './problems';
+
+export const UPLOADS_PATH = '/api/v1/uploads';
+
+type WebRequest = Parameters<NonNullable<ServerOptions['onUploadFinish']>>[0];
+const expressRequest = (req: WebRequest): Request =>
+  (req as unknown as { runtime: { node: { req: Request } } }).runtime.node.req;
+
+/** Keeps incoming bytes on disk, and looks at the header of each cube as it passes. */
+class CheckedStore extends FileStore {
+  constructor(private readonly parts: Parts) {
+    super({ directory: uploads.uploadDirectory(parts) });
+  }
+
+  override async write(incoming: Readable, id: string, offset: number): Promise<number> {
+    const row = (await uploads.uploadById(this.parts, id))!;
+    const gate = new HeadGate(row.sizeBytes);
+    if (row.headChecked) gate.accepted = true;
+    else if (offset > 0) await gate.resume(uploads.uploadPath(this.parts, id), offset);
+    const received = await super.write(Readable.from(gate.pass(incoming), { objectMode: false }), id, offset);
+    if (gate.problem) {
+      await uploads.refuseUpload(this.parts, row, gate.problem);
+      throw gate.problem;
+    }
+    await uploads.noteReceived(this.parts, row, received, gate.accepted);
+    return received;
+  }
+}
+
+/** Resumable uploads by tus 1.0, in front of any body parser. */
+export function uploadHandler(parts: Parts): RequestHandler {
+  mkdirSync(uploads.uploadDirectory(parts), { recursive: true });
+  const tus = new Server({
+    path: UPLOADS_PATH,
+    relativeLocation: true,
+    datastore: new CheckedStore(parts),
+    maxSize: parts.config.maxUploadBytes,
+    namingFunction: () => randomUUID(),
+    async onIncomingRequest(req, id) {
+      const ctx = contextOf(expressRequest(req));
+      if (req.method !== 'POST' && req.method !== 'OPTIONS') await uploads.myUpload(ctx, id);
+    },
+    async onUploadCreate(req, upload) {
+      const { regionId, filename } = upload.metadata ?? {};
+      await uploads.beginUpload(contextOf(expressRequest(req)), {
+        id: upload.id,
+        regionId,
+        fileName: filename,
+        size: upload.size,
+      });
+      return {};
+    },
+    async onUploadFinish(_req, upload) {
+      return { headers: { 'Cube-Id': await uploads.finishUpload(parts, upload.id) } };
+    },
+    onResponseError: (req, error) => shape(expressRequest(req), error),
+  });
+  return async (req, res) => {
+    labelProblems(res);
+    await tus.handle(req, res);
+    if (req.method === 'DELETE' && res.statusCode === 204)
+      await uploads.cancelUpload(contextOf(req), String(req.path.split('/').pop()));
+  };
+}
+
+/** The protocol's own refusals and ours, in one form. */
+function shape(req: Request, error: unknown): { status_code: number; body: string } {
+  const problem = isProblem(error) ? error : (fromProtocol(error) ?? toProblem(error) ?? report(req, error));
+  const body = problem.toJSON();
+  const { status_code } = error as { status_code?: number };
+  // where the protocol names a status its clients act on it: 409 look again, 412 other version, 460 checksum
+  const status = problem.type === 'upload-protocol' && status_code ? status_code : problem.status;
+  return { status_code: status, body: JSON.stringify({ ...body, status }) };
+}
+
+function fromProtocol(error: unknown): Problem | undefined {
+  const { status_code, body } = error as { status_code?: number; body?: string };
+  if (typeof status_code !== 'number' || status_code >= 500) return undefined;
+  if (status_code === 413)
+    return new Problem(
+      'too-large',
+      'Cut the cube to the channels and the sky that you need, or ask whoever runs this server.',
+    );
+  if (status_code === 404 || status_code === 410)
+    return new Problem('not-found', 'There is no such upload any more. Begin it again.');
+  return new Problem('upload-protocol', `The upload protocol refused: ${(body ?? '').trim()}.`);
+}
+
+function report(req: Request, error: unknown): Problem {
+  req.log.error({ error }, 'an upload failed');
+  return unforeseen(String(req.id));
+}
+
+/** The library answers errors as plain text; ours are problem+json, whoever writes the head. */
+function labelProblems(res: Response) {
+  const writeHead = res.writeHead.bind(res) as (...args: unknown[]) => Response;
+  res.writeHead = ((status: number, ...rest: unknown[]) => {
+    const headers = rest.find((r) => Array.isArray(r)) as string[] | undefined;
+    if (status >= 400 && headers) {
+      const at = headers.findIndex((h, i) => i % 2 === 0 && h.toLowerCase() === 'content-type');
+      if (at >= 0) headers[at + 1] = PROBLEM_TYPE;
+      else headers.push('content-type', PROBLEM_TYPE);
+    }
+    return writeHead(status, ...rest);
+  }) as typeof res.writeHead;
+}

@@ -1,0 +1,45 @@
+import { MessageChannel } from 'node:worker_threads';
+import type Piscina from 'piscina';
+import type { FitOutcome, FrozenMark } from '@/shared/contract/fits';
+import { Problem, type ProblemType } from '@/shared/contract/problem';
+import type { CubeReducer } from '@/server/services/ingest';
+import type { Reduced } from '@/server/services/reduceCube';
+import type { FitSolver } from '@/server/services/runFit';
+import type { ThreadAnswer } from './thread';
+
+/** The value a thread found, or the problem it met, thrown as it was there. */
+function unpack<T>(answer: ThreadAnswer<T>): T {
+  if ('value' in answer) return answer.value;
+  const { type, title: _, status: __, detail, ...extra } = answer.problem;
+  throw new Problem(type.replace('/problems/', '') as ProblemType, detail, extra);
+}
+
+export const reducer =
+  (pool: Piscina): CubeReducer =>
+  async (task, onChannel, signal) => {
+    const { port1, port2 } = new MessageChannel();
+    port1.on('message', onChannel);
+    try {
+      const options = { name: 'reduce', signal, transferList: [port2] };
+      return unpack((await pool.run({ task, port: port2 }, options)) as ThreadAnswer<Reduced>);
+    } finally {
+      port1.close();
+    }
+  };
+
+/** The rings of a fit carry velocities; the channel they were marked on comes from the frozen marks. */
+function withChannels(outcome: FitOutcome, marks: FrozenMark[]): FitOutcome {
+  const channelAt = (velocity: number) =>
+    marks.reduce((best, m) =>
+      Math.abs(m.velocity - velocity) < Math.abs(best.velocity - velocity) ? m : best,
+    ).channel;
+  return { ...outcome, rings: outcome.rings.map((ring) => ({ ...ring, channel: channelAt(ring.velocity) })) };
+}
+
+export const solver =
+  (pool: Piscina): FitSolver =>
+  async (task, signal) =>
+    withChannels(
+      unpack((await pool.run(task, { name: 'fit', signal })) as ThreadAnswer<FitOutcome>),
+      task.frozen.marks,
+    );
