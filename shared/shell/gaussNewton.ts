@@ -1,19 +1,10 @@
 import { evaluate } from '@/shared/shell/residuals';
 import { evaluation, recentred, type Evaluation, type Frame } from '@/shared/shell/frame';
-import { velocityReach, type MarkSet } from '@/shared/shell/markSet';
+import { boundsOf, intoBounds } from '@/shared/shell/bounds';
+import type { MarkSet } from '@/shared/shell/markSet';
 import { accumulate, factorise, hold, substitute } from '@/shared/shell/normalEquations';
 import { robustWeights } from '@/shared/shell/robust';
-import {
-  EXTRA_1,
-  EXTRA_2,
-  LN_W,
-  THETA,
-  V0,
-  X,
-  Y,
-  parameterCount,
-  type ModelName,
-} from '@/shared/shell/shellModel';
+import { LN_W, THETA, V0, X, Y, parameterCount, type ModelName } from '@/shared/shell/shellModel';
 
 /** What is to be minimised: a model on marks, with v_sys free, under a prior, or held. */
 export interface ShellProblem {
@@ -87,10 +78,6 @@ const ROBUST_LAST = 15;
 const ROBUST_SETTLED = 17;
 const KINK_GAIN = 1e-6;
 const FAILURES_ALLOWED = 12;
-
-/** Bounds of ln w in units of the marks' velocity reach: at the upper one the expansion velocity is unconstrained. */
-export const WIDEST = 20;
-const NARROWEST = 0.3;
 
 /**
  * Damped Gauss-Newton (Marquardt 1963) on residuals over their effective standard deviations, the deviations being
@@ -214,36 +201,4 @@ function limitStep(p: Float64Array, step: Float64Array): void {
   clip(THETA, 0.5 * p[THETA]!);
   clip(X, 0.3);
   clip(Y, 0.3);
-}
-
-export interface Bounds {
-  thetaLow: number;
-  thetaHigh: number;
-  lnWLow: number;
-  lnWHigh: number;
-  vLow: number;
-  vHigh: number;
-}
-
-export function boundsOf(marks: MarkSet): Bounds {
-  const { low, high, half } = velocityReach(marks);
-  return {
-    thetaLow: 1e-6,
-    thetaHigh: 1.45,
-    lnWLow: Math.log(half * NARROWEST),
-    lnWHigh: Math.log(half * WIDEST),
-    vLow: low - 40 * half,
-    vHigh: high + 40 * half,
-  };
-}
-
-function intoBounds(model: ModelName, p: Float64Array, bounds: Bounds): void {
-  p[THETA] = Math.min(Math.max(p[THETA]!, bounds.thetaLow), bounds.thetaHigh);
-  p[V0] = Math.min(Math.max(p[V0]!, bounds.vLow), bounds.vHigh);
-  p[LN_W] = Math.min(Math.max(p[LN_W]!, bounds.lnWLow), bounds.lnWHigh);
-  if (model !== 'elliptical') return;
-  const flattening = Math.hypot(p[EXTRA_1]!, p[EXTRA_2]!);
-  if (flattening <= 0.95) return;
-  p[EXTRA_1] = (p[EXTRA_1]! * 0.95) / flattening;
-  p[EXTRA_2] = (p[EXTRA_2]! * 0.95) / flattening;
 }
