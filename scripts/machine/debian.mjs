@@ -26,7 +26,7 @@ export const needs = {
     present: () =>
       Boolean(process.env.CHROMIUM) || ['chromium', 'chromium-browser', 'google-chrome'].some(onPath),
     packages: ['chromium', 'fonts-liberation'],
-    otherwise: 'or set CHROMIUM to the path of its program',
+    otherwise: 'set CHROMIUM to the path of its program',
   },
 };
 
@@ -40,8 +40,10 @@ export async function ensurePrograms(wanted, say) {
   const packages = missing.flatMap((need) => need.packages);
   const names = missing.map((need) => need.name).join(' and ');
   if (process.getuid?.() !== 0 || !onPath('apt-get')) {
-    const advice = missing.map((need) => `${need.name}: ${need.otherwise}.`).join('\n');
-    throw new Stop(`${names} missing. On Debian: sudo apt-get install ${packages.join(' ')}\n${advice}`);
+    const advice = missing.map((need) => `For ${need.name} you may also ${need.otherwise}.`).join('\n');
+    throw new Stop(
+      `${names} must be installed first. On Debian:\n  sudo apt-get install ${packages.join(' ')}\n${advice}`,
+    );
   }
   say(`Installing ${names} (apt-get install ${packages.join(' ')}) …`);
   await apt('update');

@@ -88,3 +88,25 @@ test('the password is for its owner alone', async () => {
   expect(cluster.url).toContain(readFileSync(join(dir, 'password'), 'utf8'));
   await cluster.stop();
 });
+
+const asRoot = process.getuid?.() === 0 ? test : test.skip; // only root's server runs under another account
+asRoot(
+  'below a folder that is closed to the server’s account, the cluster lies elsewhere and says so',
+  async () => {
+    const closed = join(dir, 'closed');
+    mkdirSync(closed, { mode: 0o700 });
+    const lines: string[] = [];
+    const cluster = await startCluster(join(closed, 'postgres'), {
+      ...fast,
+      say: (line) => lines.push(line),
+    });
+    try {
+      expect(await query(cluster.url, 'select 1 as one')).toEqual([{ one: 1 }]);
+      expect(cluster.dir).toMatch(/^\/var\/lib\/outswell-/);
+      expect(lines.join()).toContain(cluster.dir);
+    } finally {
+      await cluster.stop();
+      rmSync(cluster.dir, { recursive: true });
+    }
+  },
+);
