@@ -1,0 +1,1 @@
+export { ShellsTab as default } from '@/components/shells/ShellsTab';
