@@ -1,3 +1,4 @@
+import { stat } from 'node:fs/promises';
 import { isProblem, Problem } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
 import { planeStatistics } from '@/shared/fits/statistics';
@@ -116,6 +117,7 @@ const allBlank = () =>
 
 async function open(file: string): Promise<ByteSource> {
   try {
+    if ((await stat(file)).isDirectory()) throw new Error('it is a folder');
     return await openDiskSource(file);
   } catch (error) {
     throw new Problem('invalid-input', `${file} cannot be opened: ${(error as Error).message}.`, {

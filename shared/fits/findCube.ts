@@ -53,7 +53,12 @@ export async function checkBeginning(bytes: Uint8Array, size: number): Promise<C
   }
 }
 
-class MoreBytesNeeded extends Error {}
+/** The reader had fewer bytes than the file's size promises. */
+class MoreBytesNeeded extends Problem {
+  constructor() {
+    super('fits-truncated', 'The file ends inside its header.', { card: 'END' });
+  }
+}
 
 async function firstCube(
   read: ReadBytes,
@@ -95,7 +100,11 @@ function tryDescribe(found: Hdu, size: number, offset: number, n: number): CubeH
 /** The HDU at an offset; null where the file has ended, or goes on with something that is no extension. */
 async function readHdu(read: ReadBytes, offset: number, size: number, n: number): Promise<Hdu | null> {
   if (offset >= size) return null;
-  if (n > 0 && !startsExtension(await read(offset, 9))) return null;
+  if (n > 0) {
+    const start = await read(offset, 9);
+    if (start.length < Math.min(9, size - offset)) throw new MoreBytesNeeded();
+    if (!startsExtension(start)) return null;
+  }
   const kind = n === 0 ? 'primary' : 'extension';
   for (let length = FIRST_READ; ; length *= 4) {
     const wanted = Math.min(length, size - offset, MAX_HEADER_BYTES + BLOCK);
@@ -110,6 +119,7 @@ async function readHdu(read: ReadBytes, offset: number, size: number, n: number)
         card: 'END',
       });
     }
+    if (bytes.length < wanted) throw new MoreBytesNeeded();
   }
 }
 

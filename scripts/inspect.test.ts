@@ -1,0 +1,90 @@
+import { execFile } from 'node:child_process';
+import { join } from 'node:path';
+
+const root = join(__dirname, '..');
+const corpus = join(root, 'tests/reference/fits-corpus');
+
+interface Outcome {
+  code: number;
+  stdout: string;
+  stderr: string;
+}
+
+const inspect = (...args: string[]): Promise<Outcome> =>
+  new Promise((resolve) => {
+    execFile(
+      process.execPath,
+      ['--import', 'tsx', 'scripts/inspect.ts', ...args],
+      { cwd: root },
+      (error, stdout, stderr) => resolve({ code: Number(error?.code ?? 0), stdout, stderr }),
+    );
+  });
+
+describe('npm run inspect', () => {
+  it('prints one object about a cube, its places and its channels', async () => {
+    const file = join(corpus, 'bitpix8.fits');
+    const { code, stdout, stderr } = await inspect(
+      file,
+      '--at=2,0,1',
+      '--at',
+      '0.5,-3,5',
+      '--from=118.15,-0.3,-56.69',
+      '--stats',
+    );
+    expect({ code, stderr }).toEqual({ code: 0, stderr: '' });
+    const seen = JSON.parse(stdout);
+    expect(Object.keys(seen)).toEqual(
+      'shape bitpix unit frame projection spectral beam cautions at from stats'.split(' '),
+    );
+    expect(seen).toMatchObject({
+      shape: { nx: 8, ny: 7, channels: 6 },
+      bitpix: 8,
+      unit: 'K',
+      frame: 'galactic',
+      projection: 'CAR',
+      spectral: { type: 'VRAD', convention: 'radio', frame: 'LSRK', restFrequencyHz: 1420405751.768 },
+      beam: null,
+      cautions: [],
+    });
+    expect(seen.at[0]).toMatchObject({ x: 2, y: 0, channel: 1, velocity: -56.69, value: 2.125 });
+    expect(seen.at[0].l).toBeCloseTo(118.15, 10);
+    expect(seen.at[1]).toMatchObject({ x: 0.5, y: -3, value: null });
+    expect(seen.from[0].x).toBeCloseTo(2, 9);
+    expect(seen.from[0].channel).toBeCloseTo(1, 9);
+    expect(seen.stats).toHaveLength(6);
+    expect(seen.stats[0]).toMatchObject({ channel: 0, min: -2.625, max: 8.5, blank: 5 });
+    expect(seen.stats[0].noise).toBeGreaterThan(0);
+  });
+
+  it('counts infinities as blank, and says so', async () => {
+    const { stdout } = await inspect(join(corpus, 'infinities.fits'), '--stats');
+    expect(JSON.parse(stdout).cautions).toEqual([
+      expect.stringMatching(/infinite values are counted as blank/),
+    ]);
+  });
+
+  it('reads the named HDU', async () => {
+    const { stdout } = await inspect(join(corpus, 'two-cubes.fits'), '--hdu=2');
+    expect(JSON.parse(stdout).cautions).toEqual([]);
+  });
+
+  it.each([
+    ['a file that is no cube', [join(corpus, 'two-dimensional.fits')], '/problems/fits-shape'],
+    ['a cube of blanks', [join(corpus, 'all-blank.fits')], '/problems/fits-shape'],
+    [
+      'a cube of blanks, with statistics',
+      [join(corpus, 'all-blank.fits'), '--stats'],
+      '/problems/fits-shape',
+    ],
+    ['a bad card', [join(corpus, 'bitpix-12.fits')], '/problems/fits-card'],
+    ['a file that is not there', [join(corpus, 'none.fits')], '/problems/invalid-input'],
+    ['a folder', [corpus], '/problems/invalid-input'],
+    ['no file', [], '/problems/invalid-input'],
+    ['a place that is none', [join(corpus, 'bitpix8.fits'), '--at=1,2'], '/problems/invalid-input'],
+    ['an unknown option', [join(corpus, 'bitpix8.fits'), '--what'], '/problems/invalid-input'],
+  ])('refuses %s with code 2', async (_what, args, type) => {
+    const { code, stdout, stderr } = await inspect(...args);
+    expect({ code, stdout }).toEqual({ code: 2, stdout: '' });
+    expect(JSON.parse(stderr)).toMatchObject({ type, detail: expect.any(String) });
+  });
+});
