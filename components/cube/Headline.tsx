@@ -1,0 +1,25 @@
+import { View } from 'react-native';
+import { useSession } from '@/components/cube/session';
+import { Text } from '@/components/ui/Text';
+import { space } from '@/components/ui/tokens';
+import { labelOf } from '@/shared/image/ticks';
+
+/** The velocity shown, large; the channel beside it. */
+export function Headline({ compact }: { compact?: boolean }) {
+  const { velocity, channel, axes } = useSession();
+  return (
+    <View style={{ flexDirection: 'row', alignItems: 'baseline', gap: space(2), flexShrink: 0 }}>
+      <Text mono size={compact ? 'title' : 'display'} numberOfLines={1}>
+        {labelOf(velocity, 1)}
+      </Text>
+      <Text mono size="small" tone="quiet">
+        km/s
+      </Text>
+      {!compact && (
+        <Text mono size="small" tone="quiet" numberOfLines={1}>
+          {`channel ${channel + 1} of ${axes.channels}`}
+        </Text>
+      )}
+    </View>
+  );
+}

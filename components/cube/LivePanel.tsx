@@ -1,0 +1,135 @@
+import { useMemo, useState } from 'react';
+import { View } from 'react-native';
+import { useSession } from '@/components/cube/session';
+import { radiusErrorOf } from '@/components/diagram/modelError';
+import { RadiusVelocity } from '@/components/diagram/RadiusVelocity';
+import type { DiagramModel, DiagramRing } from '@/components/diagram/diagramScale';
+import { SectionTitle } from '@/components/ui/Panel';
+import { Notice } from '@/components/ui/ProblemNotice';
+import { ParameterName, Quantity } from '@/components/ui/Quantity';
+import { Text } from '@/components/ui/Text';
+import { useTheme } from '@/components/ui/theme';
+import { hairline, space } from '@/components/ui/tokens';
+import { separation } from '@/shared/sky/greatCircle';
+
+const SHOWN = ['l', 'b', 'theta', 'vSys', 'vExp'] as const;
+const TITLES: Record<string, string> = {
+  'few-channels': 'Few channels',
+  'vexp-unconstrained': 'Expansion velocity not bounded',
+  'one-sided': 'One side only',
+  'arc-too-short': 'Short arc',
+  outliers: 'Marks set aside',
+  'poor-fit': 'Poor fit',
+  'start-failed': 'Not settled',
+};
+
+/** The fit as the marks stand: diagram, parameters, and what limits them beside them. */
+export function LivePanel({
+  diagramHeight = 300,
+  diagram = true,
+}: {
+  diagramHeight?: number;
+  diagram?: boolean;
+}) {
+  const { live, model, axes, velocity, shell, showChannel } = useSession();
+  const { color } = useTheme();
+  const [width, setWidth] = useState(0);
+  const { fit } = live;
+
+  const rings = useMemo<DiagramRing[]>(
+    () =>
+      live.readings.flatMap((r) =>
+        r.ring
+          ? [{ channel: r.channel, velocity: r.velocity, theta: r.ring.theta, se: r.ring.se, marks: r.marks }]
+          : [],
+      ),
+    [live],
+  );
+  const shown = useMemo<DiagramModel | null>(() => {
+    if (!model || !fit) return null;
+    const errorAt = radiusErrorOf(fit);
+    return { theta: model.theta, vSys: model.vSys, vExp: model.vExp, ...(errorAt && { errorAt }) };
+  }, [model, fit]);
+  const points = useMemo(() => {
+    if (!model) return [];
+    const centre = { lon: model.l, lat: model.b };
+    return live.marks.map((m) => ({
+      velocity: m.velocity,
+      radius: separation(centre, { lon: m.l, lat: m.b }),
+    }));
+  }, [model, live]);
+
+  return (
+    <View style={{ gap: space(2) }} onLayout={(e) => setWidth(Math.floor(e.nativeEvent.layout.width))}>
+      {diagram && (
+        <>
+          <View style={{ flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' }}>
+            <SectionTitle>Radius–velocity</SectionTitle>
+            <Text size="small" tone="quiet">
+              {fit ? 'live fit, sphere' : ''}
+            </Text>
+          </View>
+          <View style={{ height: diagramHeight }}>
+            {width > 0 && (rings.length > 0 || shown) ? (
+              <RadiusVelocity
+                width={width}
+                height={diagramHeight}
+                rings={rings}
+                model={shown}
+                points={points}
+                channelWidth={axes.spectral.channelWidth}
+                current={velocity}
+                name={shell?.name ?? 'this shell'}
+                onPick={(ring) => ring.channel !== null && showChannel(ring.channel)}
+              />
+            ) : (
+              <View style={{ flex: 1, alignItems: 'center', justifyContent: 'center', padding: space(4) }}>
+                <Text tone="quiet" align="center">
+                  Rings appear here from three marks on a channel, the fit from six marks on three channels.
+                </Text>
+              </View>
+            )}
+          </View>
+        </>
+      )}
+      {fit && (
+        <View role="list" aria-label="Parameters of the live fit">
+          {SHOWN.map((name) => (
+            <View
+              key={name}
+              role="listitem"
+              style={{
+                flexDirection: 'row',
+                alignItems: 'center',
+                justifyContent: 'space-between',
+                minHeight: space(9),
+                gap: space(3),
+                paddingHorizontal: space(2),
+                borderBottomWidth: hairline,
+                borderBottomColor: color.line,
+              }}
+            >
+              {name === 'l' || name === 'b' ? (
+                <Text>{`Centre ${name}`}</Text>
+              ) : (
+                <ParameterName name={name} long />
+              )}
+              <Quantity quantity={fit.parameters[name]} align="right" />
+            </View>
+          ))}
+        </View>
+      )}
+      {fit?.warnings.map((w) => (
+        <Notice key={w.code} kind="person" title={TITLES[w.code] ?? 'Caution'}>
+          <Text size="small">{w.message}</Text>
+        </Notice>
+      ))}
+      {live.problem && (
+        <Notice kind="person" title={live.problem.title}>
+          <Text size="small">{live.problem.detail}</Text>
+        </Notice>
+      )}
+      {!fit && !live.problem && !diagram && <Text tone="quiet">{live.sentence}</Text>}
+    </View>
+  );
+}

@@ -1,0 +1,95 @@
+import { useEffect, useRef, useState } from 'react';
+import { ActivityIndicator, View } from 'react-native';
+import { Readout } from '@/components/cube/Readout';
+import { SelectedMark } from '@/components/cube/SelectedMark';
+import { useSession } from '@/components/cube/session';
+import { ChannelMap } from '@/components/map/ChannelMap';
+import { ProblemNotice } from '@/components/ui/ProblemNotice';
+import { Text } from '@/components/ui/Text';
+import { useTheme } from '@/components/ui/theme';
+import { radius, space } from '@/components/ui/tokens';
+import type { ChannelPlane } from '@/hooks/planes/decodePlane';
+import { labelOf } from '@/shared/image/ticks';
+
+/** The channel map with its readout and what there is to say about it. */
+export function MapPanel({ round = true }: { round?: boolean }) {
+  const s = useSession();
+  const { color } = useTheme();
+  const { plane, problem, retry } = s.planes;
+  const before = useRef<ChannelPlane | null>(null); // stays, dimmed, until the next one is here
+  useEffect(() => {
+    if (plane) before.current = plane;
+  }, [plane]);
+  const late = useLate(!plane && !problem);
+  const own = s.marksByChannel.get(s.channel) ?? 0;
+  const label =
+    `Channel map at ${labelOf(s.velocity, 1)} kilometres per second, channel ${s.channel + 1} of ${s.axes.channels}` +
+    `${own > 0 ? `, ${own} mark${own === 1 ? '' : 's'}` : ''}.` +
+    `${s.marking ? ' Arrow keys move the crosshair, Enter places a mark.' : ''}`;
+  return (
+    <View
+      style={{
+        flex: 1,
+        minHeight: 0,
+        backgroundColor: color.image,
+        borderRadius: round ? radius.small : 0,
+        overflow: 'hidden',
+      }}
+    >
+      <ChannelMap
+        store={s.store}
+        nx={s.axes.nx}
+        ny={s.axes.ny}
+        plane={plane ?? before.current}
+        stale={!plane}
+        look={s.look.look}
+        scene={s.scene}
+        label={label}
+        marking={s.marking}
+        start={s.start.view}
+        onPlace={s.placeMark}
+        onSelect={s.select}
+        onMove={s.moveMark}
+      />
+      <SelectedMark />
+      <Readout />
+      {late && (
+        <View
+          role="status"
+          pointerEvents="none"
+          style={{
+            position: 'absolute',
+            left: space(3),
+            bottom: space(10),
+            flexDirection: 'row',
+            gap: space(2),
+            padding: space(2),
+            borderRadius: radius.small,
+            backgroundColor: color.imageShade,
+          }}
+        >
+          <ActivityIndicator size="small" color={color.onImage} />
+          <Text size="small" tone="onImage">
+            Loading this channel
+          </Text>
+        </View>
+      )}
+      {problem && (
+        <View style={{ position: 'absolute', left: space(3), right: space(3), bottom: space(3) }}>
+          <ProblemNotice problem={problem} onRetry={retry} />
+        </View>
+      )}
+    </View>
+  );
+}
+
+/** True once something has lasted 300 ms: shorter waits need no word. */
+function useLate(waiting: boolean): boolean {
+  const [late, setLate] = useState(false);
+  useEffect(() => {
+    if (!waiting) return setLate(false);
+    const timer = setTimeout(() => setLate(true), 300);
+    return () => clearTimeout(timer);
+  }, [waiting]);
+  return late && waiting;
+}

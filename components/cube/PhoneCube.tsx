@@ -1,0 +1,151 @@
+import { useState } from 'react';
+import { View } from 'react-native';
+import { ConflictNotice } from '@/components/cube/ConflictNotice';
+import { Headline } from '@/components/cube/Headline';
+import { LivePanel } from '@/components/cube/LivePanel';
+import { LookPanel } from '@/components/cube/LookPanel';
+import { MapPanel } from '@/components/cube/MapPanel';
+import { MarkHint } from '@/components/cube/MarkHint';
+import { MarkList } from '@/components/cube/MarkList';
+import { ReadingTable } from '@/components/cube/ReadingTable';
+import { RecordPanel } from '@/components/cube/RecordPanel';
+import { RunFit } from '@/components/cube/RunFit';
+import { useSession } from '@/components/cube/session';
+import { ShellChooser } from '@/components/cube/ShellChooser';
+import { StripPanel } from '@/components/cube/StripPanel';
+import { Tools } from '@/components/cube/Tools';
+import type { RecordFit } from '@/components/cube/useRecordFit';
+import { Sheet } from '@/components/ui/Sheet';
+import { Text } from '@/components/ui/Text';
+import { layout, space } from '@/components/ui/tokens';
+import { useWide } from '@/components/ui/useWide';
+
+/** The map fills the width, the strip lies under the thumb, a sheet holds marks, fit and results. */
+export function PhoneCube({
+  record,
+  look,
+}: {
+  record: RecordFit;
+  look: { open: boolean; toggle: () => void };
+}) {
+  const { shell, live } = useSession();
+  const { width, height } = useWide();
+  const [tab, setTab] = useState('marks');
+  const lying = width > height; // a phone on its side: the sheet goes beside the map
+  const room = height - layout.topBar - layout.tabBar;
+
+  const map = (
+    <View style={lying ? { flex: 1, minHeight: 0 } : { height: Math.round(Math.min(width, room * 0.5)) }}>
+      <MapPanel round={false} />
+    </View>
+  );
+  const strip = (
+    <View>
+      <View
+        style={{
+          flexDirection: 'row',
+          alignItems: 'center',
+          justifyContent: 'space-between',
+          paddingLeft: space(3),
+          paddingRight: space(1),
+          minHeight: space(12),
+        }}
+      >
+        <Headline compact />
+        <Tools compact lookOpen={look.open} onLook={look.toggle} />
+      </View>
+      <StripPanel />
+    </View>
+  );
+  const notices = (
+    <>
+      <ConflictNotice />
+      <MarkHint />
+    </>
+  );
+  const sheet = (
+    <Sheet
+      label="Marks, fit and results"
+      tab={tab}
+      onTab={setTab}
+      aside={
+        <Text size="small" tone="quiet">
+          {live.fit ? 'live, sphere' : ''}
+        </Text>
+      }
+      tabs={[
+        {
+          key: 'marks',
+          label: 'Marks',
+          content: (
+            <>
+              {notices}
+              {shell && <ReadingTable />}
+              {shell && <MarkList />}
+              <ShellChooser />
+            </>
+          ),
+        },
+        {
+          key: 'fit',
+          label: 'Fit',
+          content: (
+            <>
+              {notices}
+              <LivePanel diagramHeight={240} />
+              <RunFit record={record} />
+            </>
+          ),
+        },
+        {
+          key: 'results',
+          label: 'Results',
+          content: shell ? (
+            <>
+              <RecordPanel record={record} />
+              {record.newest?.status !== 'queued' && record.newest?.status !== 'running' && (
+                <RunFit record={record} />
+              )}
+            </>
+          ) : (
+            <Text tone="quiet">Choose a shell under Marks; its fits of record stand here.</Text>
+          ),
+        },
+      ]}
+    />
+  );
+  const over = look.open && (
+    <View
+      style={{
+        position: 'absolute',
+        left: space(2),
+        right: space(2),
+        bottom: space(2),
+        zIndex: 3,
+        alignItems: 'center',
+      }}
+    >
+      <LookPanel onClose={look.toggle} />
+    </View>
+  );
+
+  if (lying)
+    return (
+      <View style={{ flex: 1, flexDirection: 'row', minHeight: 0 }}>
+        {map}
+        <View style={{ width: Math.max(width * 0.44, 300), minHeight: 0 }}>
+          {strip}
+          {sheet}
+        </View>
+        {over}
+      </View>
+    );
+  return (
+    <View style={{ flex: 1, minHeight: 0 }}>
+      {map}
+      {strip}
+      {sheet}
+      {over}
+    </View>
+  );
+}

@@ -1,0 +1,112 @@
+import { View } from 'react-native';
+import { useSession } from '@/components/cube/session';
+import { count } from '@/components/ui/format';
+import { Press, type PressState } from '@/components/ui/Press';
+import { SectionTitle } from '@/components/ui/Panel';
+import { Text } from '@/components/ui/Text';
+import { useTheme } from '@/components/ui/theme';
+import { hairline, radius, space, touch } from '@/components/ui/tokens';
+import type { ChannelReading } from '@/hooks/reading/skyMarks';
+import { labelOf } from '@/shared/image/ticks';
+import { formatQuantity } from '@/shared/physics/quantity';
+
+const REASONS = { 'too-few': 'too few', 'same-point': 'one point', 'straight-line': 'a line' } as const;
+
+/** My reading by channel: velocity, how many marks, the ring they make. A row shows its channel. */
+export function ReadingTable() {
+  const { live, channel, showChannel } = useSession();
+  const most = Math.max(...live.readings.map((r) => r.marks), 1);
+  return (
+    <View style={{ gap: space(1) }}>
+      <View style={{ flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' }}>
+        <SectionTitle>Your reading</SectionTitle>
+        <Text size="small" tone="quiet">
+          {live.readings.length > 0 ? 'km/s · marks · ring' : ''}
+        </Text>
+      </View>
+      <View role="list" aria-label="Your reading by channel">
+        {live.readings.map((r) => (
+          <Row
+            key={r.channel}
+            reading={r}
+            most={most}
+            current={r.channel === channel}
+            onPress={showChannel}
+          />
+        ))}
+      </View>
+      <Text size="small" tone="quiet" role="status">
+        {live.sentence}
+      </Text>
+    </View>
+  );
+}
+
+function Row(props: {
+  reading: ChannelReading;
+  most: number;
+  current: boolean;
+  onPress: (channel: number) => void;
+}) {
+  const { reading, most, current, onPress } = props;
+  const { color } = useTheme();
+  const { ring } = reading;
+  const q = ring && formatQuantity({ value: ring.theta, se: ring.se, unit: 'deg' });
+  const size = q ? `ring of ${q.spoken}` : `no ring, ${REASONS[reading.reason ?? 'too-few']}`;
+  return (
+    <View role="listitem">
+      <Press
+        onPress={() => onPress(reading.channel)}
+        aria-label={`${labelOf(reading.velocity, 1)} km/s, ${count(reading.marks, 'mark')}, ${size}`}
+        {...(current && ({ 'aria-current': 'true' } as object))}
+        style={({ hovered }: PressState) => ({
+          flexDirection: 'row',
+          alignItems: 'center',
+          minHeight: touch,
+          gap: space(2),
+          paddingHorizontal: space(2),
+          borderBottomWidth: hairline,
+          borderBottomColor: color.line,
+          backgroundColor: current || hovered ? color.selected : 'transparent',
+        })}
+      >
+        <Text mono style={{ width: space(13) }} align="right">
+          {labelOf(reading.velocity, 1)}
+        </Text>
+        <View style={{ flex: 1, flexDirection: 'row', alignItems: 'center', gap: space(1.5) }}>
+          <View style={{ flex: 1, alignItems: 'flex-end' }}>
+            <View
+              style={{
+                height: space(1.5),
+                width: `${Math.max((reading.marks / most) * 100, 6)}%`,
+                borderRadius: radius.round,
+                backgroundColor: color.person,
+              }}
+            />
+          </View>
+          <Text mono size="small" tone="quiet" style={{ minWidth: space(4) }}>
+            {reading.marks}
+          </Text>
+        </View>
+        <View
+          style={{ minWidth: space(25), flexDirection: 'row', justifyContent: 'flex-end', gap: space(1) }}
+        >
+          {q ? (
+            <>
+              <Text mono>{`${q.value}${q.error ? '' : '°'}`}</Text>
+              {q.error && (
+                <Text mono tone="quiet">
+                  {q.error}
+                </Text>
+              )}
+            </>
+          ) : (
+            <Text size="small" tone="quiet">
+              {REASONS[reading.reason ?? 'too-few']}
+            </Text>
+          )}
+        </View>
+      </Press>
+    </View>
+  );
+}

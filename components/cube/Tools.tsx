@@ -1,0 +1,70 @@
+import { View } from 'react-native';
+import { useSession } from '@/components/cube/session';
+import { zoomMap } from '@/components/cube/zoomMap';
+import { windowWords } from '@/components/cube/words';
+import { IconButton } from '@/components/ui/Button';
+import { ToggleChip } from '@/components/ui/Chip';
+import { useShowKeys } from '@/components/ui/commands/CommandsProvider';
+import { space } from '@/components/ui/tokens';
+
+/** Marking, undo, zoom and look, above the map. */
+export function Tools({
+  lookOpen,
+  onLook,
+  compact,
+}: {
+  lookOpen: boolean;
+  onLook: () => void;
+  compact?: boolean;
+}) {
+  const { markMode, setMarkMode, shell, mayMark, reading, look, axes, store } = useSession();
+  const showKeys = useShowKeys();
+  const { undo, redo, ready } = reading.state;
+  const canMark = shell !== null && mayMark;
+  const window = windowWords(look.window, axes.unit);
+  return (
+    <View
+      role="toolbar"
+      aria-label="Map"
+      style={{
+        flexDirection: 'row',
+        alignItems: 'center',
+        flexWrap: 'wrap',
+        justifyContent: 'flex-end',
+        flexShrink: 1,
+        columnGap: space(1),
+      }}
+    >
+      {canMark && (
+        <>
+          <ToggleChip label="Mark" selected={markMode} onPress={() => setMarkMode(!markMode)} />
+          <IconButton
+            icon="undo"
+            label="Undo"
+            disabled={!ready || undo.length === 0}
+            onPress={() => reading.dispatch({ type: 'undo' })}
+          />
+          <IconButton
+            icon="redo"
+            label="Redo"
+            disabled={!ready || redo.length === 0}
+            onPress={() => reading.dispatch({ type: 'redo' })}
+          />
+        </>
+      )}
+      {!compact && (
+        <>
+          <IconButton icon="minus" label="Zoom out" onPress={() => zoomMap(store, 1 / 1.5)} />
+          <IconButton icon="plus" label="Zoom in" onPress={() => zoomMap(store, 1.5)} />
+          <IconButton icon="fit" label="Whole image" onPress={() => zoomMap(store, null)} />
+        </>
+      )}
+      <ToggleChip
+        label={compact ? window : `${look.palette} · ${look.tone} · ${window}`}
+        selected={lookOpen}
+        onPress={onLook}
+      />
+      {!compact && <IconButton icon="keys" label="Keys" onPress={showKeys} />}
+    </View>
+  );
+}

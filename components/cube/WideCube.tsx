@@ -1,0 +1,100 @@
+import { ScrollView, View } from 'react-native';
+import { ConflictNotice } from '@/components/cube/ConflictNotice';
+import { Headline } from '@/components/cube/Headline';
+import { LivePanel } from '@/components/cube/LivePanel';
+import { LookPanel } from '@/components/cube/LookPanel';
+import { MapPanel } from '@/components/cube/MapPanel';
+import { MarkHint } from '@/components/cube/MarkHint';
+import { MarkList } from '@/components/cube/MarkList';
+import { ReadingTable } from '@/components/cube/ReadingTable';
+import { RecordPanel } from '@/components/cube/RecordPanel';
+import { RunFit } from '@/components/cube/RunFit';
+import { useSession } from '@/components/cube/session';
+import { ShellChooser } from '@/components/cube/ShellChooser';
+import { StripPanel } from '@/components/cube/StripPanel';
+import { Tools } from '@/components/cube/Tools';
+import type { RecordFit } from '@/components/cube/useRecordFit';
+import { Rule } from '@/components/ui/Panel';
+import { useTheme } from '@/components/ui/theme';
+import { hairline, space } from '@/components/ui/tokens';
+import { useWide } from '@/components/ui/useWide';
+
+/** Side columns: comfortable from 1180 px on, narrow below, so that the map keeps the middle. */
+const COLUMNS = { from: 1180, wide: [272, 348], narrow: [224, 276] } as const;
+
+/** Three columns: shells and reading; map over strip; diagram, parameters and results. */
+export function WideCube({
+  record,
+  look,
+}: {
+  record: RecordFit;
+  look: { open: boolean; toggle: () => void };
+}) {
+  const { shell } = useSession();
+  const { color } = useTheme();
+  const { width, height } = useWide();
+  const [left, right] = width >= COLUMNS.from ? COLUMNS.wide : COLUMNS.narrow;
+  const edge = { borderColor: color.line, backgroundColor: color.panel };
+  return (
+    <View style={{ flex: 1, flexDirection: 'row', minHeight: 0 }}>
+      <View
+        role="complementary"
+        aria-label="Shells and reading"
+        style={{ width: left, borderRightWidth: hairline, ...edge }}
+      >
+        <ScrollView contentContainerStyle={{ padding: space(3), gap: space(5) }}>
+          <ShellChooser />
+          {shell && <ReadingTable />}
+          {shell && <MarkList />}
+        </ScrollView>
+      </View>
+      <View style={{ flex: 1, minWidth: 0, padding: space(4), paddingBottom: space(2), gap: space(2) }}>
+        <View
+          style={{
+            flexDirection: 'row',
+            alignItems: 'center',
+            justifyContent: 'space-between',
+            gap: space(3),
+            zIndex: 2,
+          }}
+        >
+          <Headline compact={width < COLUMNS.from} />
+          <Tools lookOpen={look.open} onLook={look.toggle} />
+        </View>
+        <ConflictNotice />
+        <MarkHint />
+        <View style={{ flex: 1, minHeight: space(40) }}>
+          <MapPanel />
+          {look.open && (
+            <View
+              style={{
+                position: 'absolute',
+                top: space(2),
+                right: space(2),
+                left: space(2),
+                alignItems: 'flex-end',
+              }}
+            >
+              <LookPanel onClose={look.toggle} />
+            </View>
+          )}
+        </View>
+        <StripPanel />
+      </View>
+      <View
+        role="complementary"
+        aria-label="Fit"
+        style={{ width: right, borderLeftWidth: hairline, ...edge }}
+      >
+        <ScrollView style={{ flex: 1 }} contentContainerStyle={{ padding: space(3), gap: space(4) }}>
+          <LivePanel diagramHeight={Math.min(Math.max(height * 0.34, 220), 340)} />
+          {shell && <Rule />}
+          <RecordPanel record={record} />
+        </ScrollView>
+        <View style={{ padding: space(3), borderTopWidth: hairline, borderTopColor: color.line }}>
+          <RunFit record={record} />
+        </View>
+      </View>
+    </View>
+  );
+}
