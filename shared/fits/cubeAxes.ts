@@ -70,9 +70,9 @@ export function cubeAxes(header: Header, naxis: number[]): CubeAxes {
   const longitude = find((t) => systemOf(LONGITUDES, t) !== null);
   const latitude = find((t) => systemOf(LATITUDES, t) !== null);
   const spectral = find((t) => SPECTRAL.test(t));
-  const unknown = types.findIndex(
-    (t, i) => ![longitude, latitude, spectral].includes(i) && naxis[i]! > 1 && !OTHER.test(t),
-  );
+  const isKnown = (t: string) =>
+    OTHER.test(t) || SPECTRAL.test(t) || systemOf(LONGITUDES, t) !== null || systemOf(LATITUDES, t) !== null;
+  const unknown = types.findIndex((t, i) => naxis[i]! > 1 && !isKnown(t));
   if (unknown >= 0 && (longitude < 0 || latitude < 0 || spectral < 0)) {
     const card = `CTYPE${unknown + 1}`;
     throw new Problem('fits-card', `${card} = '${types[unknown]}' names no axis that can be read.`, { card });

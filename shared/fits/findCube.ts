@@ -76,7 +76,7 @@ async function firstCube(
       const head = tryDescribe(found, size, offset, n);
       if (!(head instanceof Problem)) return { head, end: found.end };
       if (hdu !== undefined || head.type !== 'fits-shape') throw head;
-      if (found.hasImage) refusal ??= head;
+      if (found.hasImage || head.extra.card === 'GROUPS') refusal ??= head;
     }
     if (!found.hasImage && n > 0) tables++;
     offset = found.end;

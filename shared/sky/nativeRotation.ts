@@ -53,7 +53,8 @@ function poleLatitude(lat0: number, phiP: number, latPole: number): number {
     .filter((d) => Math.abs(d) <= 90 + 1e-12)
     .map((d) => Math.max(-90, Math.min(90, d)));
   if (fits.length === 0) throw new WcsError('LATPOLE', `No pole fits LONPOLE = ${phiP} with CRVAL ${lat0}.`);
-  return fits.reduce((best, d) => (Math.abs(d - latPole) < Math.abs(best - latPole) ? d : best));
+  // Of two equally far from LATPOLE the second is taken, as wcslib does; the papers leave that open.
+  return fits.reduce((best, d) => (Math.abs(d - latPole) <= Math.abs(best - latPole) ? d : best));
 }
 
 /** Longitude of the native pole when the reference point lies on the native equator (equations 9 and 10). */

@@ -1,9 +1,11 @@
 import fc from 'fast-check';
 import vectors from '@/tests/reference/wcs-vectors.json';
+import mixed from '@/tests/reference/wcs-mixed.json';
 import marked from '@/tests/reference/cube-marks.json';
 import { headerBytesOf } from '@/tests/reference/headerBytes';
 import { describeCube } from '@/shared/fits/cubeHead';
 import { separation } from './greatCircle';
+import { spectralAxis } from './spectralAxis';
 import { buildWcs } from './wcs';
 import { WcsError, type WcsSpec } from './wcsSpec';
 
@@ -73,6 +75,24 @@ describe.each(vectors.headers)('$id: $kind', (header) => {
       { numRuns: 40 },
     );
   });
+});
+
+it.each(mixed.headers)('agrees with wcslib: $title', ({ cards, places }) => {
+  const { wcs: spec } = describeCube(headerBytesOf(cards));
+  const wcs = buildWcs(through(spec));
+  const { valueOf } = spectralAxis(spec.spectral);
+  for (const [x, y, channel, lon, lat, l, b, value] of places) {
+    const sky = wcs.pixelToSky(x!, y!);
+    if (lon === null || lon === undefined) expect(sky).toBeNull();
+    else {
+      expect(separation(sky!, { lon, lat: lat! })).toBeLessThan(1e-10);
+      const galactic = wcs.pixelToGalactic(x!, y!)!;
+      expect(separation({ lon: galactic.l, lat: galactic.b }, { lon: l!, lat: b! })).toBeLessThan(1e-10);
+      const back = wcs.galacticToPixel(galactic.l, galactic.b)!;
+      expect(Math.hypot(back.x - x!, back.y - y!)).toBeLessThan(1e-7);
+    }
+    if (value !== null) expect(Math.abs(valueOf(channel!) / value! - 1)).toBeLessThan(1e-12);
+  }
 });
 
 describe.each(marked.cubes)('marks on cube $name', ({ cards, marks }) => {
