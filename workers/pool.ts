@@ -1,11 +1,10 @@
 import Piscina from 'piscina';
 import path from 'node:path';
 
-/** Threads run TypeScript through tsx; the entry is found beside this file. */
-export const makePool = (maxThreads = 2) =>
+/** Threads for arithmetic, so that the process that holds the leases always has time to renew them. */
+export const makePool = (maxThreads: number) =>
   new Piscina({
-    filename: path.join(__dirname, 'thread.ts'),
-    execArgv: ['--import', 'tsx'],
+    filename: path.join(__dirname, 'thread.js'),
     minThreads: 0,
     maxThreads,
     idleTimeout: 30_000,

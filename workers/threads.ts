@@ -5,12 +5,12 @@ import { Problem, type ProblemType } from '@/shared/contract/problem';
 import type { CubeReducer } from '@/server/services/ingest';
 import type { Reduced } from '@/server/services/reduceCube';
 import type { FitSolver } from '@/server/services/runFit';
-import type { ThreadAnswer } from './thread';
+import type { ThreadAnswer } from './threadTasks';
 
 /** The value a thread found, or the problem it met, thrown as it was there. */
 function unpack<T>(answer: ThreadAnswer<T>): T {
   if ('value' in answer) return answer.value;
-  const { type, title: _, status: __, detail, ...extra } = answer.problem;
+  const { type, detail, ...extra } = answer.problem;
   throw new Problem(type.replace('/problems/', '') as ProblemType, detail, extra);
 }
 

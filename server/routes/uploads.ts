@@ -1,13 +1,10 @@
 import { randomUUID } from 'node:crypto';
-import { mkdirSync } from 'node:fs';
-import { Readable } from 'node:stream';
-import { FileStore } from '@tus/file-store';
 import { Server, type ServerOptions } from '@tus/server';
 import type { Request, Response, RequestHandler } from 'express';
 import { isProblem, Problem } from '@/shared/contract/problem';
 import { contextOf } from '../auth/requests';
-import { HeadGate } from '../files/headGate';
 import type { Parts } from '../services/context';
+import { CheckedStore } from '../services/uploadStore';
 import * as uploads from '../services/uploads';
 import { PROBLEM_TYPE, toProblem, unforeseen } from './problems';
 
@@ -17,30 +14,8 @@ type WebRequest = Parameters<NonNullable<ServerOptions['onUploadFinish']>>[0];
 const expressRequest = (req: WebRequest): Request =>
   (req as unknown as { runtime: { node: { req: Request } } }).runtime.node.req;
 
-/** Keeps incoming bytes on disk, and looks at the header of each cube as it passes. */
-class CheckedStore extends FileStore {
-  constructor(private readonly parts: Parts) {
-    super({ directory: uploads.uploadDirectory(parts) });
-  }
-
-  override async write(incoming: Readable, id: string, offset: number): Promise<number> {
-    const row = (await uploads.uploadById(this.parts, id))!;
-    const gate = new HeadGate(row.sizeBytes);
-    if (row.headChecked) gate.accepted = true;
-    else if (offset > 0) await gate.resume(uploads.uploadPath(this.parts, id), offset);
-    const received = await super.write(Readable.from(gate.pass(incoming), { objectMode: false }), id, offset);
-    if (gate.problem) {
-      await uploads.refuseUpload(this.parts, row, gate.problem);
-      throw gate.problem;
-    }
-    await uploads.noteReceived(this.parts, row, received, gate.accepted);
-    return received;
-  }
-}
-
 /** Resumable uploads by tus 1.0, in front of any body parser. */
 export function uploadHandler(parts: Parts): RequestHandler {
-  mkdirSync(uploads.uploadDirectory(parts), { recursive: true });
   const tus = new Server({
     path: UPLOADS_PATH,
     relativeLocation: true,
@@ -68,6 +43,7 @@ export function uploadHandler(parts: Parts): RequestHandler {
   });
   return async (req, res) => {
     labelProblems(res);
+    endWithCallback(res);
     await tus.handle(req, res);
     if (req.method === 'DELETE' && res.statusCode === 204)
       await uploads.cancelUpload(contextOf(req), String(req.path.split('/').pop()));
@@ -114,4 +90,14 @@ function labelProblems(res: Response) {
     }
     return writeHead(status, ...rest);
   }) as typeof res.writeHead;
+}
+
+/** The library ends an answer with a callback alone, which express-session takes for a body. */
+function endWithCallback(res: Response) {
+  const end = res.end.bind(res) as (...args: unknown[]) => Response;
+  res.end = ((...args: unknown[]) => {
+    if (typeof args[0] !== 'function') return end(...args);
+    res.once('finish', args[0] as () => void);
+    return end();
+  }) as typeof res.end;
 }
