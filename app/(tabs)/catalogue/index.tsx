@@ -1,0 +1,1 @@
+export { CataloguePage as default } from '@/components/catalogue/CataloguePage';
