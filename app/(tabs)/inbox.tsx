@@ -1,0 +1,1 @@
+export { InboxPage as default } from '@/components/inbox/InboxPage';

@@ -1,0 +1,1 @@
+export { YouPage as default } from '@/components/you/YouPage';
