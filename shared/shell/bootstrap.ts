@@ -4,7 +4,7 @@ import { centreAt, projectMarks, type Frame } from '@/shared/shell/frame';
 import { solve, workspace, type ShellProblem, type ShellState } from '@/shared/shell/gaussNewton';
 import type { MarkSet } from '@/shared/shell/markSet';
 import { naturalValues } from '@/shared/shell/naturalParameters';
-import { seededRandom, type Random } from '@/shared/shell/random';
+import { seededRandom, type Random } from '@/shared/random';
 import { EXTRA_1, EXTRA_2, LN_W, V0, X, Y } from '@/shared/shell/shellModel';
 
 export interface BootstrapOptions {

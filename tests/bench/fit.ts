@@ -3,7 +3,7 @@ import { join } from 'node:path';
 import { modelRadius } from '@/shared/shell/channelCurve';
 import { fitShell, liveFit } from '@/shared/shell/fit';
 import type { FitInput, SkyMark } from '@/shared/shell/fitInput';
-import { seededRandom } from '@/shared/shell/random';
+import { seededRandom } from '@/shared/random';
 import { destination } from '@/shared/sky/greatCircle';
 
 const SHELL = { theta: 2, vSys: -40, vExp: 15 };

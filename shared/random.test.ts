@@ -1,4 +1,4 @@
-import { seededRandom, xoshiro128 } from '@/shared/shell/random';
+import { seededRandom, xoshiro128 } from '@/shared/random';
 
 test('xoshiro128** from the state 1, 2, 3, 4', () => {
   const next = xoshiro128(Uint32Array.of(1, 2, 3, 4));

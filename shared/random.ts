@@ -1,4 +1,4 @@
-/** Random numbers from one seed, the same on every run: the generator and the distributions the bootstrap draws from. */
+/** Random numbers from one seed, the same on every run: a generator and the distributions that are drawn from it. */
 export interface Random {
   /** Uniform in [0, 1), 32 bits. */
   uniform(): number;
