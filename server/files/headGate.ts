@@ -1,14 +1,11 @@
 import { open } from 'node:fs/promises';
 import { isProblem, type Problem } from '@/shared/contract/problem';
-import type { ByteSource } from './byteSource';
-import { readCubeHead } from './cubeHead';
+import { checkBeginning } from '@/shared/fits/findCube';
 
 /** How much of a refused file is still taken in, so that the answer reaches a client in the middle of sending. */
 const DRAIN_BYTES = 32 * 2 ** 20;
 /** A header that is not over by then is judged when the file is complete. */
 const MOST_HEAD_BYTES = 8 * 2 ** 20;
-
-class NotYet extends Error {}
 
 /**
  * Judges the header of a cube while its first bytes pass by, so that a file that cannot work is refused before the
@@ -58,23 +55,13 @@ export class HeadGate {
     // a long header is looked at each time it has doubled, not for every packet
     if (this.length < this.nextTry && this.length < this.fileSize) return;
     this.nextTry = this.length * 2;
-    const bytes = Buffer.concat(this.seen);
-    const source: ByteSource = {
-      size: this.fileSize,
-      read: async (offset, length) => {
-        const end = Math.min(offset + length, this.fileSize);
-        if (end > bytes.length) throw new NotYet();
-        return bytes.subarray(offset, end);
-      },
-      close: async () => undefined,
-    };
     try {
-      await readCubeHead(source);
+      if (!(await checkBeginning(Buffer.concat(this.seen), this.fileSize))) return;
       this.accepted = true;
       this.seen = [];
     } catch (error) {
-      if (isProblem(error)) this.problem = error;
-      else if (!(error instanceof NotYet)) throw error;
+      if (!isProblem(error)) throw error;
+      this.problem = error;
     }
   }
 }

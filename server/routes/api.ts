@@ -28,7 +28,13 @@ const channelOf = (req: Request) =>
 /** Every JSON route: parse by the contract, call a service, shape the answer. */
 export function apiRoutes(): Router {
   const api = Router();
-  api.use(express.json({ limit: '8mb' }));
+  api.use(
+    (req, _res, next) => {
+      contextOf(req); // nobody learns what a body should look like before signing in
+      next();
+    },
+    express.json({ limit: '8mb' }),
+  );
 
   api.get('/me', (req, res) => {
     const { actor } = contextOf(req);

@@ -1,3 +1,4 @@
+import { Problem } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
 import { quantise } from '@/shared/image/quantise';
 import { buildWcs } from '@/shared/sky/wcs';
@@ -7,6 +8,8 @@ import type { Reduced } from './reduceCube';
 import { brightnessWindow, stripPicture, thumbnail, type SmallCube } from './thumbnails';
 
 export interface Assembled {
+  /** The head with what only the pixels could tell added to its cautions. */
+  head: CubeHead;
   statistics: CubeStatistics;
   window: [number, number];
   channels: ChannelDraft[];
@@ -16,6 +19,7 @@ export interface Assembled {
 /** Put together what the threads found: statistics and thumbnail of each channel, spectrum, total intensity. */
 export async function assemble(head: CubeHead, parts: Reduced[], signal: AbortSignal): Promise<Assembled> {
   const reduced = [...parts].sort((a, b) => a.from - b.from);
+  refuseBlank(reduced);
   const wcs = buildWcs(head.wcs);
   const small = joinSmall(reduced, head.shape.channels);
   const window = brightnessWindow(small);
@@ -37,6 +41,7 @@ export async function assemble(head: CubeHead, parts: Reduced[], signal: AbortSi
   }
   const strip = await stripPicture(small, window);
   return {
+    head: withCautions(head, reduced),
     statistics: overall(channels),
     window,
     channels,
@@ -46,6 +51,21 @@ export async function assemble(head: CubeHead, parts: Reduced[], signal: AbortSi
       meanSpectrum(channels),
     ],
   };
+}
+
+function refuseBlank(reduced: Reduced[]) {
+  if (reduced.every((r) => r.statistics.every((s) => s.min === null)))
+    throw new Problem(
+      'fits-shape',
+      'Every pixel of this cube is blank. Look at BLANK, BSCALE and BZERO in the file, or send the cube that holds the emission.',
+    );
+}
+
+function withCautions(head: CubeHead, reduced: Reduced[]): CubeHead {
+  const infinite = reduced.reduce((n, r) => n + r.infinite, 0);
+  if (infinite === 0) return head;
+  const caution = `${infinite} pixels are infinite in the file; they count as blank.`;
+  return { ...head, cautions: [...head.cautions, caution] };
 }
 
 function joinSmall(reduced: Reduced[], channels: number): SmallCube {

@@ -25,6 +25,8 @@ export interface Reduced {
   /** Sum over these channels of what is not blank, and how many that were, for each pixel of the sky. */
   sum: Float64Array;
   count: Uint32Array;
+  /** Pixels that the file gives as infinite; they count as blank. */
+  infinite: number;
 }
 
 /** Read some channels once and take from each plane all that ingest needs of it. Runs in a thread of its own. */
@@ -41,10 +43,11 @@ export async function reduceChannels(task: ReduceTask, onChannel: () => void): P
     smallShape,
     sum: new Float64Array(nx * ny),
     count: new Uint32Array(nx * ny),
+    infinite: 0,
   };
   const scratch = new Float64Array(nx * ny);
   try {
-    for await (const { channel, values } of readPlanes(source, head, { from, to })) {
+    for await (const { channel, values, infinite } of readPlanes(source, head, { from, to })) {
       const plane = values as Float32Array;
       result.statistics.push(planeStatistics(plane, scratch));
       result.small.set(
@@ -52,6 +55,7 @@ export async function reduceChannels(task: ReduceTask, onChannel: () => void): P
         (channel - from) * smallShape.nx * smallShape.ny,
       );
       addTo(result, plane);
+      result.infinite += infinite;
       onChannel();
     }
   } finally {
