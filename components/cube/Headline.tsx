@@ -8,18 +8,27 @@ import { labelOf } from '@/shared/image/ticks';
 export function Headline({ compact }: { compact?: boolean }) {
   const { velocity, channel, axes } = useSession();
   return (
-    <View style={{ flexDirection: 'row', alignItems: 'baseline', gap: space(2), flexShrink: 0 }}>
+    <View
+      style={{
+        flexDirection: 'row',
+        alignItems: compact ? 'baseline' : 'center',
+        gap: space(2),
+        flexShrink: 0,
+      }}
+    >
       <Text mono size={compact ? 'title' : 'display'} numberOfLines={1}>
         {labelOf(velocity, 1)}
       </Text>
-      <Text mono size="small" tone="quiet">
-        km/s
-      </Text>
-      {!compact && (
-        <Text mono size="small" tone="quiet" numberOfLines={1}>
-          {`channel ${channel + 1} of ${axes.channels}`}
+      <View>
+        <Text mono size="small" tone={compact ? 'quiet' : 'text'}>
+          km/s
         </Text>
-      )}
+        {!compact && (
+          <Text mono size="small" tone="quiet" numberOfLines={1}>
+            {`channel ${channel + 1} of ${axes.channels}`}
+          </Text>
+        )}
+      </View>
     </View>
   );
 }

@@ -10,6 +10,7 @@ import { ParameterName, Quantity } from '@/components/ui/Quantity';
 import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { hairline, space } from '@/components/ui/tokens';
+import type { FitResult } from '@/shared/shell/fitResult';
 import { separation } from '@/shared/sky/greatCircle';
 
 const SHOWN = ['l', 'b', 'theta', 'vSys', 'vExp'] as const;
@@ -26,13 +27,13 @@ const TITLES: Record<string, string> = {
 /** The fit as the marks stand: diagram, parameters, and what limits them beside them. */
 export function LivePanel({
   diagramHeight = 300,
-  diagram = true,
+  numbersFirst,
 }: {
   diagramHeight?: number;
-  diagram?: boolean;
+  /** Where little is seen at once, the numbers come before the diagram. */
+  numbersFirst?: boolean;
 }) {
   const { live, model, axes, velocity, shell, showChannel } = useSession();
-  const { color } = useTheme();
   const [width, setWidth] = useState(0);
   const { fit } = live;
 
@@ -50,6 +51,18 @@ export function LivePanel({
     const errorAt = radiusErrorOf(fit);
     return { theta: model.theta, vSys: model.vSys, vExp: model.vExp, ...(errorAt && { errorAt }) };
   }, [model, fit]);
+  // Few rings would make an axis of their own; the cube's range shows where they stand.
+  const domain = useMemo(
+    () =>
+      shown || rings.length > 2
+        ? undefined
+        : {
+            velocity: [Math.min(...axes.spectral.velocities), Math.max(...axes.spectral.velocities)] as const,
+            radius: Math.max(...rings.map((r) => r.theta), 1e-6) * 1.5,
+            residual: 1,
+          },
+    [shown, rings, axes],
+  );
   const points = useMemo(() => {
     if (!model) return [];
     const centre = { lon: model.l, lat: model.b };
@@ -59,66 +72,42 @@ export function LivePanel({
     }));
   }, [model, live]);
 
-  return (
-    <View style={{ gap: space(2) }} onLayout={(e) => setWidth(Math.floor(e.nativeEvent.layout.width))}>
-      {diagram && (
-        <>
-          <View style={{ flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' }}>
-            <SectionTitle>Radius–velocity</SectionTitle>
-            <Text size="small" tone="quiet">
-              {fit ? 'live fit, sphere' : ''}
+  const drawing = (
+    <>
+      <View style={{ flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' }}>
+        <SectionTitle>Radius–velocity</SectionTitle>
+        <Text size="small" tone="quiet">
+          {fit ? 'live fit, sphere' : ''}
+        </Text>
+      </View>
+      <View style={{ height: diagramHeight }}>
+        {width > 0 && (rings.length > 0 || shown) ? (
+          <RadiusVelocity
+            width={width}
+            height={diagramHeight}
+            rings={rings}
+            model={shown}
+            points={points}
+            channelWidth={axes.spectral.channelWidth}
+            current={velocity}
+            domain={domain}
+            name={shell?.name ?? 'this shell'}
+            onPick={(ring) => ring.channel !== null && showChannel(ring.channel)}
+          />
+        ) : (
+          <View style={{ flex: 1, alignItems: 'center', justifyContent: 'center', padding: space(4) }}>
+            <Text tone="quiet" align="center">
+              Rings appear here from three marks on a channel, the fit from six marks on three channels.
             </Text>
           </View>
-          <View style={{ height: diagramHeight }}>
-            {width > 0 && (rings.length > 0 || shown) ? (
-              <RadiusVelocity
-                width={width}
-                height={diagramHeight}
-                rings={rings}
-                model={shown}
-                points={points}
-                channelWidth={axes.spectral.channelWidth}
-                current={velocity}
-                name={shell?.name ?? 'this shell'}
-                onPick={(ring) => ring.channel !== null && showChannel(ring.channel)}
-              />
-            ) : (
-              <View style={{ flex: 1, alignItems: 'center', justifyContent: 'center', padding: space(4) }}>
-                <Text tone="quiet" align="center">
-                  Rings appear here from three marks on a channel, the fit from six marks on three channels.
-                </Text>
-              </View>
-            )}
-          </View>
-        </>
-      )}
-      {fit && (
-        <View role="list" aria-label="Parameters of the live fit">
-          {SHOWN.map((name) => (
-            <View
-              key={name}
-              role="listitem"
-              style={{
-                flexDirection: 'row',
-                alignItems: 'center',
-                justifyContent: 'space-between',
-                minHeight: space(9),
-                gap: space(3),
-                paddingHorizontal: space(2),
-                borderBottomWidth: hairline,
-                borderBottomColor: color.line,
-              }}
-            >
-              {name === 'l' || name === 'b' ? (
-                <Text>{`Centre ${name}`}</Text>
-              ) : (
-                <ParameterName name={name} long />
-              )}
-              <Quantity quantity={fit.parameters[name]} align="right" />
-            </View>
-          ))}
-        </View>
-      )}
+        )}
+      </View>
+    </>
+  );
+  return (
+    <View style={{ gap: space(2) }} onLayout={(e) => setWidth(Math.floor(e.nativeEvent.layout.width))}>
+      {!numbersFirst && drawing}
+      {fit && <LiveParameters fit={fit} />}
       {fit?.warnings.map((w) => (
         <Notice key={w.code} kind="person" title={TITLES[w.code] ?? 'Caution'}>
           <Text size="small">{w.message}</Text>
@@ -129,7 +118,38 @@ export function LivePanel({
           <Text size="small">{live.problem.detail}</Text>
         </Notice>
       )}
-      {!fit && !live.problem && !diagram && <Text tone="quiet">{live.sentence}</Text>}
+      {numbersFirst && drawing}
+    </View>
+  );
+}
+
+function LiveParameters({ fit }: { fit: FitResult }) {
+  const { color } = useTheme();
+  return (
+    <View role="list" aria-label="Parameters of the live fit">
+      {SHOWN.map((name) => (
+        <View
+          key={name}
+          role="listitem"
+          style={{
+            flexDirection: 'row',
+            alignItems: 'center',
+            justifyContent: 'space-between',
+            minHeight: space(9),
+            gap: space(3),
+            paddingHorizontal: space(2),
+            borderBottomWidth: hairline,
+            borderBottomColor: color.line,
+          }}
+        >
+          {name === 'l' || name === 'b' ? (
+            <Text>{`Centre ${name}`}</Text>
+          ) : (
+            <ParameterName name={name} long />
+          )}
+          <Quantity quantity={fit.parameters[name]} align="right" />
+        </View>
+      ))}
     </View>
   );
 }

@@ -35,7 +35,7 @@ export function PhoneCube({
   const room = height - layout.topBar - layout.tabBar;
 
   const map = (
-    <View style={lying ? { flex: 1, minHeight: 0 } : { height: Math.round(Math.min(width, room * 0.5)) }}>
+    <View style={lying ? { flex: 1, minHeight: 0 } : { height: Math.round(Math.min(width, room * 0.54)) }}>
       <MapPanel round={false} />
     </View>
   );
@@ -92,7 +92,7 @@ export function PhoneCube({
           content: (
             <>
               {notices}
-              <LivePanel diagramHeight={240} />
+              <LivePanel diagramHeight={240} numbersFirst />
               <RunFit record={record} />
             </>
           ),

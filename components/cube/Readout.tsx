@@ -37,7 +37,7 @@ export function Readout() {
         paddingHorizontal: space(2),
         paddingVertical: space(1),
         borderRadius: radius.small,
-        backgroundColor: color.imageShade,
+        backgroundColor: color.image,
         alignItems: 'flex-end',
       }}
     >

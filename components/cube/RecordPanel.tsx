@@ -1,4 +1,5 @@
 import { View } from 'react-native';
+import { isDone } from '@/components/fit/fitFacts';
 import { RecordResults } from '@/components/cube/RecordResults';
 import { useSession } from '@/components/cube/session';
 import type { RecordFit } from '@/components/cube/useRecordFit';
@@ -67,7 +68,7 @@ export function RecordPanel({ record }: { record: RecordFit }) {
           <Button label="Run it again" icon="retry" busy={busy} onPress={() => void record.retry()} />
         </View>
       )}
-      {newest?.status === 'done' && (
+      {newest && isDone(newest) && (
         <>
           <Text size="small" tone="quiet">
             {`${newest.createdBy?.name ?? 'Someone'}, ${moment(newest.finishedAt ?? newest.createdAt)}`}

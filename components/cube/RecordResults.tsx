@@ -1,60 +1,26 @@
 import { useState } from 'react';
 import { View } from 'react-native';
+import { byLargest, type DoneFit } from '@/components/fit/fitFacts';
+import { ParameterRows } from '@/components/fit/FitReport';
 import { useSession } from '@/components/cube/session';
 import { Button } from '@/components/ui/Button';
 import { Press, type PressState } from '@/components/ui/Press';
 import { Notice } from '@/components/ui/ProblemNotice';
-import { Figure, ParameterName, Quantity } from '@/components/ui/Quantity';
 import { SectionTitle } from '@/components/ui/Panel';
 import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { hairline, space, touch } from '@/components/ui/tokens';
 import { useFitMarks } from '@/hooks/useFits';
-import type { Fit } from '@/shared/contract/fits';
 import { labelOf } from '@/shared/image/ticks';
 
-const NAMES = ['l', 'b', 'theta', 'vSys', 'vExp'];
 const FIRST = 6;
 
 /** A fit of record beside the map: numbers, warnings, and the marks it fits worst, each a way to its place. */
-export function RecordResults({ fit }: { fit: Fit }) {
-  const { color } = useTheme();
-  const names = [...NAMES, ...Object.keys(fit.parameters ?? {}).filter((n) => !NAMES.includes(n))];
+export function RecordResults({ fit }: { fit: DoneFit }) {
   return (
     <View style={{ gap: space(3) }}>
-      <View role="list" aria-label="Parameters of the fit of record">
-        {names.map((name) => (
-          <View
-            key={name}
-            role="listitem"
-            style={{
-              flexDirection: 'row',
-              alignItems: 'center',
-              justifyContent: 'space-between',
-              minHeight: space(9),
-              gap: space(3),
-              paddingHorizontal: space(2),
-              borderBottomWidth: hairline,
-              borderBottomColor: color.line,
-            }}
-          >
-            {name === 'l' || name === 'b' ? (
-              <Text>{`Centre ${name}`}</Text>
-            ) : (
-              <ParameterName name={name} long />
-            )}
-            <Quantity quantity={fit.parameters?.[name]} align="right" />
-          </View>
-        ))}
-        <View
-          role="listitem"
-          style={{ flexDirection: 'row', justifyContent: 'space-between', padding: space(2) }}
-        >
-          <Text tone="quiet">χ² / degrees of freedom</Text>
-          <Figure value={`${labelOf(fit.chi2 ?? NaN, 1)} / ${fit.dof ?? '–'}`} />
-        </View>
-      </View>
-      {fit.warnings?.map((w) => (
+      <ParameterRows fit={fit} />
+      {fit.warnings.map((w) => (
         <Notice key={w.code} kind="person">
           <Text size="small">{w.message}</Text>
         </Notice>
@@ -65,12 +31,12 @@ export function RecordResults({ fit }: { fit: Fit }) {
 }
 
 /** Largest first; a press shows the mark where it lies. */
-function Residuals({ fit }: { fit: Fit }) {
+function Residuals({ fit }: { fit: DoneFit }) {
   const { showPlace } = useSession();
   const { color } = useTheme();
   const { data } = useFitMarks(fit.id);
   const [all, setAll] = useState(false);
-  const sorted = [...(fit.residuals ?? [])].sort((a, b) => Math.abs(b.degrees) - Math.abs(a.degrees));
+  const sorted = byLargest(fit);
   const shown = all ? sorted : sorted.slice(0, FIRST);
   return (
     <View>

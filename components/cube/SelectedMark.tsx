@@ -25,7 +25,7 @@ export function SelectedMark() {
         alignItems: 'center',
         paddingLeft: space(3),
         borderRadius: radius.small,
-        backgroundColor: color.imageShade,
+        backgroundColor: color.image,
       }}
     >
       <View>

@@ -12,10 +12,14 @@ export function Tools({
   lookOpen,
   onLook,
   compact,
+  roomy,
 }: {
   lookOpen: boolean;
   onLook: () => void;
+  /** Without the buttons that pinching and keys replace. */
   compact?: boolean;
+  /** Room for palette and tone beside the window. */
+  roomy?: boolean;
 }) {
   const { markMode, setMarkMode, shell, mayMark, reading, look, axes, store } = useSession();
   const showKeys = useShowKeys();
@@ -60,7 +64,7 @@ export function Tools({
         </>
       )}
       <ToggleChip
-        label={compact ? window : `${look.palette} · ${look.tone} · ${window}`}
+        label={roomy ? `${look.palette} · ${look.tone} · ${window}` : window}
         selected={lookOpen}
         onPress={onLook}
       />

@@ -20,7 +20,7 @@ import { hairline, space } from '@/components/ui/tokens';
 import { useWide } from '@/components/ui/useWide';
 
 /** Side columns: comfortable from 1180 px on, narrow below, so that the map keeps the middle. */
-const COLUMNS = { from: 1180, wide: [272, 348], narrow: [224, 276] } as const;
+const COLUMNS = { from: 1180, roomy: 1380, wide: [272, 348], narrow: [224, 276] } as const;
 
 /** Three columns: shells and reading; map over strip; diagram, parameters and results. */
 export function WideCube({
@@ -59,7 +59,7 @@ export function WideCube({
           }}
         >
           <Headline compact={width < COLUMNS.from} />
-          <Tools lookOpen={look.open} onLook={look.toggle} />
+          <Tools lookOpen={look.open} onLook={look.toggle} roomy={width >= COLUMNS.roomy} />
         </View>
         <ConflictNotice />
         <MarkHint />

@@ -1,7 +1,7 @@
 // Where there is no pointer (native, tests); the web build takes WindowSlider.web.tsx.
 import { View } from 'react-native';
 import { brightness } from '@/components/cube/words';
-import type { TrackRange } from '@/components/cube/windowScale';
+import { ENDS, type TrackRange } from '@/components/cube/windowScale';
 
 export interface WindowSliderProps {
   window: readonly [number, number];
@@ -11,8 +11,6 @@ export interface WindowSliderProps {
   gradient: string;
   onChange: (window: [number, number]) => void;
 }
-
-export const ENDS = ['Dark end', 'Bright end'] as const;
 
 export function WindowSlider({ window, unit }: WindowSliderProps) {
   return (

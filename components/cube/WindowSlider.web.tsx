@@ -1,6 +1,6 @@
 import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
-import { movedEnd, shareOf } from '@/components/cube/windowScale';
-import { ENDS, type WindowSliderProps } from '@/components/cube/WindowSlider';
+import { ENDS, movedEnd, shareOf } from '@/components/cube/windowScale';
+import type { WindowSliderProps } from '@/components/cube/WindowSlider';
 import { brightness } from '@/components/cube/words';
 import { useTheme } from '@/components/ui/theme';
 import { radius, touch } from '@/components/ui/tokens';

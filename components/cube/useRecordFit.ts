@@ -57,7 +57,9 @@ export function useRecordFit(s: CubeSession): RecordFit {
           ? 'A fit is under way.'
           : live.fit
             ? null
-            : live.sentence;
+            : live.problem
+              ? live.problem.title
+              : 'It needs six marks on three channels.';
 
   return {
     newest,

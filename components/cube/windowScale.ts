@@ -37,3 +37,6 @@ export function movedEnd(
   if (end === 0) return [valueAt(range, Math.min(share, high - gap)), window[1]];
   return [window[0], valueAt(range, Math.max(share, low + gap))];
 }
+
+/** What the two handles are called. */
+export const ENDS = ['Dark end', 'Bright end'] as const;

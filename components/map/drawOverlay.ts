@@ -165,6 +165,9 @@ function drawLabels(
   }
 }
 
+/** Labels of longitudes stand along the lower edge; the beam stays above them. */
+const LABEL_ROOM = 32;
+
 function drawBeam(
   ctx: CanvasRenderingContext2D,
   outline: readonly ImagePoint[],
@@ -176,7 +179,7 @@ function drawBeam(
   const rect = imageRect(v);
   const right = Math.min(v.width, rect.left + rect.width);
   const below = Math.min(v.height, rect.top + rect.height);
-  const [sx, sy] = [right - reach - 12, below - reach - 12];
+  const [sx, sy] = [right - reach - 12, below - reach - LABEL_ROOM];
   ctx.beginPath();
   outline.forEach((p, i) => {
     const [x, y] = [sx + p.x * v.scale, sy - p.y * v.scale];

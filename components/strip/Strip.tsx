@@ -2,7 +2,7 @@
 import { View } from 'react-native';
 import type { StripPicture } from '@/components/strip/drawStrip';
 import type { StripOrder } from '@/components/strip/stripOrder';
-import { labelOf } from '@/shared/image/ticks';
+import { stripText } from '@/components/strip/stripText';
 
 export interface StripProps {
   order: StripOrder;
@@ -12,18 +12,6 @@ export interface StripProps {
   spectrum: readonly (number | null)[];
   marks: ReadonlyMap<number, number>;
   span: { low: number; middle: number; high: number } | null;
-}
-
-/** What the slider says of itself: "−42.2 km/s, channel 20 of 48". */
-export function stripText({
-  order,
-  channel,
-  marks,
-}: Pick<StripProps, 'order' | 'channel' | 'marks'>): string {
-  const velocity = order.velocities[order.positions[channel] ?? 0] ?? 0;
-  const count = marks.get(channel) ?? 0;
-  const own = count > 0 ? `, ${count} mark${count === 1 ? '' : 's'}` : '';
-  return `${labelOf(velocity, 1)} km/s, channel ${channel + 1} of ${order.channels.length}${own}`;
 }
 
 export function Strip(props: StripProps) {

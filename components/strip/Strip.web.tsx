@@ -8,8 +8,9 @@ import {
   type KeyboardEvent,
 } from 'react';
 import { drawStrip, STRIP_HEIGHT, type StripColours } from '@/components/strip/drawStrip';
-import { stripText, type StripProps } from '@/components/strip/Strip';
+import type { StripProps } from '@/components/strip/Strip';
 import { held, stripLayout } from '@/components/strip/stripLayout';
+import { stripText } from '@/components/strip/stripText';
 import { useStripDrag } from '@/components/strip/useStripDrag';
 import { useTheme } from '@/components/ui/theme';
 import { fonts, typeScale } from '@/components/ui/tokens';

@@ -1,0 +1,14 @@
+import type { StripProps } from '@/components/strip/Strip';
+import { labelOf } from '@/shared/image/ticks';
+
+/** What the slider says of itself: "−42.2 km/s, channel 20 of 48". */
+export function stripText({
+  order,
+  channel,
+  marks,
+}: Pick<StripProps, 'order' | 'channel' | 'marks'>): string {
+  const velocity = order.velocities[order.positions[channel] ?? 0] ?? 0;
+  const count = marks.get(channel) ?? 0;
+  const own = count > 0 ? `, ${count} mark${count === 1 ? '' : 's'}` : '';
+  return `${labelOf(velocity, 1)} km/s, channel ${channel + 1} of ${order.channels.length}${own}`;
+}
