@@ -11,6 +11,7 @@ export default function NotFound() {
     <View role="main" style={{ flex: 1, justifyContent: 'center', backgroundColor: color.ground }}>
       <EmptyState
         icon="search"
+        level={1}
         title="There is no such page"
         action={<Button kind="primary" label="To the regions" href="/regions" />}
       >

@@ -46,7 +46,7 @@ export function PickBar({ picked, onClear }: { picked: readonly Shell[]; onClear
             <Text>
               Δ<ParameterName name={key} />
             </Text>
-            <Text mono>{sigma.toFixed(1)}σ</Text>
+            <Text mono>{sigma > 99 ? '> 99' : sigma.toFixed(1)}σ</Text>
           </View>
         ))}
         <View style={{ flexDirection: 'row', gap: space(2) }}>

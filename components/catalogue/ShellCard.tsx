@@ -57,7 +57,6 @@ export function ShellCard({
         </View>
         <Press
           href={`/shells/${shell.id}`}
-          aria-label={`Open ${shell.name}`}
           style={{ flex: 1, minHeight: touch + space(3), justifyContent: 'center' }}
         >
           <Text weight="semibold" numberOfLines={1}>

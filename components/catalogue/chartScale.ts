@@ -83,18 +83,29 @@ export interface AgeLine {
   points: { x: number; y: number }[];
 }
 
-const AGES = [0.1, 0.3, 1, 3, 10, 30, 100];
+/** Round ages, fewest first: the first series that puts at least two lines on the chart is taken. */
+const SERIES = [
+  [0.1, 1, 10, 100],
+  [0.1, 0.3, 1, 3, 10, 30, 100],
+  [0.1, 0.2, 0.3, 0.5, 0.7, 1, 1.5, 2, 3, 4, 5, 7, 10, 15, 20, 30, 50, 70, 100],
+];
 
-/** Lines of constant age = factor · R / v_exp, cut to the axes; straight lines of slope one on logarithmic axes. */
+/**
+ * Lines of constant age = factor · R / v_exp, cut to the axes: straight, of slope one, on logarithmic axes. The middle
+ * point is where the label goes.
+ */
 export function ageLines(domain: ChartDomain, factor: number): AgeLine[] {
+  const [few, more, many] = SERIES.map((ages) => ages.flatMap((age) => ageLine(domain, factor, age)));
+  return few!.length >= 3 ? few! : more!.length >= 2 ? more! : many!;
+}
+
+function ageLine(domain: ChartDomain, factor: number, age: number): AgeLine[] {
   // Myr of 1 pc at 1 km/s: the unit conversion lives in one place
   const perUnit = kinematicAge({ value: 1, se: 0 }, { value: 1, se: 0 }, { factor })!.value;
-  const lines = AGES.flatMap((age): AgeLine[] => {
-    const radiusAt = (v: number) => (v * age) / perUnit;
-    const x0 = Math.max(domain.x[0], radiusAt(domain.y[0]));
-    const x1 = Math.min(domain.x[1], radiusAt(domain.y[1]));
-    if (!(x1 > x0 * 1.2)) return [];
-    return [{ age, points: [x0, x1].map((x) => ({ x, y: (perUnit * x) / age })) }];
-  });
-  return lines;
+  const radiusAt = (v: number) => (v * age) / perUnit;
+  const x0 = Math.max(domain.x[0], radiusAt(domain.y[0]));
+  const x1 = Math.min(domain.x[1], radiusAt(domain.y[1]));
+  if (!(x1 > x0 * 1.3)) return [];
+  const label = x0 * (x1 / x0) ** 0.88;
+  return [{ age, points: [x0, label, x1].map((x) => ({ x, y: (perUnit * x) / age })) }];
 }

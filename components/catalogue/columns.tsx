@@ -5,7 +5,7 @@ import { StatusChip } from '../ui/Chip';
 import { Press, type PressState } from '../ui/Press';
 import { Quantity } from '../ui/Quantity';
 import { HeadText, type Column } from '../ui/Table';
-import { Sub, Text } from '../ui/Text';
+import { HiddenText, Sub, Text } from '../ui/Text';
 import { space, touch } from '../ui/tokens';
 import type { SortKey } from './filters';
 import { Glyph } from './glyphs';
@@ -53,7 +53,7 @@ export function catalogueColumns({
     {
       key: 'pick',
       label: 'Compare',
-      head: <View />,
+      head: <HiddenText>Compare</HiddenText>,
       width: touch,
       grow: 0,
       cell: (s) => (
@@ -68,13 +68,12 @@ export function catalogueColumns({
     {
       key: 'designation',
       label: 'Shell',
-      width: space(34),
+      width: space(31),
       grow: 2,
       sortable: true,
       cell: (s) => (
         <Press
           href={`/shells/${s.id}`}
-          aria-label={`${s.name}, ${s.designation ?? 'no designation'}`}
           style={({ hovered }: PressState) => ({
             minHeight: touch,
             justifyContent: 'center',
@@ -94,7 +93,7 @@ export function catalogueColumns({
     {
       key: 'region',
       label: 'Region',
-      width: space(28),
+      width: space(24),
       grow: 1,
       sortable: true,
       cell: (s) => (
@@ -106,16 +105,16 @@ export function catalogueColumns({
         </View>
       ),
     },
-    number('theta', 'Θ, °', 27),
-    number('radius', 'R, pc', 23),
-    number('vSys', 'v sys, km/s', 27, indexed('v', 'sys', 'km/s')),
-    number('vExp', 'v exp, km/s', 26, indexed('v', 'exp', 'km/s')),
-    number('age', `age ${ageFactor} R/v, Myr`, 29, <HeadText>{`${ageFactor} R/v, Myr`}</HeadText>),
+    number('theta', 'Θ, °', 29),
+    number('radius', 'R, pc', 22),
+    number('vSys', 'v sys, km/s', 29, indexed('v', 'sys', 'km/s')),
+    number('vExp', 'v exp, km/s', 28, indexed('v', 'exp', 'km/s')),
+    number('age', `age ${ageFactor} R/v, Myr`, 26, <HeadText>{`${ageFactor} R/v, Myr`}</HeadText>),
     {
       key: 'quality',
       label: 'χ²/dof',
       align: 'right',
-      width: space(16),
+      width: space(15),
       sortable: true,
       cell: (s) => (
         <Text mono size="small">
@@ -127,7 +126,7 @@ export function catalogueColumns({
       key: 'status',
       label: 'Status',
       align: 'right',
-      width: space(25),
+      width: space(24),
       sortable: true,
       cell: (s) => <StatusChip status={s.status} />,
     },

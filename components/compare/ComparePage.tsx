@@ -82,11 +82,7 @@ function SideBySide({ compared }: { compared: readonly Compared[] }) {
           <Panel
             key={shell.id}
             title={
-              <Press
-                href={`/shells/${shell.id}`}
-                aria-label={`Open ${shell.name}`}
-                style={{ minHeight: touch, justifyContent: 'center' }}
-              >
+              <Press href={`/shells/${shell.id}`} style={{ minHeight: touch, justifyContent: 'center' }}>
                 <Text heading={2} size="lead" weight="semibold">
                   {shell.name}
                 </Text>
@@ -164,8 +160,9 @@ function ParameterTable({ compared }: { compared: readonly Compared[] }) {
             align: 'right' as const,
             width: space(28),
             cell: (r: Row) => {
-              const sigma = inSigma(r.of(a.shell), r.of(b.shell));
-              return <Text mono>{sigma === null ? '–' : `${sigma.toFixed(1)}σ`}</Text>;
+              // two places on the sky are not two measurements of one thing
+              const sigma = r.key === 'l' || r.key === 'b' ? null : inSigma(r.of(a.shell), r.of(b.shell));
+              return <Text mono>{sigma === null ? '–' : sigma > 99 ? '> 99σ' : `${sigma.toFixed(1)}σ`}</Text>;
             },
           },
         ]

@@ -3,7 +3,7 @@ import { decimals } from '../ui/format';
 import { Panel } from '../ui/Panel';
 import { ParameterName } from '../ui/Quantity';
 import { Table, type Column } from '../ui/Table';
-import { Text } from '../ui/Text';
+import { HiddenText, Text } from '../ui/Text';
 import { space } from '../ui/tokens';
 
 /** Which parameters go together; strong ones stand out by weight, not by colour alone. */
@@ -13,7 +13,7 @@ export function CorrelationTable({ correlation }: { correlation: FitOutcome['cor
     {
       key: 'name',
       label: 'Parameter',
-      head: <Text> </Text>,
+      head: <HiddenText>Parameter</HiddenText>,
       width: space(16),
       cell: (n) => <ParameterName name={n} />,
     },

@@ -110,7 +110,6 @@ function FitRow({ fit, shown, onShow }: { fit: Fit; shown: boolean; onShow: () =
         <Press
           onPress={onShow}
           disabled={fit.status !== 'done'}
-          aria-label={`Show the fit by ${fit.createdBy?.name ?? 'somebody'}, ${ago(fit.createdAt)}`}
           aria-pressed={shown}
           style={({ hovered }: PressState) => ({
             flex: 1,

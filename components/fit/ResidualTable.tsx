@@ -6,7 +6,7 @@ import { decimals } from '../ui/format';
 import { Panel } from '../ui/Panel';
 import { Press, type PressState } from '../ui/Press';
 import { Table, type Column } from '../ui/Table';
-import { Text } from '../ui/Text';
+import { HiddenText, Text } from '../ui/Text';
 import { useTheme } from '../ui/theme';
 import { radius, space, touch } from '../ui/tokens';
 import { byLargest, type DoneFit } from './fitFacts';
@@ -38,7 +38,7 @@ export function ResidualTable({ fit }: { fit: DoneFit }) {
         return (
           <Press
             href={`/cubes/${fit.cubeId}?shell=${fit.shellId}&ch=${mark.channel}&mark=${r.mark}`}
-            aria-label={`Mark ${r.mark + 1} on channel ${mark.channel}`}
+            aria-label={`${text}, channel ${mark.channel}`}
             style={({ hovered }: PressState) => ({
               minHeight: touch,
               minWidth: touch,
@@ -70,7 +70,7 @@ export function ResidualTable({ fit }: { fit: DoneFit }) {
     {
       key: 'bar',
       label: 'size',
-      head: <View />,
+      head: <HiddenText>size</HiddenText>,
       width: space(24),
       grow: 1,
       cell: (r) =>

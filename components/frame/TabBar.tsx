@@ -32,7 +32,6 @@ export function TabBar({ inbox }: { inbox: number }) {
           <Press
             key={section.href}
             href={section.href}
-            aria-label={waiting > 0 ? `${section.label}, ${waiting} waiting` : section.label}
             {...(current && ({ 'aria-current': 'page' } as object))}
             style={{
               flex: 1,

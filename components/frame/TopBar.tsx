@@ -18,7 +18,7 @@ export function Wordmark() {
   return (
     <Press
       href="/regions"
-      aria-label="Outswell, to the regions"
+      aria-label="Outswell"
       style={{ flexDirection: 'row', alignItems: 'center', gap: space(3), minHeight: touch }}
     >
       <Sign />
@@ -92,15 +92,15 @@ export function TopBar({
           );
         })}
       </View>
-      <View style={{ width: hairline, height: space(6), backgroundColor: color.line }} />
-      <Crumbs crumbs={crumbs} heading={heading} />
+      {(heading || crumbs.length > 1) && (
+        <>
+          <View style={{ width: hairline, height: space(6), backgroundColor: color.line }} />
+          <Crumbs crumbs={crumbs} heading={heading} />
+        </>
+      )}
       <View style={{ flex: 1 }} />
       {aside}
-      <Press
-        href="/inbox"
-        aria-label={inbox > 0 ? `Inbox, ${inbox} waiting` : 'Inbox'}
-        style={{ minHeight: touch, justifyContent: 'center' }}
-      >
+      <Press href="/inbox" style={{ minHeight: touch, justifyContent: 'center' }}>
         <View
           style={{
             paddingHorizontal: space(3),
@@ -114,7 +114,7 @@ export function TopBar({
       </Press>
       <Press
         href="/you"
-        aria-label={me ? `You, ${me.name}` : 'You'}
+        aria-label={me ? `${initials(me.name)}, ${me.name}` : 'You'}
         style={{ minHeight: touch, justifyContent: 'center' }}
       >
         <View

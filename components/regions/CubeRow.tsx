@@ -89,7 +89,6 @@ export function CubeRow({ cube }: { cube: Cube }) {
         {ready ? (
           <Press
             href={`/cubes/${cube.id}`}
-            aria-label={`Open cube ${cube.name}`}
             style={({ hovered }: PressState) => ({
               flex: 1,
               flexDirection: 'row',

@@ -48,12 +48,6 @@ export function RegionCard({ region }: { region: Region }) {
   return (
     <Press
       href={`/regions/${region.id}`}
-      aria-label={[
-        region.name,
-        count(region.counts.cubes, 'cube'),
-        count(region.counts.shells, 'shell'),
-        ...chips.map((c) => c.label),
-      ].join(', ')}
       style={({ hovered }: PressState) => ({
         flexGrow: 1,
         gap: space(3),

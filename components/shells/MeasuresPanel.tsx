@@ -4,8 +4,13 @@ import { Panel } from '../ui/Panel';
 import { ParameterName, Quantity } from '../ui/Quantity';
 import { Text } from '../ui/Text';
 
-/** What follows from the adopted fit and the distance; the age with the factor it rests on. */
-export function MeasuresPanel({ shell }: { shell: Shell }) {
+const FITTED = ['l', 'b', 'theta', 'vSys', 'vExp'] as const;
+
+/**
+ * What follows from the adopted fit and the distance; the age with the factor it rests on. Brief where the fit's own
+ * numbers stand beside it anyway.
+ */
+export function MeasuresPanel({ shell, brief }: { shell: Shell; brief: boolean }) {
   const m = shell.adopted;
   if (!m) return null;
   return (
@@ -19,31 +24,11 @@ export function MeasuresPanel({ shell }: { shell: Shell }) {
     >
       <DefinitionRows
         rows={[
-          {
-            key: 'l',
-            name: <ParameterName name="l" long />,
-            value: <Quantity quantity={m.l} align="right" />,
-          },
-          {
-            key: 'b',
-            name: <ParameterName name="b" long />,
-            value: <Quantity quantity={m.b} align="right" />,
-          },
-          {
-            key: 'theta',
-            name: <ParameterName name="theta" long />,
-            value: <Quantity quantity={m.theta} align="right" />,
-          },
-          {
-            key: 'vSys',
-            name: <ParameterName name="vSys" />,
-            value: <Quantity quantity={m.vSys} align="right" />,
-          },
-          {
-            key: 'vExp',
-            name: <ParameterName name="vExp" />,
-            value: <Quantity quantity={m.vExp} align="right" />,
-          },
+          ...(brief ? [] : FITTED).map((key) => ({
+            key,
+            name: <ParameterName name={key} long />,
+            value: <Quantity quantity={m[key]} align="right" />,
+          })),
           {
             key: 'radius',
             name: <ParameterName name="radius" long />,

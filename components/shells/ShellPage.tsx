@@ -78,7 +78,7 @@ function Content({ shell }: { shell: Shell }) {
   const frozen = useFitMarks(shown?.id ?? null);
   const side = (
     <View style={{ gap: space(4), alignSelf: 'stretch' }}>
-      <MeasuresPanel shell={shell} />
+      <MeasuresPanel shell={shell} brief={shown !== null && shown.id === shell.adoptedFitId} />
       <FitList shellId={shell.id} shown={shown?.id ?? null} onShow={(id) => router.setParams({ fit: id })} />
       <DistancePanel shell={shell} />
       <Readings shell={shell} />

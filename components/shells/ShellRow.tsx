@@ -24,7 +24,6 @@ export function ShellRow({ shell, showNumbers = true }: { shell: Shell; showNumb
     <View role="listitem">
       <Press
         href={`/shells/${shell.id}`}
-        aria-label={`${shell.name}, ${shell.designation ?? readingWords(shell)}, ${shell.status}`}
         style={({ hovered }: PressState) => ({
           minHeight: touch + space(3),
           flexDirection: 'row',

@@ -37,7 +37,7 @@ export function Chip({
       style={{
         flexDirection: 'row',
         alignItems: 'center',
-        alignSelf: 'flex-start',
+        width: 'fit-content' as 'auto', // as wide as its word in rows and columns alike
         gap: space(1),
         paddingHorizontal: space(2),
         paddingVertical: space(0.5),

@@ -10,18 +10,20 @@ export function EmptyState({
   title,
   children,
   action,
+  level = 2,
 }: {
   icon?: IconName;
   title: string;
   children?: ReactNode;
   action?: ReactNode;
+  level?: 1 | 2 | 3;
 }) {
   return (
     <View
       style={{ alignItems: 'center', gap: space(2), paddingVertical: space(8), paddingHorizontal: space(4) }}
     >
       {icon && <Icon name={icon} size={32} tone="quiet" />}
-      <Text size="lead" weight="semibold" align="center">
+      <Text heading={level} size="lead" weight="semibold" align="center">
         {title}
       </Text>
       {children && (

@@ -34,7 +34,7 @@ export function Quantity({
       aria-label={q.spoken}
       style={{
         flexDirection: 'row',
-        flexWrap: 'wrap',
+        flexWrap: hideUnit ? 'nowrap' : 'wrap',
         columnGap: space(1.5),
         alignItems: 'baseline',
         justifyContent: align === 'right' ? 'flex-end' : 'flex-start',

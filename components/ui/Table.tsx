@@ -78,7 +78,6 @@ export function Table<Row>({ label, columns, rows, rowKey, sort, onSort, selecte
               >
                 {c.sortable && onSort ? (
                   <Press
-                    aria-label={`Sort by ${c.label}`}
                     onPress={() => onSort(c.key)}
                     style={({ hovered }: PressState) => ({
                       minHeight: touch,

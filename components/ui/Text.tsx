@@ -46,6 +46,12 @@ export function Text({
   );
 }
 
+/** Heard, not seen. */
+export function HiddenText({ children }: { children: string }) {
+  const hidden = { position: 'absolute', width: 1, height: 1, overflow: 'hidden', clipPath: 'inset(50%)' };
+  return <NativeText style={hidden as TextStyle}>{children}</NativeText>;
+}
+
 /** A lowered index, as in v with sys; put it inside a Text. */
 export function Sub({ children, size = 'small', mono = false, tone }: TextProps) {
   const { color } = useTheme();
