@@ -4,7 +4,7 @@ import type { CubeHead } from '@/shared/fits/cubeHead';
 import type { CubeStatistics } from './cubes';
 import { rows, type Db } from './db';
 
-export const LEASE_SECONDS = 15;
+export const LEASE_SECONDS = 10;
 
 /** Take the cube if it waits, or if the worker that had it stopped renewing its lease. */
 export async function claimCube(db: Db, id: string, holder: string): Promise<boolean> {
