@@ -130,7 +130,7 @@ function Listed({
       shells={items}
       regionIndex={regionIndex}
       picked={filters.pick}
-      height={wide ? space(112) : space(92)}
+      height={wide ? space(104) : space(92)}
     />
   );
   const bar = <PickBar picked={picked} onClear={clear} />;
@@ -221,7 +221,7 @@ function Listed({
       }}
     >
       {table}
-      <View style={[{ gap: space(4) }, beside && { width: space(112) }]}>
+      <View style={[{ gap: space(4) }, beside && { width: space(100) }]}>
         {chart}
         {bar}
       </View>

@@ -25,20 +25,13 @@ export function ShellCard({
 }) {
   const { color } = useTheme();
   const m = shell.adopted;
-  const pairs = [
-    { key: 'theta', name: <ParameterName name="theta" tone="quiet" size="small" />, quantity: m?.theta },
-    { key: 'radius', name: <ParameterName name="radius" tone="quiet" size="small" />, quantity: m?.radius },
-    { key: 'vSys', name: <ParameterName name="vSys" tone="quiet" size="small" />, quantity: m?.vSys },
-    { key: 'vExp', name: <ParameterName name="vExp" tone="quiet" size="small" />, quantity: m?.vExp },
-    {
-      key: 'age',
-      name: (
-        <Text size="small" tone="quiet">
-          {m ? `${m.ageFactor} R/v` : 'age'}
-        </Text>
-      ),
-      quantity: m?.age,
-    },
+  const named = (name: string) => <ParameterName name={name} tone="quiet" size="small" />;
+  const facts = [
+    { key: 'theta', name: named('theta'), unit: '°', quantity: m?.theta },
+    { key: 'radius', name: named('radius'), unit: 'pc', quantity: m?.radius },
+    { key: 'age', name: m ? `${m.ageFactor} R/v` : 'age', unit: 'Myr', quantity: m?.age },
+    { key: 'vSys', name: named('vSys'), unit: 'km/s', quantity: m?.vSys },
+    { key: 'vExp', name: named('vExp'), unit: 'km/s', quantity: m?.vExp },
   ];
   return (
     <View
@@ -51,8 +44,8 @@ export function ShellCard({
         paddingBottom: space(3),
       }}
     >
-      <View style={{ flexDirection: 'row', alignItems: 'center', paddingRight: space(4), gap: space(1) }}>
-        <View style={{ paddingLeft: space(3) }}>
+      <View style={{ flexDirection: 'row', alignItems: 'center', paddingRight: space(4) }}>
+        <View style={{ paddingLeft: space(4) }}>
           <CheckBox label={`Compare ${shell.name}`} checked={picked} disabled={!mayPick} onChange={onPick} />
         </View>
         <Press
@@ -71,20 +64,17 @@ export function ShellCard({
         </Press>
         <StatusChip status={shell.status} />
       </View>
-      <View
-        style={{ flexDirection: 'row', flexWrap: 'wrap', paddingHorizontal: space(4), rowGap: space(1.5) }}
-      >
-        {pairs.map((p) => (
-          <View
-            key={p.key}
-            style={{ flexBasis: '50%', flexDirection: 'row', gap: space(2), alignItems: 'baseline' }}
-          >
-            <View style={{ minWidth: space(8) }}>{p.name}</View>
-            <Quantity quantity={p.quantity} size="small" />
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', paddingHorizontal: space(4), rowGap: space(2) }}>
+        {facts.map((f) => (
+          <View key={f.key} style={half}>
+            <Text size="small" tone="quiet">
+              {f.name}, {f.unit}
+            </Text>
+            <Quantity hideUnit quantity={f.quantity} size="small" />
           </View>
         ))}
-        <View style={{ flexBasis: '50%', flexDirection: 'row', gap: space(2), alignItems: 'baseline' }}>
-          <Text size="small" tone="quiet" style={{ minWidth: space(8) }}>
+        <View style={half}>
+          <Text size="small" tone="quiet">
             χ²/dof
           </Text>
           <Text size="small" mono>
@@ -95,3 +85,5 @@ export function ShellCard({
     </View>
   );
 }
+
+const half = { flexBasis: '50%', minWidth: 0 } as const;

@@ -105,8 +105,8 @@ export function catalogueColumns({
         </View>
       ),
     },
-    number('theta', 'Θ, °', 29),
-    number('radius', 'R, pc', 22),
+    number('theta', 'Θ, °', 33),
+    number('radius', 'R, pc', 24),
     number('vSys', 'v sys, km/s', 29, indexed('v', 'sys', 'km/s')),
     number('vExp', 'v exp, km/s', 28, indexed('v', 'exp', 'km/s')),
     number('age', `age ${ageFactor} R/v, Myr`, 26, <HeadText>{`${ageFactor} R/v, Myr`}</HeadText>),

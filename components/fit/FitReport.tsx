@@ -14,10 +14,17 @@ import { Provenance } from './Provenance';
 import { ResidualTable } from './ResidualTable';
 import { RingTable } from './RingTable';
 
-/** All a fit of record has to say: numbers with errors, their limits, and what they were made of. */
-export function FitReport({ fit, name, channelWidth }: { fit: DoneFit; name: string; channelWidth: number }) {
+/** The numbers with their errors and limits, and the curve they draw. */
+export function FitSummary({
+  fit,
+  name,
+  channelWidth,
+}: {
+  fit: DoneFit;
+  name: string;
+  channelWidth: number;
+}) {
   const { wide } = useWide();
-  const model = modelOf(fit);
   return (
     <View style={{ gap: space(4) }}>
       <View style={{ flexDirection: wide ? 'row' : 'column', gap: space(4), alignItems: 'stretch' }}>
@@ -39,7 +46,7 @@ export function FitReport({ fit, name, channelWidth }: { fit: DoneFit; name: str
                 width={width}
                 height={space(72)}
                 rings={ringsOf(fit)}
-                model={model}
+                model={modelOf(fit)}
                 channelWidth={channelWidth}
                 name={name}
               />
@@ -52,15 +59,22 @@ export function FitReport({ fit, name, channelWidth }: { fit: DoneFit; name: str
           {w.message}
         </Notice>
       ))}
-      <View style={{ flexDirection: wide ? 'row' : 'column', gap: space(4), alignItems: 'flex-start' }}>
-        <View style={[{ gap: space(4), alignSelf: 'stretch' }, wide && { flex: 1, minWidth: 0 }]}>
-          <ResidualTable fit={fit} />
-        </View>
-        <View style={[{ gap: space(4), alignSelf: 'stretch' }, wide && { flex: 1, minWidth: 0 }]}>
-          <RingTable fit={fit} />
-          <CorrelationTable correlation={fit.correlation} />
-          <Provenance fit={fit} />
-        </View>
+    </View>
+  );
+}
+
+/** What the numbers rest on: residuals by mark, rings by channel, correlation, provenance. */
+export function FitDetails({ fit }: { fit: DoneFit }) {
+  const { wide } = useWide();
+  return (
+    <View style={{ flexDirection: wide ? 'row' : 'column', gap: space(4), alignItems: 'flex-start' }}>
+      <View style={[{ gap: space(4), alignSelf: 'stretch' }, wide && { flex: 1, minWidth: 0 }]}>
+        <ResidualTable fit={fit} />
+      </View>
+      <View style={[{ gap: space(4), alignSelf: 'stretch' }, wide && { flex: 1, minWidth: 0 }]}>
+        <RingTable fit={fit} />
+        <CorrelationTable correlation={fit.correlation} />
+        <Provenance fit={fit} />
       </View>
     </View>
   );

@@ -71,7 +71,7 @@ export function CubeRow({ cube }: { cube: Cube }) {
         <Text weight="semibold" numberOfLines={1}>
           {cube.name}
         </Text>
-        <Text size="small" mono tone="quiet" numberOfLines={2}>
+        <Text size="small" mono tone="quiet" numberOfLines={3}>
           {cubeFacts(cube)}
         </Text>
         <Text size="small" tone="quiet" numberOfLines={1}>

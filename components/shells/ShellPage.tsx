@@ -7,7 +7,7 @@ import { useMay } from '@/hooks/useMe';
 import { useShell } from '@/hooks/useShells';
 import { isDone } from '../fit/fitFacts';
 import { FitList } from '../fit/FitList';
-import { FitReport } from '../fit/FitReport';
+import { FitDetails, FitSummary } from '../fit/FitReport';
 import { RecordGate } from '../frame/RecordGate';
 import { Screen } from '../frame/Screen';
 import { Button } from '../ui/Button';
@@ -84,11 +84,9 @@ function Content({ shell }: { shell: Shell }) {
       <Readings shell={shell} />
     </View>
   );
-  const report =
+  const summary =
     fits.data === undefined ? (
-      fits.problem ? null : (
-        <SkeletonRows rows={3} height={120} />
-      )
+      !fits.problem && <SkeletonRows rows={3} height={120} />
     ) : shown ? (
       <View style={{ gap: space(4) }}>
         {shown.id !== shell.adoptedFitId && (
@@ -98,7 +96,7 @@ function Content({ shell }: { shell: Shell }) {
               : 'Its marks do not measure the radius, so it cannot stand for the shell.'}
           </Notice>
         )}
-        <FitReport
+        <FitSummary
           key={shown.id}
           fit={shown}
           name={shell.name}
@@ -114,23 +112,28 @@ function Content({ shell }: { shell: Shell }) {
         </EmptyState>
       </Panel>
     );
+  const details = shown && <FitDetails key={shown.id} fit={shown} />;
   return (
     <>
       {shell.status === 'withdrawn' && (
         <Notice kind="person">This shell is withdrawn: it stays on record and out of the catalogue.</Notice>
       )}
       {shell.note ? <Text tone="quiet">{shell.note}</Text> : null}
-      <View
-        style={{
-          flexDirection: wide ? 'row' : 'column',
-          gap: space(4),
-          alignItems: wide ? 'flex-start' : 'stretch',
-        }}
-      >
-        {!wide && side}
-        <View style={wide ? { flex: 1, minWidth: 0 } : undefined}>{report}</View>
-        {wide && <View style={{ width: space(98) }}>{side}</View>}
-      </View>
+      {wide ? (
+        <View style={{ flexDirection: 'row', gap: space(4), alignItems: 'flex-start' }}>
+          <View style={{ flex: 1, minWidth: 0, gap: space(4) }}>
+            {summary}
+            {details}
+          </View>
+          <View style={{ width: space(92) }}>{side}</View>
+        </View>
+      ) : (
+        <View style={{ gap: space(4) }}>
+          {summary}
+          {side}
+          {details}
+        </View>
+      )}
     </>
   );
 }

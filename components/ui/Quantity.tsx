@@ -1,4 +1,4 @@
-import { View } from 'react-native';
+import { View, type TextStyle } from 'react-native';
 import { formatQuantity, plainNumber, type QuantityInput } from '@/shared/physics/quantity';
 import { Sub, Text } from './Text';
 import { space, type Colors, type TypeSize } from './tokens';
@@ -12,6 +12,8 @@ export interface QuantityProps {
   tone?: keyof Colors;
   align?: 'left' | 'right';
 }
+
+const oneLine = { whiteSpace: 'nowrap' } as TextStyle;
 
 /** Value, error and unit, rounded by the error and aligned in tabular figures; read aloud in words. */
 export function Quantity({
@@ -40,11 +42,11 @@ export function Quantity({
         justifyContent: align === 'right' ? 'flex-end' : 'flex-start',
       }}
     >
-      <Text mono size={size} tone={tone} weight="regular">
+      <Text mono size={size} tone={tone} style={oneLine}>
         {q.value}
       </Text>
       {q.error && (
-        <Text mono size={size} tone="quiet">
+        <Text mono size={size} tone="quiet" style={oneLine}>
           {q.error}
         </Text>
       )}

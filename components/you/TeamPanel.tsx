@@ -36,7 +36,7 @@ export function TeamPanel() {
   return (
     <Panel
       flush
-      title={me?.team ? `Team ${me.team.name}` : 'Team'}
+      title={me?.team?.name ?? 'Team'}
       aside={manages && <Button icon="plus" label="Add a person" onPress={() => setAdding(true)} />}
     >
       <RecordGate
