@@ -1,6 +1,7 @@
 import { useMemo, useState } from 'react';
 import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
+import { ringsOf } from '@/components/fit/fitFacts';
 import { radiusErrorOf } from '@/components/diagram/modelError';
 import { RadiusVelocity } from '@/components/diagram/RadiusVelocity';
 import type { DiagramModel, DiagramRing } from '@/components/diagram/diagramScale';
@@ -33,24 +34,35 @@ export function LivePanel({
   /** Where little is seen at once, the numbers come before the diagram. */
   numbersFirst?: boolean;
 }) {
-  const { live, model, axes, velocity, shell, showChannel } = useSession();
+  const { live, model, modelSource, shownRecord, axes, velocity, shell, showChannel } = useSession();
   const [width, setWidth] = useState(0);
   const { fit } = live;
 
   const rings = useMemo<DiagramRing[]>(
     () =>
-      live.readings.flatMap((r) =>
-        r.ring
-          ? [{ channel: r.channel, velocity: r.velocity, theta: r.ring.theta, se: r.ring.se, marks: r.marks }]
-          : [],
-      ),
-    [live],
+      shownRecord && live.readings.length === 0
+        ? ringsOf(shownRecord)
+        : live.readings.flatMap((r) =>
+            r.ring
+              ? [
+                  {
+                    channel: r.channel,
+                    velocity: r.velocity,
+                    theta: r.ring.theta,
+                    se: r.ring.se,
+                    marks: r.marks,
+                  },
+                ]
+              : [],
+          ),
+    [live, shownRecord],
   );
   const shown = useMemo<DiagramModel | null>(() => {
-    if (!model || !fit) return null;
-    const errorAt = radiusErrorOf(fit);
+    const source = fit ?? shownRecord;
+    if (!model || !source) return null;
+    const errorAt = radiusErrorOf(source);
     return { theta: model.theta, vSys: model.vSys, vExp: model.vExp, ...(errorAt && { errorAt }) };
-  }, [model, fit]);
+  }, [model, fit, shownRecord]);
   // Few rings would make an axis of their own; the cube's range shows where they stand.
   const domain = useMemo(
     () =>
@@ -77,7 +89,7 @@ export function LivePanel({
       <View style={{ flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' }}>
         <SectionTitle>Radius–velocity</SectionTitle>
         <Text size="small" tone="quiet">
-          {fit ? 'live fit, sphere' : ''}
+          {modelSource ? `${modelSource === 'live' ? 'live fit' : 'fit of record'}, sphere` : ''}
         </Text>
       </View>
       <View style={{ height: diagramHeight }}>

@@ -105,7 +105,9 @@ export function LookPanel({ onClose }: { onClose: () => void }) {
             key={label}
             label={label}
             aria-label={
-              share === 1 ? 'Window from least to most of this channel' : `Window of ${label} of this channel`
+              share === 1
+                ? 'All of this channel between the ends of the window'
+                : `Window of ${label} of this channel`
             }
             disabled={!planes.plane}
             onPress={() => preset(share)}

@@ -66,7 +66,7 @@ export function MarkList() {
         {own.map((mark, i) => {
           const at = wcs.pixelToGalactic(mark.x, mark.y);
           const place = at
-            ? `l ${degrees(at.l, digits)}  b ${degrees(at.b, digits)}`
+            ? `l ${degrees(at.l, digits)} b ${degrees(at.b, digits)}`
             : 'outside the projection';
           const current = mark.id === selected?.id;
           return (
@@ -95,9 +95,14 @@ export function MarkList() {
                   backgroundColor: hovered ? color.selected : 'transparent',
                 })}
               >
-                <Text mono size="small">
-                  {place}
-                </Text>
+                {at ? (
+                  <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: space(3) }}>
+                    <Text mono size="small">{`l ${degrees(at.l, digits)}`}</Text>
+                    <Text mono size="small">{`b ${degrees(at.b, digits)}`}</Text>
+                  </View>
+                ) : (
+                  <Text size="small">{place}</Text>
+                )}
               </Press>
               {marking && (
                 <IconButton

@@ -28,7 +28,7 @@ export function PhoneCube({
   record: RecordFit;
   look: { open: boolean; toggle: () => void };
 }) {
-  const { shell, live } = useSession();
+  const { shell, hasReading, modelSource } = useSession();
   const { width, height } = useWide();
   const [tab, setTab] = useState('marks');
   const lying = width > height; // a phone on its side: the sheet goes beside the map
@@ -70,7 +70,7 @@ export function PhoneCube({
       onTab={setTab}
       aside={
         <Text size="small" tone="quiet">
-          {live.fit ? 'live, sphere' : ''}
+          {modelSource ? `${modelSource === 'live' ? 'live' : 'of record'}, sphere` : ''}
         </Text>
       }
       tabs={[
@@ -80,8 +80,8 @@ export function PhoneCube({
           content: (
             <>
               {notices}
-              {shell && <ReadingTable />}
-              {shell && <MarkList />}
+              {hasReading && <ReadingTable />}
+              {hasReading && <MarkList />}
               <ShellChooser />
             </>
           ),

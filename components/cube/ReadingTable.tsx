@@ -1,9 +1,8 @@
 import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
-import { count } from '@/components/ui/format';
 import { Press, type PressState } from '@/components/ui/Press';
 import { SectionTitle } from '@/components/ui/Panel';
-import { Text } from '@/components/ui/Text';
+import { HiddenText, Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { hairline, radius, space, touch } from '@/components/ui/tokens';
 import type { ChannelReading } from '@/hooks/reading/skyMarks';
@@ -52,12 +51,10 @@ function Row(props: {
   const { color } = useTheme();
   const { ring } = reading;
   const q = ring && formatQuantity({ value: ring.theta, se: ring.se, unit: 'deg' });
-  const size = q ? `ring of ${q.spoken}` : `no ring, ${REASONS[reading.reason ?? 'too-few']}`;
   return (
     <View role="listitem">
       <Press
         onPress={() => onPress(reading.channel)}
-        aria-label={`${labelOf(reading.velocity, 1)} km/s, ${count(reading.marks, 'mark')}, ${size}`}
         {...(current && ({ 'aria-current': 'true' } as object))}
         style={({ hovered }: PressState) => ({
           flexDirection: 'row',
@@ -72,6 +69,7 @@ function Row(props: {
       >
         <Text mono style={{ width: space(13) }} align="right">
           {labelOf(reading.velocity, 1)}
+          <HiddenText> km/s, </HiddenText>
         </Text>
         <View style={{ flex: 1, flexDirection: 'row', alignItems: 'center', gap: space(1.5) }}>
           <View style={{ flex: 1, alignItems: 'flex-end' }}>
@@ -86,11 +84,13 @@ function Row(props: {
           </View>
           <Text mono size="small" tone="quiet" style={{ minWidth: space(4) }}>
             {reading.marks}
+            <HiddenText>{reading.marks === 1 ? ' mark, ' : ' marks, '}</HiddenText>
           </Text>
         </View>
         <View
           style={{ minWidth: space(25), flexDirection: 'row', justifyContent: 'flex-end', gap: space(1) }}
         >
+          <HiddenText>{q ? 'ring ' : 'no ring: '}</HiddenText>
           {q ? (
             <>
               <Text mono>{`${q.value}${q.error ? '' : '°'}`}</Text>

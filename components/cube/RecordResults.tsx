@@ -51,7 +51,6 @@ function Residuals({ fit }: { fit: DoneFit }) {
               <Press
                 disabled={!mark}
                 onPress={() => mark && showPlace(mark)}
-                aria-label={`${off} at ${where}${r.weight === 0 ? ', set aside' : ''}. Show this mark`}
                 style={({ hovered }: PressState) => ({
                   flexDirection: 'row',
                   alignItems: 'center',

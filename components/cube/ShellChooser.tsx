@@ -84,7 +84,6 @@ function Row({ shell, current, onPress }: { shell: Shell; current: boolean; onPr
     <View role="listitem">
       <Press
         onPress={onPress}
-        aria-label={`${shell.name}, ${shell.designation ?? readingWords(shell)}, ${shell.status}`}
         aria-pressed={current}
         style={({ hovered }: PressState) => ({
           flexDirection: 'row',

@@ -30,7 +30,7 @@ export function WideCube({
   record: RecordFit;
   look: { open: boolean; toggle: () => void };
 }) {
-  const { shell } = useSession();
+  const { shell, hasReading } = useSession();
   const { color } = useTheme();
   const { width, height } = useWide();
   const [left, right] = width >= COLUMNS.from ? COLUMNS.wide : COLUMNS.narrow;
@@ -43,9 +43,10 @@ export function WideCube({
         style={{ width: left, borderRightWidth: hairline, ...edge }}
       >
         <ScrollView contentContainerStyle={{ padding: space(3), gap: space(5) }}>
+          <MarkHint />
           <ShellChooser />
-          {shell && <ReadingTable />}
-          {shell && <MarkList />}
+          {hasReading && <ReadingTable />}
+          {hasReading && <MarkList />}
         </ScrollView>
       </View>
       <View style={{ flex: 1, minWidth: 0, padding: space(4), paddingBottom: space(2), gap: space(2) }}>
@@ -59,10 +60,14 @@ export function WideCube({
           }}
         >
           <Headline compact={width < COLUMNS.from} />
-          <Tools lookOpen={look.open} onLook={look.toggle} roomy={width >= COLUMNS.roomy} />
+          <Tools
+            lookOpen={look.open}
+            onLook={look.toggle}
+            compact={width < COLUMNS.from}
+            roomy={width >= COLUMNS.roomy}
+          />
         </View>
         <ConflictNotice />
-        <MarkHint />
         <View style={{ flex: 1, minHeight: space(40) }}>
           <MapPanel />
           {look.open && (

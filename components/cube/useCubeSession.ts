@@ -2,7 +2,8 @@ import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { CubePlace } from '@/components/cube/place';
 import { useLook, type LookControl } from '@/components/cube/useLook';
 import { useAddress } from '@/components/cube/usePlace';
-import { useScene, type SceneModel } from '@/components/cube/useScene';
+import { useModel, type ShownModel } from '@/components/cube/useModel';
+import { useScene } from '@/components/cube/useScene';
 import { mapStore, type MapStore } from '@/components/map/mapStore';
 import type { Scene } from '@/components/map/scene';
 import { stepped, stripOrder, type StripOrder } from '@/components/strip/stripOrder';
@@ -22,7 +23,7 @@ import type { Wcs } from '@/shared/sky/wcs';
 export type Grid = 'galactic' | 'own' | 'off';
 
 /** Everything the cube screen's parts share. */
-export interface CubeSession {
+export interface CubeSession extends ShownModel {
   cube: Cube;
   axes: CubeAxes;
   wcs: Wcs;
@@ -51,7 +52,8 @@ export interface CubeSession {
   marks: readonly PlacedMark[];
   marksByChannel: ReadonlyMap<number, number>;
   live: LiveFit;
-  model: SceneModel | null;
+  /** I have a reading of this shell on this cube, or can begin one. */
+  hasReading: boolean;
   selected: PlacedMark | null;
   select: (id: string | null) => void;
   showChannel: (channel: number) => void;
@@ -62,8 +64,6 @@ export interface CubeSession {
   /** Show a place: its channel, with the mark there selected, and in sight. */
   showPlace: (at: { channel: number; x: number; y: number }) => void;
 }
-
-const parameter = (live: LiveFit, name: string) => live.fit?.parameters[name]?.value ?? NaN;
 
 /** How sharp a plane is wanted, in steps of two so that zooming asks rarely. */
 const sharpness = (v: Viewport | null): number =>
@@ -99,19 +99,8 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const velocities = axes.spectral.velocities;
   const range = useMemo(() => [velocities[0], velocities[1]] as const, [velocities]);
   const live = useLiveFit(marks, wcs, axes.spectral.channelWidth, range);
-  const model = useMemo<SceneModel | null>(
-    () =>
-      live.fit
-        ? {
-            l: parameter(live, 'l'),
-            b: parameter(live, 'b'),
-            theta: parameter(live, 'theta'),
-            vSys: parameter(live, 'vSys'),
-            vExp: parameter(live, 'vExp'),
-          }
-        : null,
-    [live],
-  );
+  const shown = useModel(shell, live, mayMark, state.readingId);
+  const { model } = shown;
 
   const image = useMemo(() => ({ nx: axes.nx, ny: axes.ny, channels: axes.channels }), [axes]);
   const planes = usePlanes(cube.id, image, channel, useValue(store.viewport, sharpness));
@@ -230,7 +219,8 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     marks,
     marksByChannel,
     live,
-    model,
+    hasReading: shell !== null && mayMark && !elsewhere,
+    ...shown,
     selected,
     select: setSelected,
     showChannel,

@@ -47,11 +47,12 @@ async function readStrip(cubeId: string, signal: AbortSignal): Promise<Grey | nu
   return { pixels, step: Math.max(1, Number(answer.headers.get('Strip-Step') ?? 1) || 1) };
 }
 
-/** Grey levels 1 … 255 through the tone into the palette; 0 is a blank and stays dark. */
+/** Grey levels 1 … 255 through the tone into the palette; blanks, 0 (give or take the compression), take its low end. */
 function coloured({ pixels, step }: Grey, ramp: Uint32Array, tone: Tone): StripPicture | null {
   const { forward } = TONE_CURVES[tone];
-  const colour = Uint32Array.from({ length: 256 }, (_, level) =>
-    level === 0 ? 0xff000000 : ramp[Math.round(forward((level - 1) / 254) * (ramp.length - 1))]!,
+  const colour = Uint32Array.from(
+    { length: 256 },
+    (_, level) => ramp[Math.round(forward(Math.max(level - 1, 0) / 254) * (ramp.length - 1))]!,
   );
   const canvas = document.createElement('canvas');
   canvas.width = pixels.width;
