@@ -1,4 +1,5 @@
 // @ts-check
+import { spawnSync } from 'node:child_process';
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { delimiter, join } from 'node:path';
 import { serverBinaries } from './postgresBinaries.mjs';
@@ -11,7 +12,7 @@ const onPath = (name) =>
 
 /**
  * What the machine itself must have: how to see that it is there, and Debian's packages that bring it.
- * @type {Record<'postgresql' | 'chromium', { name: string, present: () => boolean, packages: string[], otherwise: string }>}
+ * @type {Record<'postgresql' | 'chromium' | 'numpy', { name: string, present: () => boolean, packages: string[], otherwise: string }>}
  */
 export const needs = {
   postgresql: {
@@ -27,6 +28,15 @@ export const needs = {
       Boolean(process.env.CHROMIUM) || ['chromium', 'chromium-browser', 'google-chrome'].some(onPath),
     packages: ['chromium', 'fonts-liberation'],
     otherwise: 'set CHROMIUM to the path of its program',
+  },
+  numpy: {
+    name: 'numpy for Python 3',
+    present: () =>
+      ['/usr/bin/python3', 'python3'].some(
+        (python) => spawnSync(python, ['-c', 'import numpy'], { stdio: 'ignore' }).status === 0,
+      ),
+    packages: ['python3-numpy'],
+    otherwise: 'install it for the python3 that is found first',
   },
 };
 
@@ -47,7 +57,8 @@ export async function ensurePrograms(wanted, say) {
   }
   say(`Installing ${names} (apt-get install ${packages.join(' ')}) …`);
   await apt('update');
-  await withoutDefaultCluster(() => apt('install', '--no-install-recommends', ...packages));
+  const install = () => apt('install', '--no-install-recommends', ...packages);
+  await (packages.includes('postgresql') ? withoutDefaultCluster(install) : install());
   const still = missing.find((need) => !need.present());
   if (still)
     throw new Stop(`${still.name} is still not found after installing ${still.packages.join(' and ')}.`);

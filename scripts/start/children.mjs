@@ -3,7 +3,7 @@ import { spawn } from 'node:child_process';
 import { createInterface } from 'node:readline';
 import { readable } from './logLines.mjs';
 
-/** @typedef {{ name: string, stop: () => Promise<void>, ended: Promise<{ code: number | null, signal: string | null }> }} Child */
+/** @typedef {{ name: string, pid: number | undefined, stop: () => Promise<void>, ended: Promise<{ code: number | null, signal: string | null }> }} Child */
 
 /**
  * Starts one of our programs with its output in ours, each line after its name.
@@ -38,6 +38,7 @@ export function startChild(name, script, { cwd, env }) {
   );
   return {
     name,
+    pid: child.pid,
     ended,
     stop: async () => {
       if (over) return;

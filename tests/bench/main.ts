@@ -1,0 +1,49 @@
+/**
+ * npm run bench: measured speeds, on this machine, now. `npm run bench -- ingest` runs one part.
+ *
+ * ingest  a 512 x 512 x 128 float32 cube through the real server and worker, beside numpy doing the same reductions
+ * fit     the fit and its bootstrap, beside scipy
+ * screen  the first look at that cube and stepping through its channels, in Chromium
+ *
+ * A bench and no test: a limit that is missed is said, and the exit code stays 0. Other work on the machine shows in
+ * every figure, so the load stands beside them.
+ */
+import { ensurePrograms } from '../../scripts/machine/debian.mjs';
+import { explain } from '../../scripts/machine/stop.mjs';
+import { benchFit } from './fit';
+import { benchIngest } from './ingest';
+import { describeMachine, load } from './machine';
+import { stopAll } from './product';
+import { benchScreen } from './screen';
+
+const say = (line: string) => console.log(line);
+
+const parts: Record<string, { programs: Parameters<typeof ensurePrograms>[0]; run: () => Promise<unknown> }> =
+  {
+    ingest: { programs: ['postgresql', 'numpy'], run: benchIngest },
+    fit: { programs: [], run: benchFit },
+    screen: { programs: ['postgresql', 'chromium'], run: benchScreen },
+  };
+
+async function main(names: string[]) {
+  const unknown = names.find((name) => !(name in parts));
+  if (unknown) throw new Error(`There is no part ${unknown}. The parts: ${Object.keys(parts).join(', ')}.`);
+  const chosen = names.length > 0 ? names : Object.keys(parts);
+  await ensurePrograms([...new Set(chosen.flatMap((name) => parts[name]!.programs))], say);
+  say(describeMachine());
+  for (const name of chosen) {
+    say(`\n== ${name} (load ${load()})\n`);
+    await parts[name]!.run();
+  }
+  say(`\nload at the end ${load()}`);
+}
+
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const)
+  process.once(signal, () => void stopAll().finally(() => process.exit(130)));
+
+main(process.argv.slice(2))
+  .catch((error) => {
+    console.error(explain(error));
+    process.exitCode = 1;
+  })
+  .finally(stopAll);
