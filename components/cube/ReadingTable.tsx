@@ -61,18 +61,18 @@ function Row(props: {
           alignItems: 'center',
           minHeight: touch,
           gap: space(2),
-          paddingHorizontal: space(2),
+          paddingHorizontal: space(1),
           borderBottomWidth: hairline,
           borderBottomColor: color.line,
           backgroundColor: current || hovered ? color.selected : 'transparent',
         })}
       >
-        <Text mono style={{ width: space(13) }} align="right">
+        <Text mono numberOfLines={1} style={{ minWidth: space(13) }} align="right">
           {labelOf(reading.velocity, 1)}
           <HiddenText> km/s, </HiddenText>
         </Text>
         <View style={{ flex: 1, flexDirection: 'row', alignItems: 'center', gap: space(1.5) }}>
-          <View style={{ flex: 1, alignItems: 'flex-end' }}>
+          <View style={{ flex: 1, alignItems: 'flex-end' }} aria-hidden>
             <View
               style={{
                 height: space(1.5),
@@ -82,13 +82,19 @@ function Row(props: {
               }}
             />
           </View>
-          <Text mono size="small" tone="quiet" style={{ minWidth: space(4) }}>
+          <Text
+            mono
+            size="small"
+            tone="quiet"
+            align="right"
+            style={{ minWidth: space(4), paddingRight: space(1) }}
+          >
             {reading.marks}
             <HiddenText>{reading.marks === 1 ? ' mark, ' : ' marks, '}</HiddenText>
           </Text>
         </View>
         <View
-          style={{ minWidth: space(25), flexDirection: 'row', justifyContent: 'flex-end', gap: space(1) }}
+          style={{ minWidth: space(23), flexDirection: 'row', justifyContent: 'flex-end', gap: space(1) }}
         >
           <HiddenText>{q ? 'ring ' : 'no ring: '}</HiddenText>
           {q ? (

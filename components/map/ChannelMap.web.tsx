@@ -100,6 +100,7 @@ export function ChannelMap(props: ChannelMapProps) {
         touchAction: 'none',
         userSelect: 'none',
         background: color.image,
+        outlineOffset: -3, // the frame around the map would cut a ring outside it
         cursor: marking ? 'crosshair' : 'grab',
       }}
     >
