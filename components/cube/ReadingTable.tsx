@@ -101,7 +101,7 @@ function Row(props: {
             <>
               <Text mono>{`${q.value}${q.error ? '' : '°'}`}</Text>
               {q.error && (
-                <Text mono tone="quiet">
+                <Text mono size="small" tone="quiet" style={{ alignSelf: 'center' }}>
                   {q.error}
                 </Text>
               )}
