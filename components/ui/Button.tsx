@@ -67,7 +67,7 @@ export function Button({
           borderWidth: hairline,
           borderColor: look.edge ? color[look.edge] : 'transparent',
           backgroundColor: look.ground ? color[look.ground] : hovered ? color.chip : 'transparent',
-          opacity: disabled && !busy ? 0.55 : pressed || (hovered && look.ground) ? 0.86 : 1,
+          opacity: disabled && !busy ? 0.55 : pressed || (hovered && look.ground) ? 0.94 : 1,
         },
         wide && { alignSelf: 'stretch' },
         style,

@@ -84,7 +84,7 @@ export function Table<Row>({ label, columns, rows, rowKey, sort, onSort, selecte
                       flexDirection: 'row',
                       alignItems: 'center',
                       gap: space(1),
-                      opacity: hovered ? 0.8 : 1,
+                      opacity: hovered ? 0.92 : 1,
                     })}
                   >
                     {typeof c.head === 'undefined' ? (
