@@ -1,4 +1,5 @@
 import { Redirect, Slot, useRouter } from 'expo-router';
+import { useState } from 'react';
 import { View } from 'react-native';
 import { useCommands } from '@/components/ui/commands/CommandsProvider';
 import { ProblemNotice } from '@/components/ui/ProblemNotice';
@@ -8,11 +9,14 @@ import { sections } from '@/components/frame/sections';
 import { useLiveEvents } from '@/hooks/useLiveEvents';
 import { useMe, useSessionWatch } from '@/hooks/useMe';
 
+const hereNow = (): string => globalThis.location.pathname + globalThis.location.search;
+
 /** Everything behind sign-in. The guard is comfort: the server checks every request. */
 export default function SignedIn() {
   const { data: me, problem, signedOut, reload } = useMe();
   const router = useRouter();
   const { color } = useTheme();
+  const [arrivedAt] = useState(hereNow);
   useSessionWatch();
   useLiveEvents(me?.role != null);
   useCommands(
@@ -25,9 +29,11 @@ export default function SignedIn() {
     })),
   );
   if (signedOut) {
-    const { pathname, search } = globalThis.location; // the whole address: it holds channel, zoom and filters
-    const params = pathname === '/regions' ? {} : { to: pathname + search };
-    return <Redirect href={{ pathname: '/sign-in', params }} />;
+    // the whole address, for it holds channel, zoom and filters; before a screen was ever shown the router has none
+    const to = me ? hereNow() : arrivedAt;
+    return (
+      <Redirect href={{ pathname: '/sign-in', params: to === '/' || to === '/regions' ? {} : { to } }} />
+    );
   }
   if (me && me.role === null) return <Redirect href="/sign-in" />;
   if (problem && !me)

@@ -106,6 +106,6 @@ function ageLine(domain: ChartDomain, factor: number, age: number): AgeLine[] {
   const x0 = Math.max(domain.x[0], radiusAt(domain.y[0]));
   const x1 = Math.min(domain.x[1], radiusAt(domain.y[1]));
   if (!(x1 > x0 * 1.3)) return [];
-  const label = x0 * (x1 / x0) ** 0.88;
+  const label = x0 * (x1 / x0) ** 0.8;
   return [{ age, points: [x0, label, x1].map((x) => ({ x, y: (perUnit * x) / age })) }];
 }

@@ -152,7 +152,7 @@ function FitRow({ fit, shown, onShow }: { fit: Fit; shown: boolean; onShow: () =
           <View style={{ flex: 1 }}>
             <ProgressBar
               label="Fit"
-              value={fit.status === 'running' ? 0.5 : 0}
+              value={fit.status === 'running' ? null : 0}
               activity={fit.status === 'running' ? 'Fitting' : 'Waiting for a worker'}
             />
           </View>

@@ -24,7 +24,8 @@ export function SignIn({ to, problem }: { to?: string; problem?: string }) {
   const me = useMe();
   const provider = useProvider();
   useDocumentTitle('Sign in');
-  if (me.data?.role) return <Redirect href={inside(to) as Href} />;
+  const known = me.signedOut ? undefined : me.data; // the cache keeps the person whose session ended
+  if (known?.role) return <Redirect href={inside(to) as Href} />;
   const start = `/auth/github?to=${encodeURIComponent(inside(to))}` as Href;
   const local = provider.data?.local === true;
   return (
@@ -53,8 +54,8 @@ export function SignIn({ to, problem }: { to?: string; problem?: string }) {
           </Text>
         </View>
         {problem && <Notice kind="error">{refusals[problem] ?? refusals.provider!}</Notice>}
-        {me.data ? (
-          <NoTeam name={me.data.name} login={me.data.login} />
+        {known ? (
+          <NoTeam name={known.name} login={known.login} />
         ) : (
           <View style={{ gap: space(2) }}>
             <Button

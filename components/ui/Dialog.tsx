@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
-import { Modal, Pressable, ScrollView, View } from 'react-native';
+import { Modal, ScrollView, View } from 'react-native';
+import { Backdrop } from './Backdrop';
 import { IconButton } from './Button';
 import { Text } from './Text';
 import { useTheme } from './theme';
@@ -31,12 +32,6 @@ export function Dialog({ title, onClose, children, actions, width = layout.dialo
           padding: wide ? space(6) : 0,
         }}
       >
-        <Pressable
-          aria-hidden
-          tabIndex={-1}
-          onPress={onClose}
-          style={{ position: 'absolute', top: 0, left: 0, right: 0, bottom: 0 }}
-        />
         <View
           style={{
             width: '100%',
@@ -82,6 +77,7 @@ export function Dialog({ title, onClose, children, actions, width = layout.dialo
             </View>
           )}
         </View>
+        <Backdrop onPress={onClose} />
       </View>
     </Modal>
   );

@@ -1,5 +1,6 @@
 import { useRef, useState } from 'react';
-import { Modal, Pressable, View } from 'react-native';
+import { Modal, View } from 'react-native';
+import { Backdrop } from './Backdrop';
 import { Button, IconButton } from './Button';
 import { Icon, type IconName } from './Icon';
 import { Press, type PressState } from './Press';
@@ -69,12 +70,6 @@ export function Menu({
           onRequestClose={() => setAt(null)}
           {...({ 'aria-label': label } as object)}
         >
-          <Pressable
-            aria-hidden
-            tabIndex={-1}
-            onPress={() => setAt(null)}
-            style={{ position: 'absolute', top: 0, left: 0, right: 0, bottom: 0 }}
-          />
           <View
             role="menu"
             aria-label={label}
@@ -120,6 +115,7 @@ export function Menu({
               </Press>
             ))}
           </View>
+          <Backdrop onPress={() => setAt(null)} />
         </Modal>
       )}
     </View>

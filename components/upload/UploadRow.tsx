@@ -35,19 +35,15 @@ export function uploadWords(item: UploadItem): string {
 }
 
 /** A file on its way from this page. */
-export function UploadRow({ item }: { item: UploadItem }) {
-  const { pause, resume, cancel, dismiss } = useUploads();
+export function UploadRow({ item, onDismiss }: { item: UploadItem; onDismiss: () => void }) {
+  const { pause, resume, cancel } = useUploads();
   if (item.status === 'refused' && item.problem) {
     const known = typeof item.problem.cubeId === 'string' ? item.problem.cubeId : null;
     return (
       <FileRow
         name={item.fileName}
         controls={
-          <IconButton
-            icon="close"
-            label={`Take ${item.fileName} off the list`}
-            onPress={() => dismiss(item.id)}
-          />
+          <IconButton icon="close" label={`Take ${item.fileName} off the list`} onPress={onDismiss} />
         }
       >
         <ProblemNotice problem={item.problem}>
@@ -62,11 +58,7 @@ export function UploadRow({ item }: { item: UploadItem }) {
       name={item.fileName}
       controls={
         item.status === 'done' ? (
-          <IconButton
-            icon="close"
-            label={`Take ${item.fileName} off the list`}
-            onPress={() => dismiss(item.id)}
-          />
+          <IconButton icon="close" label={`Take ${item.fileName} off the list`} onPress={onDismiss} />
         ) : (
           <>
             {moving ? (

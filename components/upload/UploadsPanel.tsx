@@ -46,7 +46,13 @@ export function UploadsPanel({ regionId }: { regionId: string }) {
       {mine.map((item, i) => (
         <Fragment key={item.id}>
           {i > 0 && <Rule />}
-          <UploadRow item={item} />
+          <UploadRow
+            item={item}
+            onDismiss={() => {
+              dismiss(item.id);
+              if (item.status === 'refused' && item.uploadId) hide(item.uploadId); // the server lists it for a day
+            }}
+          />
         </Fragment>
       ))}
       {others.map((state, i) => (
