@@ -52,7 +52,7 @@ function scaleFor(values: Float32Array): Scale {
 }
 
 /** The cards of a synthetic cube, in the order of the file. */
-export function headerEntries(recipe: CubeRecipe, scale: Scale | null = null): HeaderEntry[] {
+function headerEntries(recipe: CubeRecipe, scale: Scale | null = null): HeaderEntry[] {
   const { shape, beam } = recipe;
   const { sky, spectral } = wcsOfRecipe(recipe);
   const entry = (keyword: string, value: HeaderEntry['value'], comment?: string) => ({
