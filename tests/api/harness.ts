@@ -150,3 +150,13 @@ export async function until<T>(
     await new Promise((resolve) => setTimeout(resolve, 50));
   }
 }
+
+/** For supertest: the body as bytes. */
+export const binaryBody = (
+  res: supertest.Response,
+  done: (error: Error | null, body: Buffer) => void,
+): void => {
+  const parts: Buffer[] = [];
+  const stream = res as unknown as NodeJS.ReadableStream; // what superagent hands over, whatever its types say
+  stream.on('data', (d: Buffer) => parts.push(d)).on('end', () => done(null, Buffer.concat(parts)));
+};

@@ -1,6 +1,6 @@
 import { cubeFile } from './cubeFile';
 import { freshCube, newRegion, readyCube } from './fixture';
-import { startProduct, until, type Product, type SignedIn } from './harness';
+import { binaryBody, startProduct, until, type Product, type SignedIn } from './harness';
 import { upload } from './uploading';
 
 let product: Product;
@@ -53,18 +53,13 @@ test('statistics, spectrum and total intensity are those of the numbers in the f
   const spectrum = (await lead.get(`/cubes/${cubeId}/spectrum?x=7&y=3`)).body;
   expect(spectrum.brightness[2]).toBeNull();
   expect(spectrum.brightness[4]).toBeCloseTo(4.07, 6);
-  const total = await lead.get(`/cubes/${cubeId}/total`).buffer(true).parse(binary).expect(200);
+  const total = await lead.get(`/cubes/${cubeId}/total`).buffer(true).parse(binaryBody).expect(200);
   const values = new Uint16Array(total.body.buffer, total.body.byteOffset, 480);
   expect(values[6 * 24 + 5]).toBe(Number(total.headers['plane-blank']));
   const at = (x: number, y: number) =>
     Number(total.headers['plane-offset']) + Number(total.headers['plane-scale']) * values[y * 24 + x]!;
   expect(at(10, 3)).toBeCloseTo(0 + 1 + 3 + 4 + 5 + 6 + 7 + 7 * 0.1, 3);
 });
-
-const binary = (res: NodeJS.ReadableStream, done: (e: Error | null, b: Buffer) => void) => {
-  const parts: Buffer[] = [];
-  res.on('data', (d: Buffer) => parts.push(d)).on('end', () => done(null, Buffer.concat(parts)));
-};
 
 test('a cube of blanks fails with the cause kept on it, and can be tried again', async () => {
   const { cubeId } = await upload(lead, product.url, regionId, cubeFile({ ...small, value: () => NaN }));

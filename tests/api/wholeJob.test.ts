@@ -1,6 +1,6 @@
 /** The job of the product from a region to a row of the catalogue, over HTTP and the real queue. */
 import { cubeFile, marksOnRing, SHELL } from './cubeFile';
-import { startProduct, until, type Product, type SignedIn } from './harness';
+import { binaryBody, startProduct, until, type Product, type SignedIn } from './harness';
 import { upload } from './uploading';
 
 let product: Product;
@@ -44,10 +44,7 @@ test('region, upload, ingest, look, mark, fit, adopt, compare, download', async 
   const plane = await lead
     .get(`/cubes/${cubeId}/channels/16/plane`)
     .buffer(true)
-    .parse((res, done) => {
-      const parts: Buffer[] = [];
-      res.on('data', (d: Buffer) => parts.push(d)).on('end', () => done(null, Buffer.concat(parts)));
-    })
+    .parse(binaryBody)
     .expect(200);
   const values = new Uint16Array(plane.body.buffer, plane.body.byteOffset, 64 * 60);
   const [scale, offset] = [Number(plane.headers['plane-scale']), Number(plane.headers['plane-offset'])];

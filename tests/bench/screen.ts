@@ -30,7 +30,8 @@ export async function benchScreen(): Promise<void> {
   const browser = await launch();
   try {
     const { cubeId } = await product.ingest(benchCube());
-    console.log(`${NAME}; Chromium ${browser.version()}, server, worker and browser on this machine\n`);
+    console.log(`${NAME}; Chromium ${browser.version()}`);
+    console.log('Server, worker and browser share this machine; drawn without a graphics processor.\n');
     const looks = [['first look, cold cache', 'drawn', 'on screen', 'slowest', 'in full', '']];
     const steps = [['next channel, warm cache', 'drawn', 'on screen', '95th of 100', 'slowest', '']];
     for (const { name, options } of windows) {

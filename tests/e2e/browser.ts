@@ -1,0 +1,97 @@
+/** A whole product with its built client, and people who use it in Chromium. */
+import { mkdirSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import type { Browser, BrowserContext, Page } from 'playwright-core';
+import { launch } from '@/scripts/chromium';
+import { startProduct, type Product } from '../api/harness';
+
+export interface Screen {
+  name: string;
+  width: number;
+  height: number;
+  touch: boolean;
+  theme: 'dark' | 'light';
+}
+export const PHONE: Screen = { name: 'phone', width: 390, height: 844, touch: true, theme: 'dark' };
+export const WIDE: Screen = { name: 'wide', width: 1440, height: 900, touch: false, theme: 'light' };
+
+const SHOTS = join(__dirname, 'screens');
+const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
+
+export interface Stage {
+  product: Product;
+  browser: Browser;
+  open(screen: Screen, login?: string): Promise<{ page: Page; context: BrowserContext; errors: string[] }>;
+  close(): Promise<void>;
+}
+
+export async function openStage(env: Record<string, string> = {}): Promise<Stage> {
+  const product = await startProduct(env);
+  await product.startWorker();
+  const browser = await launch();
+  return {
+    product,
+    browser,
+    async open(screen, login) {
+      const context = await browser.newContext({
+        viewport: { width: screen.width, height: screen.height },
+        hasTouch: screen.touch,
+        colorScheme: screen.theme,
+        baseURL: product.url,
+        acceptDownloads: true,
+      });
+      const page = await context.newPage();
+      const errors: string[] = [];
+      page.on('pageerror', (error) => errors.push(String(error)));
+      if (login) await signIn(page, login);
+      return { page, context, errors };
+    },
+    async close() {
+      await browser.close();
+      await product.stop();
+    },
+  };
+}
+
+/** The way a person goes: the button, the provider's page, and back. */
+export async function signIn(page: Page, login: string): Promise<void> {
+  await page.goto('/sign-in');
+  await page
+    .getByRole('link', { name: /^Sign in/ })
+    .or(page.getByRole('button', { name: /^Sign in/ }))
+    .first()
+    .click();
+  await page.waitForURL(/local-sign-in/);
+  await page.getByLabel(/login/i).fill(login);
+  await page.getByLabel(/login/i).press('Enter');
+  await page.waitForURL((url) => !/local-sign-in|auth/.test(url.pathname));
+}
+
+/** Kept for a look by eye; no test compares pixels. */
+export async function shot(page: Page, screen: Screen, name: string): Promise<void> {
+  mkdirSync(SHOTS, { recursive: true });
+  await page.screenshot({ path: join(SHOTS, `${name}-${screen.name}.png`) });
+}
+
+interface Violation {
+  id: string;
+  impact: string;
+  nodes: { html: string; failureSummary: string }[];
+}
+
+/** Serious and critical findings of axe-core on the page as it stands. */
+export async function violations(page: Page): Promise<string[]> {
+  await page.evaluate(AXE);
+  const found = (await page.evaluate(
+    `axe.run(document, { resultTypes: ['violations'] }).then((r) => r.violations)`,
+  )) as Violation[];
+  return found
+    .filter((v) => ['serious', 'critical'].includes(v.impact))
+    .flatMap((v) =>
+      v.nodes.map((n) => `${v.id}: ${n.html.slice(0, 160)} — ${n.failureSummary.replace(/\s+/g, ' ')}`),
+    );
+}
+
+/** What the API says to the person of this page. */
+export const api = async <T>(page: Page, path: string): Promise<T> =>
+  (await (await page.request.get(`/api/v1${path}`)).json()) as T;
