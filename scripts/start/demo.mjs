@@ -28,7 +28,7 @@ export function signInLines(root, url) {
   const people = JSON.parse(readFileSync(file, 'utf8'));
   const width = Math.max(...people.map((p) => p.name.length));
   return [
-    `  Open ${url}, choose “Sign in with GitHub”, and then one of the demo people:`,
+    `  Open ${url}, choose “Sign in locally”, and then one of the demo people:`,
     ...people.map((p) => `    ${p.name.padEnd(width)}  ${p.role.padEnd(8)}  (login ${p.login})`),
     '  GitHub is played by a stand-in on this machine: no account, no password. Any other login is a new person.',
   ];
