@@ -9,7 +9,7 @@
  * every figure, so the load stands beside them.
  */
 import { ensurePrograms } from '../../scripts/machine/debian.mjs';
-import { explain } from '../../scripts/machine/stop.mjs';
+import { Stop, explain } from '../../scripts/machine/stop.mjs';
 import { benchFit } from './fit';
 import { benchIngest } from './ingest';
 import { describeMachine, load } from './machine';
@@ -27,7 +27,7 @@ const parts: Record<string, { programs: Parameters<typeof ensurePrograms>[0]; ru
 
 async function main(names: string[]) {
   const unknown = names.find((name) => !(name in parts));
-  if (unknown) throw new Error(`There is no part ${unknown}. The parts: ${Object.keys(parts).join(', ')}.`);
+  if (unknown) throw new Stop(`There is no part ${unknown}. The parts: ${Object.keys(parts).join(', ')}.`);
   const chosen = names.length > 0 ? names : Object.keys(parts);
   await ensurePrograms([...new Set(chosen.flatMap((name) => parts[name]!.programs))], say);
   say(describeMachine());

@@ -41,7 +41,9 @@ export const stopAll = () => Promise.all([...open].map((stop) => stop()));
 export async function startBenchProduct(): Promise<BenchProduct> {
   const scratch = mkdtempSync(join(tmpdir(), 'outswell-bench-'));
   chmodSync(scratch, 0o711); // the database's account must pass through
-  const undo: (() => unknown)[] = [() => rmSync(scratch, { recursive: true, force: true, maxRetries: 5 })];
+  const clean = () => rmSync(scratch, { recursive: true, force: true, maxRetries: 5 });
+  process.once('exit', clean); // the browser's library ends the process by itself on Ctrl-C
+  const undo: (() => unknown)[] = [clean];
   const stop = async () => {
     if (!open.delete(stop)) return;
     for (const step of undo.reverse()) await step();
