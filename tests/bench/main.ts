@@ -38,11 +38,16 @@ async function main(names: string[]) {
   say(`\nload at the end ${load()}`);
 }
 
+let interrupted = false;
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const)
-  process.once(signal, () => void stopAll().finally(() => process.exit(130)));
+  process.once(signal, () => {
+    interrupted = true; // what then fails was stopped under its hands
+    void stopAll().finally(() => process.exit(130));
+  });
 
 main(process.argv.slice(2))
   .catch((error) => {
+    if (interrupted) return;
     console.error(explain(error));
     process.exitCode = 1;
   })
