@@ -221,7 +221,7 @@ function Listed({
       }}
     >
       {table}
-      <View style={[{ gap: space(4) }, beside && { width: space(100) }]}>
+      <View style={[{ gap: space(4) }, beside && { width: space(97) }]}>
         {chart}
         {bar}
       </View>

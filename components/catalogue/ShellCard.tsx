@@ -29,9 +29,9 @@ export function ShellCard({
   const facts = [
     { key: 'theta', name: named('theta'), unit: '°', quantity: m?.theta },
     { key: 'radius', name: named('radius'), unit: 'pc', quantity: m?.radius },
-    { key: 'age', name: m ? `${m.ageFactor} R/v` : 'age', unit: 'Myr', quantity: m?.age },
     { key: 'vSys', name: named('vSys'), unit: 'km/s', quantity: m?.vSys },
     { key: 'vExp', name: named('vExp'), unit: 'km/s', quantity: m?.vExp },
+    { key: 'age', name: m ? `${m.ageFactor} R/v` : 'age', unit: 'Myr', quantity: m?.age },
   ];
   return (
     <View

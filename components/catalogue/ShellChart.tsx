@@ -11,7 +11,7 @@ import {
 import { formatQuantity, plainNumber } from '@/shared/physics/quantity';
 import { useTheme } from '../ui/theme';
 import { fonts, typeScale, type Colors } from '../ui/tokens';
-import { ageLines, chartDomain, logTicks, type ChartPoint } from './chartScale';
+import { ageLines, chartDomain, logTicks, type ChartDomain, type ChartPoint } from './chartScale';
 import { glyphOf, glyphPath } from './glyphs';
 
 export interface ShellChartProps {
@@ -90,9 +90,10 @@ export default function ShellChart({
           labels={({ index }: { index?: number | string }) => (Number(index) === 1 ? plainNumber(age) : '')}
           labelComponent={
             <VictoryLabel
-              dy={-4}
-              dx={-8}
-              textAnchor="end"
+              dy={2}
+              {...(nearLeft(ends[1]!.x, domain)
+                ? { dx: 8, textAnchor: 'start' }
+                : { dx: -8, textAnchor: 'end' })}
               style={{ fontFamily: fonts.mono, fontSize, fill: color.model }}
             />
           }
@@ -120,6 +121,10 @@ export default function ShellChart({
     </VictoryChart>
   );
 }
+
+/** A label to the left of such a place would be cut off. */
+const nearLeft = (x: number, { x: [low, high] }: ChartDomain): boolean =>
+  Math.log(x / low) < 0.12 * Math.log(high / low);
 
 interface PointLinkProps {
   color: Colors;

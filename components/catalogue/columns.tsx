@@ -109,7 +109,7 @@ export function catalogueColumns({
     number('radius', 'R, pc', 24),
     number('vSys', 'v sys, km/s', 29, indexed('v', 'sys', 'km/s')),
     number('vExp', 'v exp, km/s', 28, indexed('v', 'exp', 'km/s')),
-    number('age', `age ${ageFactor} R/v, Myr`, 26, <HeadText>{`${ageFactor} R/v, Myr`}</HeadText>),
+    number('age', `age ${ageFactor} R/v, Myr`, 29, <HeadText>{`${ageFactor} R/v, Myr`}</HeadText>),
     {
       key: 'quality',
       label: 'χ²/dof',
