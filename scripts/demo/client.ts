@@ -24,15 +24,24 @@ export interface Client {
   list<T>(path: string): Promise<T[]>;
   /** Sends a file by the resumable protocol; the id of the cube it became. */
   upload(regionId: string, fileName: string, bytes: Uint8Array): Promise<string>;
+  /** Gives up an upload that was begun. */
+  cancelUpload(uploadId: string): Promise<void>;
 }
 
 /** The authorization-code flow as a browser walks it: provider page, choice, code, callback, session. */
 export async function signIn(base: string, login: string): Promise<Client> {
   const cookies = new Map<string, string>();
+  const cookieHeader = () => [...cookies].map(([name, value]) => `${name}=${value}`).join('; ');
   const request = async (path: string, init: RequestInit = {}): Promise<Response> => {
-    const cookie = [...cookies].map(([name, value]) => `${name}=${value}`).join('; ');
+    const cookie = cookieHeader();
     const headers = { ...(init.headers as Record<string, string>), ...(cookie && { cookie }) };
-    const response = await fetch(new URL(path, base), { ...init, headers, redirect: 'manual' });
+    const response = await fetch(new URL(path, base), { ...init, headers, redirect: 'manual' }).catch(
+      (error: Error) => {
+        throw new Error(
+          `${base} does not answer (${(error.cause as Error | undefined)?.message ?? error.message})`,
+        );
+      },
+    );
     for (const line of response.headers.getSetCookie()) {
       const [, name, value] = /^([^=]+)=([^;]*)/.exec(line) ?? [];
       if (name) cookies.set(name, value!);
@@ -61,6 +70,8 @@ export async function signIn(base: string, login: string): Promise<Client> {
   const { csrfToken } = await call<{ csrfToken: string }>('GET', '/me');
   csrf = csrfToken;
 
+  const uploadHeaders = () => ({ cookie: cookieHeader(), 'x-csrf-token': csrf });
+
   return {
     login,
     get: (path) => call('GET', path),
@@ -80,11 +91,10 @@ export async function signIn(base: string, login: string): Promise<Client> {
     upload: (regionId, fileName, bytes) =>
       sendFile(new URL('/api/v1/uploads', base), Buffer.from(bytes.buffer, bytes.byteOffset, bytes.length), {
         metadata: { filename: fileName, regionId },
-        headers: {
-          cookie: [...cookies].map(([name, value]) => `${name}=${value}`).join('; '),
-          'x-csrf-token': csrf,
-        },
+        headers: uploadHeaders(),
       }),
+    cancelUpload: (id) =>
+      Upload.terminate(new URL(`/api/v1/uploads/${id}`, base).href, { headers: uploadHeaders() }),
   };
 }
 

@@ -1,4 +1,4 @@
-import type { Cube } from '@/shared/contract/cubes';
+import type { Cube, UploadState } from '@/shared/contract/cubes';
 import { makeCube } from '@/shared/synthetic/makeCube';
 import { writeFits } from '@/shared/synthetic/writeFits';
 import { Refused, type Client } from './client';
@@ -8,6 +8,8 @@ import type { PlannedCube } from './plan';
 /** The planned cube in its region: the one that is there, or made and sent now. */
 export async function cubeInRegion(who: Client, regionId: string, planned: PlannedCube): Promise<Cube> {
   const { fileName, recipe } = planned;
+  for (const begun of await who.list<UploadState>(`/regions/${regionId}/uploads`))
+    if (begun.mine && begun.fileName === fileName) await who.cancelUpload(begun.id); // by a run that was killed
   const there = await who.list<Cube>(`/regions/${regionId}/cubes`);
   const found = there.find((cube) => cube.fileName === fileName);
   if (found) return readAgain(who, found);
