@@ -8,7 +8,8 @@ import { Field } from '../ui/Field';
 import { count } from '../ui/format';
 import { Text } from '../ui/Text';
 import { space } from '../ui/tokens';
-import { narrowing, RANGES, STATUSES, toggled, type Filters } from './filters';
+import { SHELL_STATUS } from '@/shared/contract/words';
+import { narrowing, RANGES, toggled, type Filters } from './filters';
 
 /** Search and filters of the catalogue; each change goes into the address. */
 export function FilterBar({
@@ -72,7 +73,7 @@ export function FilterBar({
             ))}
           </Choice>
           <Choice title="Status">
-            {STATUSES.map((s) => (
+            {SHELL_STATUS.map((s) => (
               <ToggleChip
                 key={s}
                 role="checkbox"

@@ -1,12 +1,12 @@
-import type { CatalogueQuery, Shell } from '@/shared/contract/shells';
+import { CATALOGUE_SORT, SHELL_STATUS, type CatalogueSort, type ShellStatus } from '@/shared/contract/words';
 
-export type SortKey = CatalogueQuery['sort'];
+export type SortKey = CatalogueSort;
 /** What the catalogue's address carries: the same words as the API's query, so that a link and a script agree. */
 export interface Filters {
   sort: SortKey;
   order: 'up' | 'down';
   region: string[];
-  status: Shell['status'][];
+  status: ShellStatus[];
   search: string;
   vExpMin: string;
   vExpMax: string;
@@ -17,27 +17,6 @@ export interface Filters {
 }
 export type AddressParams = Record<string, string | string[] | undefined>;
 
-const SORTS: readonly SortKey[] = [
-  'name',
-  'designation',
-  'region',
-  'l',
-  'b',
-  'theta',
-  'radius',
-  'vSys',
-  'vExp',
-  'age',
-  'quality',
-  'status',
-];
-export const STATUSES: readonly Shell['status'][] = [
-  'draft',
-  'in review',
-  'returned',
-  'accepted',
-  'withdrawn',
-];
 export const RANGES = ['vExpMin', 'vExpMax', 'radiusMin', 'radiusMax'] as const;
 /** Side by side on a screen. */
 export const MOST_PICKED = 4;
@@ -52,11 +31,11 @@ const numeric = (text: string): string =>
 export function filtersOf(params: AddressParams): Filters {
   const sort = one(params.sort) as SortKey;
   return {
-    sort: SORTS.includes(sort) ? sort : 'designation',
+    sort: CATALOGUE_SORT.includes(sort) ? sort : 'designation',
     order: one(params.order) === 'down' ? 'down' : 'up',
     region: list(params.region),
-    status: list(params.status).filter((s): s is Shell['status'] =>
-      (STATUSES as readonly string[]).includes(s),
+    status: list(params.status).filter((s): s is ShellStatus =>
+      (SHELL_STATUS as readonly string[]).includes(s),
     ),
     search: one(params.search).slice(0, 80),
     vExpMin: numeric(one(params.vExpMin)),

@@ -1,3 +1,4 @@
+import { listenToPointers } from '@/components/map/pointerEvents';
 import { useEffect, useRef, type RefObject } from 'react';
 import {
   AT_REST,
@@ -105,20 +106,10 @@ export function usePointerGestures(element: RefObject<HTMLElement | null>, props
       take({ type: 'wheel', at: place(e), delta: e.deltaY * unit, pinch: e.ctrlKey });
     };
 
-    target.addEventListener('pointerdown', onDown);
-    target.addEventListener('pointermove', onMove);
-    target.addEventListener('pointerup', onUp);
-    target.addEventListener('pointercancel', onCancel);
-    target.addEventListener('pointerleave', onLeave);
-    target.addEventListener('wheel', onWheel, { passive: false });
+    const unlisten = listenToPointers(target, { onDown, onMove, onUp, onCancel, onLeave, onWheel });
     return () => {
       cancelAnimationFrame(frame);
-      target.removeEventListener('pointerdown', onDown);
-      target.removeEventListener('pointermove', onMove);
-      target.removeEventListener('pointerup', onUp);
-      target.removeEventListener('pointercancel', onCancel);
-      target.removeEventListener('pointerleave', onLeave);
-      target.removeEventListener('wheel', onWheel);
+      unlisten();
     };
   }, [element]);
 }

@@ -1,3 +1,4 @@
+import { listenToPointers } from '@/components/map/pointerEvents';
 import { useEffect, useRef, type RefObject } from 'react';
 import { flickedBy, flickLasts, speedOf, type Sample } from '@/components/strip/flick';
 import { held, positionAt, type StripLayout } from '@/components/strip/stripLayout';
@@ -108,18 +109,10 @@ export function useStripDrag(element: RefObject<HTMLElement | null>, drag: Strip
       settle();
     };
 
-    target.addEventListener('pointerdown', onDown);
-    target.addEventListener('pointermove', onMove);
-    target.addEventListener('pointerup', onUp);
-    target.addEventListener('pointercancel', onCancel);
-    target.addEventListener('wheel', onWheel, { passive: false });
+    const unlisten = listenToPointers(target, { onDown, onMove, onUp, onCancel, onWheel });
     return () => {
       cancelAnimationFrame(frame);
-      target.removeEventListener('pointerdown', onDown);
-      target.removeEventListener('pointermove', onMove);
-      target.removeEventListener('pointerup', onUp);
-      target.removeEventListener('pointercancel', onCancel);
-      target.removeEventListener('wheel', onWheel);
+      unlisten();
     };
   }, [element]);
 }

@@ -1,8 +1,7 @@
 import { z } from 'zod';
 import { Id, Time, text } from './common';
 import { MODELS, Parameter } from './fits';
-
-export const SHELL_STATUS = ['draft', 'in review', 'returned', 'accepted', 'withdrawn'] as const;
+import { CATALOGUE_SORT, SHELL_STATUS } from './words';
 
 export const ShellDraft = z
   .strictObject({ name: text(80), note: text(2000, 0).default('') })
@@ -65,20 +64,6 @@ export const Shell = z
   .meta({ id: 'Shell' });
 
 const number = z.coerce.number().optional();
-export const CATALOGUE_SORT = [
-  'name',
-  'designation',
-  'region',
-  'l',
-  'b',
-  'theta',
-  'radius',
-  'vSys',
-  'vExp',
-  'age',
-  'quality',
-  'status',
-] as const;
 export const CatalogueQuery = z.object({
   sort: z.enum(CATALOGUE_SORT).default('designation'),
   order: z.enum(['up', 'down']).default('up'),
