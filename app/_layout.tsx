@@ -1,5 +1,6 @@
 import { useFonts } from 'expo-font';
 import { Slot } from 'expo-router';
+import { View } from 'react-native';
 import { SWRConfig } from 'swr';
 import { CommandsProvider } from '@/components/ui/commands/CommandsProvider';
 import { ThemeProvider } from '@/components/ui/theme';
@@ -18,14 +19,18 @@ const files = {
 
 export default function RootLayout() {
   const [loaded, failed] = useFonts(files);
-  if (!loaded && !failed) return null; // a moment; text set twice would jump
+  // The navigator must be there from the first render on, and its data may come meanwhile; but text that is set twice
+  // would jump, so nothing is seen for the moment that the fonts take.
+  const seen = loaded || failed !== null;
   return (
     <SWRConfig value={cacheOptions}>
       <ThemeProvider>
         <ToastProvider>
           <CommandsProvider>
             <UploadsProvider>
-              <Slot />
+              <View style={{ flex: 1, opacity: seen ? 1 : 0 }}>
+                <Slot />
+              </View>
             </UploadsProvider>
           </CommandsProvider>
         </ToastProvider>

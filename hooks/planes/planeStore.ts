@@ -96,8 +96,10 @@ export function planeStore(options: PlaneStoreOptions): PlaneStore {
         loading.delete(key);
         controller.abort();
       }
+    // until something of the wanted channel is there, nothing else competes with it for the line
+    const blank = wanted !== null && !sizes.some((s) => held.has(keyOf(wanted!.channel, s)));
     for (const { channel, size } of list) {
-      if (loading.size >= lanes) break;
+      if (loading.size >= (blank ? 1 : lanes)) break;
       const key = keyOf(channel, size);
       if (covered(channel, size) || loading.has(key) || failed.has(key)) continue;
       const controller = new AbortController();

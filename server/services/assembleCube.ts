@@ -79,7 +79,7 @@ function overall(channels: ChannelDraft[]): CubeStatistics {
   const known = (pick: (c: ChannelDraft) => number | null) => channels.map(pick).filter((v) => v !== null);
   const noise = known((c) => c.rms).sort((a, b) => a - b);
   const extreme = (values: number[], best: (a: number, b: number) => number) =>
-    values.length ? values.reduce(best) : null;
+    values.length ? values.reduce((a, b) => best(a, b)) : null;
   return {
     minimum: extreme(
       known((c) => c.minimum),

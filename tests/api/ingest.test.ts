@@ -41,6 +41,9 @@ test('statistics, spectrum and total intensity are those of the numbers in the f
   const { cubeId } = await upload(lead, product.url, regionId, cubeFile({ ...small, value }));
   const cube = await settled(cubeId);
   expect(cube.statistics.blanks).toBe(24 * 20 + 7);
+  expect(cube.statistics.minimum).toBe(0);
+  expect(cube.statistics.maximum).toBeCloseTo(7.23, 6);
+  expect(cube.statistics.rms).toBeCloseTo(1.4826 * 0.06, 6);
   const { items } = (await lead.get(`/cubes/${cubeId}/channels`)).body;
   expect(items[2]).toMatchObject({ minimum: null, maximum: null, mean: null, rms: null, blanks: 480 });
   // 479 pixels: 20 rows of 0 … 23 hundredths, less one pixel of 5 hundredths
