@@ -24,7 +24,6 @@ exports.up = (knex) =>
       name text not null check (length(name) between 1 and 200),
       file_name text not null,
       file_key text not null unique,
-      planes_key text,
       size_bytes bigint not null check (size_bytes >= 0),
       checksum text not null check (checksum ~ '^[0-9a-f]{64}$'),
       head jsonb,
@@ -62,7 +61,7 @@ exports.up = (knex) =>
 
     create table cube_images (
       cube_id uuid not null references cubes,
-      kind text not null check (kind in ('total', 'strip', 'mean-spectrum')),
+      kind text not null check (kind in ('total', 'strip')),
       meta jsonb not null,
       bytes bytea not null,
       primary key (cube_id, kind)

@@ -45,11 +45,7 @@ export async function assemble(head: CubeHead, parts: Reduced[], signal: AbortSi
     statistics: overall(channels),
     window,
     channels,
-    images: [
-      totalImage(head, reduced, wcs.velocityStep),
-      { kind: 'strip', ...strip },
-      meanSpectrum(channels),
-    ],
+    images: [totalImage(head, reduced, wcs.velocityStep), { kind: 'strip', ...strip }],
   };
 }
 
@@ -111,9 +107,4 @@ function totalImage(head: CubeHead, reduced: Reduced[], channelWidth: number): I
   const { values, ...scale } = quantise(total);
   const unit = `${head.unit ?? head.bunit ?? ''} km/s`.trim();
   return { kind: 'total', meta: { nx, ny, unit, ...scale }, bytes: Buffer.from(values.buffer) };
-}
-
-function meanSpectrum(channels: ChannelDraft[]): ImageDraft {
-  const values = Float64Array.from(channels, (c) => c.mean ?? NaN);
-  return { kind: 'mean-spectrum', meta: { channels: values.length }, bytes: Buffer.from(values.buffer) };
 }

@@ -45,7 +45,7 @@ export async function ingestCube(
     state.activity = 'drawing thumbnails';
     const result = await assemble(head, reduced, stop.signal);
     await parts.db.transaction(async (trx) => {
-      if (!(await finishCube(trx, cubeId, holder, { planesKey: null, ...result }))) return;
+      if (!(await finishCube(trx, cubeId, holder, result))) return;
       await appendEvent(trx, { teamId: row.teamId, personId: null, kind: 'cube.ready', subjectId: cubeId });
       await announce(trx, row.teamId, {
         subject: 'cube',

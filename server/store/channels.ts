@@ -26,7 +26,7 @@ export interface CubeImage {
 export async function findImage(
   db: Db,
   cubeId: string,
-  kind: 'total' | 'strip' | 'mean-spectrum',
+  kind: 'total' | 'strip',
 ): Promise<CubeImage | undefined> {
   const found = await rows<CubeImage>(
     db,

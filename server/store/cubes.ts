@@ -15,7 +15,6 @@ export interface CubeRow {
   name: string;
   fileName: string;
   fileKey: string;
-  planesKey: string | null;
   sizeBytes: number;
   checksum: string;
   head: CubeHead | null;
@@ -35,7 +34,7 @@ export interface CubeRow {
 
 const columns = `
   cubes.id, regions.team_id as "teamId", cubes.region_id as "regionId", cubes.name, cubes.file_name as "fileName",
-  cubes.file_key as "fileKey", cubes.planes_key as "planesKey", cubes.size_bytes::float8 as "sizeBytes",
+  cubes.file_key as "fileKey", cubes.size_bytes::float8 as "sizeBytes",
   cubes.checksum, cubes.head, cubes.status, cubes.progress, cubes.activity, cubes.problem, cubes.statistics,
   cubes.window_low as "windowLow", cubes.window_high as "windowHigh", cubes.created_by as "createdById",
   people.name as "createdByName", cubes.created_at as "createdAt", cubes.ready_at as "readyAt",

@@ -49,7 +49,7 @@ export interface ChannelDraft {
   thumbnail: Buffer;
 }
 export interface ImageDraft {
-  kind: 'total' | 'strip' | 'mean-spectrum';
+  kind: 'total' | 'strip';
   meta: Record<string, unknown>;
   bytes: Buffer;
 }
@@ -61,7 +61,6 @@ export async function finishCube(
   holder: string,
   result: {
     head: CubeHead;
-    planesKey: string | null;
     statistics: CubeStatistics;
     window: [number, number];
     channels: ChannelDraft[];
@@ -71,11 +70,10 @@ export async function finishCube(
   const found = await rows(
     db,
     `update cubes set status = 'ready', progress = 1, activity = null, ready_at = now(), lease_holder = null,
-            lease_until = null, head = ?::jsonb, planes_key = ?, statistics = ?::jsonb, window_low = ?, window_high = ?
+            lease_until = null, head = ?::jsonb, statistics = ?::jsonb, window_low = ?, window_high = ?
      where id = ? and lease_holder = ? and status = 'ingesting' returning id`,
     [
       JSON.stringify(result.head),
-      result.planesKey,
       JSON.stringify(result.statistics),
       result.window[0],
       result.window[1],

@@ -265,3 +265,20 @@ test('a connection cut in the middle of a chunk leaves a whole upload behind', a
   const outcome = await upload(lead, product.url, regionId, bytes, { uploadUrl: `${product.url}${path}` });
   expect(outcome).toMatchObject({ problem: null, cubeId: expect.any(String) });
 });
+
+test('a file that the disk cannot hold is refused before its bytes, and says how much room there is', async () => {
+  const roomy = await startProduct({ MAX_UPLOAD_BYTES: String(1e15) });
+  const person = await roomy.signIn('lena');
+  const id = await newRegion(person);
+  const encoded = (text: string) => Buffer.from(text).toString('base64');
+  const answer = await person.agent.post('/api/v1/uploads').set({
+    'X-CSRF-Token': person.csrf,
+    'Tus-Resumable': '1.0.0',
+    'Upload-Length': String(9e14),
+    'Upload-Metadata': `filename ${encoded('huge.fits')},regionId ${encoded(id)}`,
+  });
+  expect(answer.status).toBe(507);
+  expect(answer.body).toMatchObject({ type: '/problems/disk-full', detail: expect.stringMatching(/MB left/) });
+  expect((await person.get(`/regions/${id}/uploads`)).body.total).toBe(0);
+  await roomy.stop();
+});
