@@ -2,7 +2,7 @@ import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
 import { Text } from '@/components/ui/Text';
 import { space } from '@/components/ui/tokens';
-import { labelOf } from '@/shared/image/ticks';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 
 /** The velocity shown, large; the channel beside it. */
 export function Headline({ compact }: { compact?: boolean }) {
@@ -17,7 +17,7 @@ export function Headline({ compact }: { compact?: boolean }) {
       }}
     >
       <Text mono size={compact ? 'title' : 'display'} numberOfLines={1}>
-        {labelOf(velocity, 1)}
+        {velocityLabel(velocity, axes.spectral.channelWidth)}
       </Text>
       <View>
         <Text mono size="small" tone={compact ? 'quiet' : 'text'}>

@@ -9,7 +9,7 @@ import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { radius, space } from '@/components/ui/tokens';
 import type { ChannelPlane } from '@/hooks/planes/decodePlane';
-import { labelOf } from '@/shared/image/ticks';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 
 /** The channel map with its readout and what there is to say about it. */
 export function MapPanel({ round = true }: { round?: boolean }) {
@@ -23,7 +23,7 @@ export function MapPanel({ round = true }: { round?: boolean }) {
   const late = useLate(!plane && !problem);
   const own = s.marksByChannel.get(s.channel) ?? 0;
   const label =
-    `Channel map at ${labelOf(s.velocity, 1)} kilometres per second, channel ${s.channel + 1} of ${s.axes.channels}` +
+    `Channel map at ${velocityLabel(s.velocity, s.axes.spectral.channelWidth)} kilometres per second, channel ${s.channel + 1} of ${s.axes.channels}` +
     `${own > 0 ? `, ${own} mark${own === 1 ? '' : 's'}` : ''}.` +
     `${s.marking ? ' Arrow keys move the crosshair, Enter places a mark.' : ''}`;
   return (

@@ -10,7 +10,7 @@ import { Press, type PressState } from '@/components/ui/Press';
 import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { hairline, space, touch } from '@/components/ui/tokens';
-import { labelOf } from '@/shared/image/ticks';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 
 const ARROWS: Record<string, readonly [number, number]> = {
   ArrowLeft: [-1, 0],
@@ -32,6 +32,7 @@ export function MarkList() {
   const digits = coordinateDigits(perPixel);
   // A tenth of the beam, or half a pixel where the file does not say how wide it is.
   const step = axes.beam ? Math.max(axes.beam.major / 10 / perPixel, 0.05) : 0.5;
+  const title = `Marks at ${velocityLabel(velocity, axes.spectral.channelWidth)} km/s`;
   if (own.length === 0) return null;
 
   const onKeyDown =
@@ -57,12 +58,12 @@ export function MarkList() {
   return (
     <View style={{ gap: space(1) }}>
       <View style={{ flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' }}>
-        <SectionTitle>{`Marks at ${labelOf(velocity, 1)} km/s`}</SectionTitle>
+        <SectionTitle>{title}</SectionTitle>
         <Text size="small" tone="quiet">
           {count(own.length, 'mark')}
         </Text>
       </View>
-      <View role="list" aria-label={`Marks at ${labelOf(velocity, 1)} km/s`}>
+      <View role="list" aria-label={title}>
         {own.map((mark, i) => {
           const at = wcs.pixelToGalactic(mark.x, mark.y);
           const place = at

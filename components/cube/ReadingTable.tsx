@@ -6,14 +6,14 @@ import { HiddenText, Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { hairline, radius, space, touch } from '@/components/ui/tokens';
 import type { ChannelReading } from '@/hooks/reading/skyMarks';
-import { labelOf } from '@/shared/image/ticks';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 import { formatQuantity } from '@/shared/physics/quantity';
 
 const REASONS = { 'too-few': 'too few', 'same-point': 'one point', 'straight-line': 'a line' } as const;
 
 /** My reading by channel: velocity, how many marks, the ring they make. A row shows its channel. */
 export function ReadingTable() {
-  const { live, channel, showChannel } = useSession();
+  const { live, channel, showChannel, axes } = useSession();
   const most = Math.max(...live.readings.map((r) => r.marks), 1);
   return (
     <View style={{ gap: space(1) }}>
@@ -29,6 +29,7 @@ export function ReadingTable() {
             key={r.channel}
             reading={r}
             most={most}
+            width={axes.spectral.channelWidth}
             current={r.channel === channel}
             onPress={showChannel}
           />
@@ -44,10 +45,12 @@ export function ReadingTable() {
 function Row(props: {
   reading: ChannelReading;
   most: number;
+  /** Of a channel, km/s. */
+  width: number;
   current: boolean;
   onPress: (channel: number) => void;
 }) {
-  const { reading, most, current, onPress } = props;
+  const { reading, most, width, current, onPress } = props;
   const { color } = useTheme();
   const { ring } = reading;
   const q = ring && formatQuantity({ value: ring.theta, se: ring.se, unit: 'deg' });
@@ -68,7 +71,7 @@ function Row(props: {
         })}
       >
         <Text mono numberOfLines={1} style={{ minWidth: space(13) }} align="right">
-          {labelOf(reading.velocity, 1)}
+          {velocityLabel(reading.velocity, width)}
           <HiddenText> km/s, </HiddenText>
         </Text>
         <View style={{ flex: 1, flexDirection: 'row', alignItems: 'center', gap: space(1.5) }}>

@@ -7,7 +7,7 @@ import { radius, space } from '@/components/ui/tokens';
 import { brightnessAt } from '@/hooks/planes/decodePlane';
 import { useValue } from '@/hooks/valueStore';
 import { pixelAt, type ImagePoint } from '@/shared/image/viewport';
-import { labelOf } from '@/shared/image/ticks';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 import { separation } from '@/shared/sky/greatCircle';
 
 const itself = (at: ImagePoint | null) => at;
@@ -52,7 +52,7 @@ export function Readout() {
         </Text>
       )}
       <Text mono size="small" tone="onImage" align="right">
-        {`${labelOf(velocity, 1)} km/s  ${plane ? brightness(value) : '…'}${
+        {`${velocityLabel(velocity, axes.spectral.channelWidth)} km/s  ${plane ? brightness(value) : '…'}${
           plane && Number.isFinite(value) && axes.unit ? ` ${axes.unit}` : ''
         }`}
       </Text>

@@ -12,6 +12,7 @@ import { useTheme } from '@/components/ui/theme';
 import { hairline, space, touch } from '@/components/ui/tokens';
 import { useFitMarks } from '@/hooks/useFits';
 import { labelOf } from '@/shared/image/ticks';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 
 const FIRST = 6;
 
@@ -45,7 +46,9 @@ function Residuals({ fit }: { fit: DoneFit }) {
         {shown.map((r) => {
           const mark = data?.marks[r.mark];
           const off = `${labelOf(r.degrees, 3)}°`;
-          const where = mark ? `${labelOf(mark.velocity, 1)} km/s` : `mark ${r.mark + 1}`;
+          const where = mark
+            ? `${velocityLabel(mark.velocity, data!.channelWidth)} km/s`
+            : `mark ${r.mark + 1}`;
           return (
             <View key={r.mark} role="listitem">
               <Press

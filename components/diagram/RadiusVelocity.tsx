@@ -13,6 +13,7 @@ import {
 import { useTheme } from '@/components/ui/theme';
 import { fonts, typeScale } from '@/components/ui/tokens';
 import { labelOf } from '@/shared/image/ticks';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 import { modelRadius } from '@/shared/shell/channelCurve';
 import { ringRadius } from '@/shared/shell/ring';
 
@@ -72,7 +73,7 @@ export function RadiusVelocity(props: RadiusVelocityProps) {
   const inside = (v: number) => v >= domain.velocity[0] && v <= domain.velocity[1];
 
   return (
-    <View role="img" aria-label={describe(name, rings, model)} style={{ width, height }}>
+    <View role="img" aria-label={describe(name, rings, model, channelWidth)} style={{ width, height }}>
       <Svg width={width} height={height} aria-hidden>
         {l.radiusTicks.values.map((r) => (
           <G key={r}>
@@ -194,14 +195,20 @@ function curvePaths(model: DiagramModel, l: DiagramLayout): { line: string; band
   return { line, band: `M${[...upper, ...lower].join('L')}Z` };
 }
 
-function describe(name: string, rings: readonly DiagramRing[], model: DiagramModel | null): string {
+function describe(
+  name: string,
+  rings: readonly DiagramRing[],
+  model: DiagramModel | null,
+  channelWidth: number,
+): string {
+  const shown = (v: number) => velocityLabel(v, channelWidth);
   const found =
     rings.length === 0
       ? 'no rings yet'
-      : `${rings.length} rings from ${labelOf(Math.min(...rings.map((r) => r.velocity)), 1)} to ` +
-        `${labelOf(Math.max(...rings.map((r) => r.velocity)), 1)} km/s`;
+      : `${rings.length} rings from ${shown(Math.min(...rings.map((r) => r.velocity)))} to ` +
+        `${shown(Math.max(...rings.map((r) => r.velocity)))} km/s`;
   const fitted = model
-    ? `; the model is widest with ${model.theta.toPrecision(3)} degrees at ${labelOf(model.vSys, 1)} km/s and closes ` +
+    ? `; the model is widest with ${model.theta.toPrecision(3)} degrees at ${shown(model.vSys)} km/s and closes ` +
       `${model.vExp.toPrecision(3)} km/s to either side`
     : '';
   return `Radius–velocity diagram of ${name}: ${found}${fitted}.`;

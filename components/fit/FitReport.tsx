@@ -64,7 +64,7 @@ export function FitSummary({
 }
 
 /** What the numbers rest on: residuals by mark, rings by channel, correlation, provenance. */
-export function FitDetails({ fit }: { fit: DoneFit }) {
+export function FitDetails({ fit, channelWidth }: { fit: DoneFit; channelWidth: number }) {
   const { wide } = useWide();
   return (
     <View style={{ flexDirection: wide ? 'row' : 'column', gap: space(4), alignItems: 'flex-start' }}>
@@ -72,7 +72,7 @@ export function FitDetails({ fit }: { fit: DoneFit }) {
         <ResidualTable fit={fit} />
       </View>
       <View style={[{ gap: space(4), alignSelf: 'stretch' }, wide && { flex: 1, minWidth: 0 }]}>
-        <RingTable fit={fit} />
+        <RingTable fit={fit} channelWidth={channelWidth} />
         <CorrelationTable correlation={fit.correlation} />
         <Provenance fit={fit} />
       </View>

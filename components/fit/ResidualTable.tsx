@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
 import { useFitMarks } from '@/hooks/useFits';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 import { Button } from '../ui/Button';
 import { decimals } from '../ui/format';
 import { Panel } from '../ui/Panel';
@@ -58,7 +59,9 @@ export function ResidualTable({ fit }: { fit: DoneFit }) {
       label: 'v, km/s',
       width: space(20),
       align: 'right',
-      cell: (r) => <Text mono>{markOf(r) ? decimals(markOf(r)!.velocity, 1) : '…'}</Text>,
+      cell: (r) => (
+        <Text mono>{markOf(r) ? velocityLabel(markOf(r)!.velocity, marks.data!.channelWidth) : '…'}</Text>
+      ),
     },
     {
       key: 'degrees',

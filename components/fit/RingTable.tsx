@@ -1,3 +1,4 @@
+import { velocityLabel } from '@/shared/image/velocityDigits';
 import { decimals } from '../ui/format';
 import { Panel } from '../ui/Panel';
 import { Quantity } from '../ui/Quantity';
@@ -9,14 +10,14 @@ import type { DoneFit } from './fitFacts';
 type Ring = DoneFit['rings'][number];
 
 /** The ring of each channel beside the model's, both in degrees. */
-export function RingTable({ fit }: { fit: DoneFit }) {
+export function RingTable({ fit, channelWidth }: { fit: DoneFit; channelWidth: number }) {
   const columns: Column<Ring>[] = [
     {
       key: 'velocity',
       label: 'v, km/s',
       align: 'right',
       width: space(18),
-      cell: (r) => <Text mono>{decimals(r.velocity, 1)}</Text>,
+      cell: (r) => <Text mono>{velocityLabel(r.velocity, channelWidth)}</Text>,
     },
     {
       key: 'marks',

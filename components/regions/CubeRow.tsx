@@ -4,9 +4,10 @@ import type { Cube } from '@/shared/contract/cubes';
 import { API, asProblem } from '@/hooks/api';
 import { useCubeActions } from '@/hooks/useCubes';
 import { useMay } from '@/hooks/useMe';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 import { Button } from '../ui/Button';
 import { StatusChip } from '../ui/Chip';
-import { ago, decimals, fileSize } from '../ui/format';
+import { ago, fileSize } from '../ui/format';
 import { Icon } from '../ui/Icon';
 import { Menu } from '../ui/Menu';
 import { Press, type PressState } from '../ui/Press';
@@ -22,11 +23,12 @@ import { RenameDialog } from '../ui/RenameDialog';
 export function cubeFacts(cube: Cube): string {
   const a = cube.axes;
   if (!a) return fileSize(cube.sizeBytes);
+  const width = a.spectral.channelWidth;
   const [first, last] = a.spectral.velocities;
   const [low, high] = first < last ? [first, last] : [last, first];
   return [
     `${a.nx} × ${a.ny} × ${a.channels}`,
-    `${decimals(low, 1)} … ${decimals(high, 1)} km/s`,
+    `${velocityLabel(low, width)} … ${velocityLabel(high, width)} km/s`,
     a.frame,
   ].join(' · ');
 }

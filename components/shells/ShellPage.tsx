@@ -112,7 +112,9 @@ function Content({ shell }: { shell: Shell }) {
         </EmptyState>
       </Panel>
     );
-  const details = shown && <FitDetails key={shown.id} fit={shown} />;
+  const details = shown && (
+    <FitDetails key={shown.id} fit={shown} channelWidth={frozen.data?.channelWidth ?? 0} />
+  );
   return (
     <>
       {shell.status === 'withdrawn' && (

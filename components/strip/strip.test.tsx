@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { flickedBy, flickLasts, speedOf } from '@/components/strip/flick';
 import { held, positionAt, seen, stripLayout, xOf } from '@/components/strip/stripLayout';
 import { positionOfVelocity, stepped, stripOrder } from '@/components/strip/stripOrder';
+import { stripText } from '@/components/strip/stripText';
 
 describe('order', () => {
   const falling = stripOrder([30, 20, 10, 0]);
@@ -62,4 +63,14 @@ describe('flick', () => {
     expect(flickedBy(2, 100)).toBeGreaterThan(flickedBy(2, 200) - flickedBy(2, 100));
     expect(flickLasts(0)).toBe(0);
   });
+});
+
+test('says neighbouring narrow channels apart', () => {
+  const order = stripOrder([1.5, 1.566, 1.632]);
+  const said = [0, 1, 2].map((channel) => stripText({ order, channel, marks: new Map([[1, 1]]) }));
+  expect(said).toEqual([
+    '1.50 km/s, channel 1 of 3',
+    '1.57 km/s, channel 2 of 3, 1 mark',
+    '1.63 km/s, channel 3 of 3',
+  ]);
 });

@@ -8,6 +8,10 @@ export interface StripOrder {
   velocities: readonly number[];
 }
 
+/** km/s from one channel to the next, on the mean; 0 where there is only one. */
+export const channelStep = ({ velocities: v }: StripOrder): number =>
+  v.length > 1 ? (v[v.length - 1]! - v[0]!) / (v.length - 1) : 0;
+
 /** @param velocities of the channels, in the order of the file */
 export function stripOrder(velocities: readonly number[]): StripOrder {
   const channels = velocities.map((_, k) => k).sort((a, b) => velocities[a]! - velocities[b]! || a - b);

@@ -1,5 +1,6 @@
 import type { StripProps } from '@/components/strip/Strip';
-import { labelOf } from '@/shared/image/ticks';
+import { channelStep } from '@/components/strip/stripOrder';
+import { velocityLabel } from '@/shared/image/velocityDigits';
 
 /** What the slider says of itself: "−42.2 km/s, channel 20 of 48". */
 export function stripText({
@@ -10,5 +11,5 @@ export function stripText({
   const velocity = order.velocities[order.positions[channel] ?? 0] ?? 0;
   const count = marks.get(channel) ?? 0;
   const own = count > 0 ? `, ${count} mark${count === 1 ? '' : 's'}` : '';
-  return `${labelOf(velocity, 1)} km/s, channel ${channel + 1} of ${order.channels.length}${own}`;
+  return `${velocityLabel(velocity, channelStep(order))} km/s, channel ${channel + 1} of ${order.channels.length}${own}`;
 }

@@ -10,7 +10,7 @@ const reading = (velocity: number, marks = 4): ChannelReading => ({
   ring: null,
   reason: null,
 });
-const base = { marks: 0, model: null, problem: null, range: [-80, 20] as const };
+const base = { marks: 0, model: null, problem: null, range: [-80, 20] as const, channelWidth: 1.03 };
 
 describe('what would help most', () => {
   test('says how many marks and channels are missing', () => {
@@ -28,8 +28,12 @@ describe('what would help most', () => {
   test('names the caps that no mark speaks for, if the cube reaches them', () => {
     const model = { vSys: -36, vExp: 28 };
     const readings = [-50, -40, -30, -20].map((v) => reading(v));
-    expect(advice({ ...base, marks: 16, readings, model })).toContain('−61 or −11 km/s');
-    expect(advice({ ...base, marks: 16, readings, model, range: [-55, 20] })).toContain('near −11 km/s');
+    expect(advice({ ...base, marks: 16, readings, model })).toContain('−61.2 or −10.8 km/s');
+    expect(advice({ ...base, marks: 16, readings, model, range: [-55, 20] })).toContain('near −10.8 km/s');
+    const narrow = [1.2, 1.4, 1.6].map((v) => reading(v));
+    expect(
+      advice({ ...base, marks: 12, readings: narrow, model: { vSys: 1.4, vExp: 1.1 }, channelWidth: 0.066 }),
+    ).toContain('near 0.41 or 2.39 km/s');
     const full = [-60, -36, -12].map((v) => reading(v));
     expect(advice({ ...base, marks: 12, readings: full, model })).toContain('Run the fit of record');
   });

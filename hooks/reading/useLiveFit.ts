@@ -38,6 +38,7 @@ export function useLiveFit(
       model,
       problem: problem?.detail ?? null,
       range,
+      channelWidth,
     });
     return { marks: onSky, readings, fit, problem, sentence };
   }, [deferred, wcs, channelWidth, range]);
