@@ -96,7 +96,7 @@ export function Sheet({
       </View>
       <View role="tabpanel" aria-label={current?.label} style={{ flex: 1, minHeight: 0 }}>
         {scroll ? (
-          <ScrollView contentContainerStyle={{ padding: space(3), gap: space(3) }}>
+          <ScrollView key={current?.key} contentContainerStyle={{ padding: space(3), gap: space(3) }}>
             {current?.content}
           </ScrollView>
         ) : (
