@@ -1,5 +1,5 @@
 import express, { Router, type Request } from 'express';
-import { CubeChange, PlaneQuery, SpectrumQuery } from '@/shared/contract/cubes';
+import { CubeChange, CubeOverrides, CubeSource, PlaneQuery, SpectrumQuery } from '@/shared/contract/cubes';
 import { FitDraft } from '@/shared/contract/fits';
 import { MemberChange, MemberDraft, TokenDraft, type Me } from '@/shared/contract/people';
 import { ReadingDraft } from '@/shared/contract/readings';
@@ -8,6 +8,7 @@ import { CatalogueQuery, DistanceDraft, ShellChange, ShellDraft } from '@/shared
 import { contextOf } from '../auth/requests';
 import { catalogue, everyRow } from '../services/catalogue';
 import { catalogueCsv } from '../services/catalogueCsv';
+import { chooseSource, overrideCube } from '../services/cubeOverrides';
 import * as cubes from '../services/cubes';
 import * as distances from '../services/distances';
 import * as fits from '../services/fits';
@@ -95,6 +96,14 @@ export function apiRoutes(): Router {
   api.delete('/cubes/:cubeId', async (req, res) => {
     await cubes.removeCube(contextOf(req), idOf(req, 'cubeId'));
     res.status(204).end();
+  });
+  api.patch('/cubes/:cubeId/overrides', async (req, res) => {
+    res.json(await overrideCube(contextOf(req), idOf(req, 'cubeId'), parse(CubeOverrides, req.body)));
+  });
+  api.patch('/cubes/:cubeId/source', async (req, res) => {
+    res
+      .status(202)
+      .json(await chooseSource(contextOf(req), idOf(req, 'cubeId'), parse(CubeSource, req.body)));
   });
   api.post('/cubes/:cubeId/restore', async (req, res) => {
     res.json(await cubes.restoreCube(contextOf(req), idOf(req, 'cubeId')));

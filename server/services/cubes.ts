@@ -1,66 +1,24 @@
-import type { Channel, Cube, CubeAxes, CubeHeader } from '@/shared/contract/cubes';
+import type { Channel, Cube, CubeHeader } from '@/shared/contract/cubes';
 import type { Action } from '@/shared/contract/permissions';
 import { Problem } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
-import { buildWcs } from '@/shared/sky/wcs';
 import { listChannels } from '../store/channels';
 import { findCube, listCubes, moveCube, renameCube, setCubeRemoved, type CubeRow } from '../store/cubes';
-import { isoTime, isoTimeOrNull, isUniqueViolation, type Db } from '../store/db';
+import { isUniqueViolation, type Db } from '../store/db';
 import { appendEvent } from '../store/events';
 import { addJob } from '../store/queue';
 import { notFound, requirePermission } from './access';
 import { announce } from './announce';
+import { toCubes, understood } from './cubeView';
 import type { Context } from './context';
 import { regionFor } from './regions';
-
-const toAxes = (head: CubeHead): CubeAxes => ({
-  ...head.shape,
-  bitpix: head.bitpix,
-  unit: head.unit ?? head.bunit,
-  frame: head.frame,
-  projection: head.projection,
-  spectral: {
-    type: head.spectral.type,
-    convention: head.spectral.convention,
-    frame: head.spectral.frame,
-    restFrequencyHz: head.spectral.restFrequencyHz ?? head.spectral.assumedRestFrequencyHz,
-    velocities: head.spectral.velocities,
-    channelWidth: buildWcs(head.wcs).velocityStep,
-  },
-  beam: head.beam && {
-    major: head.beam.majorDeg,
-    minor: head.beam.minorDeg,
-    angle: head.beam.positionAngleDeg,
-  },
-  wcs: { ...head.wcs },
-});
-
-export const toCube = (row: CubeRow): Cube => ({
-  id: row.id,
-  regionId: row.regionId,
-  name: row.name,
-  fileName: row.fileName,
-  sizeBytes: row.sizeBytes,
-  checksum: row.checksum,
-  status: row.status,
-  progress: row.progress,
-  activity: row.activity,
-  problem: row.problem,
-  axes: row.head && toAxes(row.head),
-  cautions: row.head?.cautions ?? [],
-  window: row.windowLow === null || row.windowHigh === null ? null : [row.windowLow, row.windowHigh],
-  statistics: row.statistics,
-  createdBy: row.createdById ? { id: row.createdById, name: row.createdByName ?? '' } : null,
-  createdAt: isoTime(row.createdAt),
-  readyAt: isoTimeOrNull(row.readyAt),
-});
 
 /** Load a cube for an action, or refuse. One that was taken out is there only for putting it back. */
 export async function cubeFor(ctx: Context, id: string, action: Action, removed = false): Promise<CubeRow> {
   const row = await findCube(ctx.db, id);
   if (!row || (row.removedAt !== null) !== removed) throw notFound('cube');
   requirePermission(ctx.actor, action, row.teamId, 'cube');
-  return row;
+  return understood(row);
 }
 
 /** A cube whose pixels can be looked at. */
@@ -73,11 +31,13 @@ export async function readyCube(ctx: Context, id: string): Promise<CubeRow & { h
 
 export async function cubesOfRegion(ctx: Context, regionId: string): Promise<Cube[]> {
   await regionFor(ctx, regionId, 'cube.read');
-  return (await listCubes(ctx.db, regionId)).map(toCube);
+  return toCubes(await listCubes(ctx.db, regionId));
 }
 
-export const readCube = async (ctx: Context, id: string): Promise<Cube> =>
-  toCube(await cubeFor(ctx, id, 'cube.read'));
+export async function readCube(ctx: Context, id: string): Promise<Cube> {
+  const row = await cubeFor(ctx, id, 'cube.read');
+  return toCubes(await listCubes(ctx.db, row.regionId)).find((cube) => cube.id === id)!;
+}
 
 export async function headerOf(ctx: Context, id: string): Promise<CubeHeader> {
   const row = await cubeFor(ctx, id, 'cube.read');
@@ -91,19 +51,19 @@ export async function channelsOf(ctx: Context, id: string): Promise<Channel[]> {
 
 export async function changeCube(ctx: Context, id: string, name: string): Promise<Cube> {
   const row = await cubeFor(ctx, id, 'cube.manage');
-  await write(ctx, row, 'cube.renamed', (trx) => renameCube(trx, id, name), { name });
+  await writeCube(ctx, row, 'cube.renamed', (trx) => renameCube(trx, id, name), { name });
   return readCube(ctx, id);
 }
 
 export async function removeCube(ctx: Context, id: string): Promise<void> {
   const row = await cubeFor(ctx, id, 'cube.manage');
-  await write(ctx, row, 'cube.removed', (trx) => setCubeRemoved(trx, id, true));
+  await writeCube(ctx, row, 'cube.removed', (trx) => setCubeRemoved(trx, id, true));
 }
 
 export async function restoreCube(ctx: Context, id: string): Promise<Cube> {
   const row = await cubeFor(ctx, id, 'cube.manage', true);
   try {
-    await write(ctx, row, 'cube.restored', (trx) => setCubeRemoved(trx, id, false));
+    await writeCube(ctx, row, 'cube.restored', (trx) => setCubeRemoved(trx, id, false));
   } catch (error) {
     if (isUniqueViolation(error, 'cubes_checksum'))
       throw new Problem('conflict', 'The same file has been uploaded again since. Use that cube.');
@@ -114,7 +74,7 @@ export async function restoreCube(ctx: Context, id: string): Promise<Cube> {
 
 export async function retryCube(ctx: Context, id: string): Promise<Cube> {
   const row = await cubeFor(ctx, id, 'cube.manage');
-  await write(ctx, row, 'cube.retried', async (trx) => {
+  await writeCube(ctx, row, 'cube.retried', async (trx) => {
     if (!(await moveCube(trx, id, ['failed', 'cancelled'], 'uploaded', 'waiting for a worker')))
       throw new Problem(
         'conflict',
@@ -127,7 +87,7 @@ export async function retryCube(ctx: Context, id: string): Promise<Cube> {
 
 export async function cancelCube(ctx: Context, id: string): Promise<Cube> {
   const row = await cubeFor(ctx, id, 'cube.manage');
-  await write(ctx, row, 'cube.cancelled', async (trx) => {
+  await writeCube(ctx, row, 'cube.cancelled', async (trx) => {
     if (!(await moveCube(trx, id, ['uploaded', 'ingesting'], 'cancelled', null)))
       throw new Problem('conflict', `There is nothing to stop: this cube is ${row.status}.`);
   });
@@ -137,7 +97,7 @@ export async function cancelCube(ctx: Context, id: string): Promise<Cube> {
 export const queueIngest = (db: Db, cubeId: string) => addJob(db, 'ingest', { cubeId }, `ingest:${cubeId}`);
 
 /** One change of a cube: in one transaction with its event, and told to every open page. */
-async function write(
+export async function writeCube(
   ctx: Context,
   row: CubeRow,
   kind: string,

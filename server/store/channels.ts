@@ -4,10 +4,20 @@ import { rows, type Db } from './db';
 export const listChannels = (db: Db, cubeId: string) =>
   rows<Channel>(
     db,
-    `select channels.channel, channels.velocity, channels.minimum, channels.maximum, channels.mean, channels.rms,
+    `select channels.channel, channels.velocity, channels.minimum, channels.maximum, channels.mean, null::float8 as median, channels.rms,
             channels.rms_about_zero as "rmsAboutZero", channels.blanks
      from channels where channels.cube_id = ? order by channels.channel`,
     [cubeId],
+  );
+
+/** The same channels at other velocities, in their order. */
+export const updateVelocities = (db: Db, cubeId: string, velocities: readonly number[]) =>
+  rows(
+    db,
+    `update channels set velocity = given.velocity
+     from unnest(?::int[], ?::float8[]) as given(channel, velocity)
+     where channels.cube_id = ? and channels.channel = given.channel`,
+    [velocities.map((_, channel) => channel), [...velocities], cubeId] as never[],
   );
 
 export async function findThumbnail(db: Db, cubeId: string, channel: number): Promise<Buffer | undefined> {

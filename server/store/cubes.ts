@@ -1,3 +1,4 @@
+import type { CubeOverrides } from '@/shared/contract/cubes';
 import type { ProblemBody } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
 import { rows, type Db } from './db';
@@ -25,6 +26,13 @@ export interface CubeRow {
   statistics: CubeStatistics | null;
   windowLow: number | null;
   windowHigh: number | null;
+  overrides: CubeOverrides | null;
+  overriddenById: string | null;
+  overriddenByName: string | null;
+  overriddenAt: Date | null;
+  /** null: the first cube of the file. */
+  sourceHdu: number | null;
+  sourceStokes: number;
   createdById: string | null;
   createdByName: string | null;
   createdAt: Date;
@@ -37,9 +45,12 @@ const columns = `
   cubes.file_key as "fileKey", cubes.size_bytes::float8 as "sizeBytes",
   cubes.checksum, cubes.head, cubes.status, cubes.progress, cubes.activity, cubes.problem, cubes.statistics,
   cubes.window_low as "windowLow", cubes.window_high as "windowHigh", cubes.created_by as "createdById",
-  people.name as "createdByName", cubes.created_at as "createdAt", cubes.ready_at as "readyAt",
+  people.name as "createdByName", cubes.overrides, cubes.overridden_by as "overriddenById",
+  overrider.name as "overriddenByName", cubes.overridden_at as "overriddenAt", cubes.source_hdu as "sourceHdu",
+  cubes.source_stokes as "sourceStokes", cubes.created_at as "createdAt", cubes.ready_at as "readyAt",
   cubes.removed_at as "removedAt"`;
-const from = `from cubes join regions on regions.id = cubes.region_id left join people on people.id = cubes.created_by`;
+const from = `from cubes join regions on regions.id = cubes.region_id left join people on people.id = cubes.created_by
+  left join people as overrider on overrider.id = cubes.overridden_by`;
 
 export const listCubes = (db: Db, regionId: string) =>
   rows<CubeRow>(
@@ -94,6 +105,37 @@ export const insertCube = (
   });
 
 export const renameCube = (db: Db, id: string, name: string) => db('cubes').where({ id }).update({ name });
+
+export const setOverrides = (db: Db, id: string, overrides: CubeOverrides | null, personId: string) =>
+  db('cubes')
+    .where({ id })
+    .update({
+      overrides: overrides && JSON.stringify(overrides),
+      overridden_by: overrides && personId,
+      overridden_at: overrides && db.fn.now(),
+    });
+
+/** Another image or Stokes plane: the cube waits to be read again. False when it is being read. */
+export async function setSource(db: Db, id: string, hdu: number, stokes: number): Promise<boolean> {
+  const found = await rows(
+    db,
+    `update cubes set source_hdu = ?, source_stokes = ?, status = 'uploaded', progress = 0, problem = null,
+            activity = 'waiting for a worker', lease_holder = null, lease_until = null
+     where id = ? and status <> 'ingesting' and removed_at is null returning id`,
+    [hdu, stokes, id],
+  );
+  return found.length > 0;
+}
+
+/** How many readings carry marks on the cube. */
+export async function countMarked(db: Db, id: string): Promise<number> {
+  const [row] = await rows<{ n: number }>(
+    db,
+    'select count(*)::int as n from readings where readings.cube_id = ? and jsonb_array_length(readings.marks) > 0',
+    [id],
+  );
+  return row!.n;
+}
 
 export const setCubeRemoved = (db: Db, id: string, removed: boolean) =>
   db('cubes')

@@ -31,6 +31,36 @@ export const CubeAxes = z
   })
   .meta({ id: 'CubeAxes' });
 
+/** What a person says of the cube where the header does not, or says it wrong; null takes it back. */
+export const CubeOverrides = z
+  .strictObject({
+    unit: z.enum(['K', 'mK', 'Jy/beam', 'mJy/beam']).nullable().optional(),
+    restFrequencyHz: z.number().positive().max(1e13).nullable().optional(),
+    beam: z
+      .strictObject({
+        major: z.number().positive().max(90),
+        minor: z.number().positive().max(90),
+        angle: z.number(),
+      })
+      .nullable()
+      .optional()
+      .describe('degrees; angle from north through east'),
+    convention: z.enum(['radio', 'optical', 'relativistic']).nullable().optional(),
+    velocityFrame: z
+      .enum(['LSRK', 'LSRD', 'BARYCENT', 'HELIOCEN', 'TOPOCENT', 'GEOCENTR', 'GALACTOC', 'LOCALGRP'])
+      .nullable()
+      .optional(),
+  })
+  .meta({ id: 'CubeOverrides' });
+
+/** Which image of the file, and which plane along a Stokes axis, is the cube; choosing another reads it again. */
+export const CubeSource = z
+  .strictObject({
+    hdu: z.number().int().min(0).max(10_000),
+    stokes: z.number().int().min(0).max(1000).default(0),
+  })
+  .meta({ id: 'CubeSource' });
+
 export const Cube = z
   .object({
     id: Id,
@@ -50,10 +80,23 @@ export const Cube = z
       .object({
         minimum: z.number().nullable(),
         maximum: z.number().nullable(),
-        rms: z.number().nullable(),
+        rms: z.number().nullable().describe('noise of the cube, from channels without signal'),
         blanks: z.number(),
       })
       .nullable(),
+    source: CubeSource.describe('what of the file is read'),
+    choices: z
+      .object({
+        hdus: z.array(z.object({ index: z.number().int(), name: z.string(), usable: z.boolean() })),
+        stokes: z.array(z.object({ index: z.number().int(), name: z.string() })),
+      })
+      .describe('what else of the file could be read; empty lists: nothing'),
+    overrides: z
+      .object({ values: CubeOverrides, by: z.object({ id: Id, name: z.string() }).nullable(), at: Time })
+      .nullable(),
+    overlaps: z
+      .array(z.object({ id: Id, name: z.string() }))
+      .describe('cubes of the region that show some of the same sky'),
     createdBy: z.object({ id: Id, name: z.string() }).nullable(),
     createdAt: Time,
     readyAt: Time.nullable(),
@@ -78,6 +121,7 @@ export const Channel = z
     minimum: z.number().nullable(),
     maximum: z.number().nullable(),
     mean: z.number().nullable(),
+    median: z.number().nullable(),
     rms: z
       .number()
       .nullable()
@@ -93,8 +137,41 @@ export const ChannelList = z
 export const SpectrumQuery = z.object({
   x: z.coerce.number().optional(),
   y: z.coerce.number().optional(),
-  radius: z.coerce.number().min(0).max(64).default(0).describe('pixels'),
+  radius: z.coerce.number().min(0).max(1024).default(0).describe('pixels'),
+  inner: z.coerce
+    .number()
+    .min(0)
+    .max(1024)
+    .default(0)
+    .describe('pixels; more than 0: a ring between inner and radius'),
+  of: z
+    .enum(['mean', 'median', 'maximum'])
+    .default('mean')
+    .describe('for the whole cube; a place gives the mean'),
 });
+
+/** Maps that ingest makes of all channels together. */
+export const MAP_KINDS = ['total', 'velocity', 'dispersion', 'peak'] as const;
+export type MapKind = (typeof MAP_KINDS)[number];
+
+export const CutQuery = z
+  .object({
+    l: z.coerce.number().describe('degrees: where a segment begins, or the centre of a ring'),
+    b: z.coerce.number(),
+    toL: z.coerce.number().optional().describe('degrees: where the segment ends'),
+    toB: z.coerce.number().optional(),
+    radius: z.coerce
+      .number()
+      .positive()
+      .max(90)
+      .optional()
+      .describe('degrees: a ring about l, b, from north through east'),
+  })
+  .describe('either toL and toB, or radius');
+
+/** Answer headers of a cut beside those of a plane: degrees between neighbouring samples, and what was done between pixels. */
+export const CUT_HEADERS = { step: 'Cut-Step', interpolation: 'Cut-Interpolation' } as const;
+
 export const Spectrum = z
   .object({
     velocities: z.array(z.number()),
@@ -138,6 +215,8 @@ export const UploadState = z
   })
   .meta({ id: 'UploadState' });
 
+export type CubeOverrides = z.infer<typeof CubeOverrides>;
+export type CubeSource = z.infer<typeof CubeSource>;
 export type CubeAxes = z.infer<typeof CubeAxes>;
 export type Cube = z.infer<typeof Cube>;
 export type Channel = z.infer<typeof Channel>;

@@ -110,6 +110,18 @@ const CASES: Case[] = [
     expected: WRITE,
   },
   {
+    route: 'patch /cubes/:cubeId/overrides',
+    path: () => `/cubes/${f.cubeId}/overrides`,
+    body: () => ({ unit: 'K' }),
+    expected: WRITE,
+  },
+  {
+    route: 'patch /cubes/:cubeId/source',
+    path: async () => `/cubes/${await readyCube(product, lead(), f.regionId)}/source`,
+    body: () => ({ hdu: 0 }),
+    expected: [202, 202, 403, 403, 404, 403],
+  },
+  {
     route: 'delete /cubes/:cubeId',
     path: async () => `/cubes/${await readyCube(product, lead(), f.regionId)}`,
     expected: [204, 204, 403, 403, 404, 403],

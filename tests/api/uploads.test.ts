@@ -278,7 +278,10 @@ test('a file that the disk cannot hold is refused before its bytes, and says how
     'Upload-Metadata': `filename ${encoded('huge.fits')},regionId ${encoded(id)}`,
   });
   expect(answer.status).toBe(507);
-  expect(answer.body).toMatchObject({ type: '/problems/disk-full', detail: expect.stringMatching(/MB left/) });
+  expect(answer.body).toMatchObject({
+    type: '/problems/disk-full',
+    detail: expect.stringMatching(/MB left/),
+  });
   expect((await person.get(`/regions/${id}/uploads`)).body.total).toBe(0);
   await roomy.stop();
 });
