@@ -45,7 +45,8 @@ export function uploadHandler(parts: Parts): RequestHandler {
     labelProblems(res);
     endWithCallback(res);
     await tus.handle(req, res);
-    if (req.method === 'DELETE' && res.statusCode === 204)
+    // also where the bytes were never there: a server killed while an upload began leaves its record alone
+    if (req.method === 'DELETE' && [204, 404].includes(res.statusCode))
       await uploads.cancelUpload(contextOf(req), String(req.path.split('/').pop()));
   };
 }

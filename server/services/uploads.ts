@@ -117,10 +117,12 @@ export async function refuseUpload(parts: Parts, row: UploadRow, problem: Proble
   await tell(parts, row);
 }
 
+/** Forget an upload of one's own that is not finished. */
 export async function cancelUpload(ctx: Context, id: string): Promise<void> {
   const row = await findUpload(ctx.db, id);
-  if (!row || row.personId !== ctx.actor.id || row.status === 'done') throw notFound('upload');
+  if (!row || row.personId !== ctx.actor.id || row.status === 'done') return;
   await updateUpload(ctx.db, id, { status: 'cancelled' });
+  await dropBytes(ctx, id);
   await tell(ctx, row);
 }
 
