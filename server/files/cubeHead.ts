@@ -8,5 +8,5 @@ import type { ByteSource } from './byteSource';
  * @throws Problem as `findCube` says
  */
 export function readCubeHead(source: ByteSource, hdu?: number): Promise<CubeHead> {
-  return findCube((offset, length) => source.read(offset, length), source.size, hdu);
+  return findCube((offset, length) => source.read(offset, length), source.size, { hdu });
 }

@@ -6,7 +6,7 @@ export interface Beam {
   minorDeg: number;
   /** From north through east. */
   positionAngleDeg: number;
-  source: 'keywords' | 'history';
+  source: 'keywords' | 'history' | 'person';
 }
 
 const NUMBER = '([-+0-9.eEdD]+)';

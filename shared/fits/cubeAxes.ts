@@ -29,17 +29,18 @@ const SPECTRAL = /^(FREQ|ENER|WAVN|VRAD|WAVE|VOPT|ZOPT|AWAV|VELO|BETA|FELO)(-|$)
 const OTHER = /^(STOKES|COMPLEX|CUBEFACE|TIME|LINEAR|$)/;
 
 /**
- * Lengths of the axes as NAXISn declare them.
+ * Lengths of the axes as NAXISn declare them (ZNAXISn of a compressed image with prefix Z).
  *
  * @throws Problem fits-card when one is missing or not positive, fits-shape when the image has none
  */
-export function axisLengths(header: Header): number[] {
-  const count = required(header, 'NAXIS');
+export function axisLengths(header: Header, prefix: '' | 'Z' = ''): number[] {
+  const card = `${prefix}NAXIS`;
+  const count = required(header, card);
   if (count < 0 || count > 999) {
-    throw new Problem('fits-card', `NAXIS must be 0 to 999; the header says ${count}.`, { card: 'NAXIS' });
+    throw new Problem('fits-card', `${card} must be 0 to 999; the header says ${count}.`, { card });
   }
   return Array.from({ length: count }, (_, i) => {
-    const keyword = `NAXIS${i + 1}`;
+    const keyword = `${card}${i + 1}`;
     const length = required(header, keyword);
     if (length < 0) throw new Problem('fits-card', `${keyword} = ${length} is no length.`, { card: keyword });
     return length;

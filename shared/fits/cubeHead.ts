@@ -2,11 +2,15 @@ import { Problem } from '@/shared/contract/problem';
 import { buildWcs } from '@/shared/sky/wcs';
 import { WcsError, type SkyFrame, type VelocityConvention, type WcsSpec } from '@/shared/sky/wcsSpec';
 import { beamOf, unitOfBrightness, type Beam } from './brightness';
-import { axisLengths, cubeAxes, required, type CubeAxes } from './cubeAxes';
+import { plainImageHeader } from './compressed/imageHeader';
+import { tiledImage } from './compressed/tiledImage';
+import { axisLengths, cubeAxes, type CubeAxes } from './cubeAxes';
 import { Header } from './header';
+import { bitpixOf, pixelBytes, requireBytes, requireImage, scalingOf } from './imageData';
 import { linearStep } from './linearStep';
 import { skyOfHeader } from './skyHeader';
 import { spectralOfHeader } from './spectralHeader';
+import { stokesOf, type StokesPlane } from './stokesAxis';
 
 export type { Beam };
 
@@ -17,6 +21,15 @@ export interface HeaderCard {
   /** As a person reads it: text without quotes, numbers as the file writes them; null for a card without value. */
   value: string | null;
   comment: string;
+}
+
+/** An image of a file that can be chosen; `usable` when it is a cube. */
+export interface HduChoice {
+  index: number;
+  name: string;
+  /** Lengths of its axes in the file's order. */
+  shape: number[];
+  usable: boolean;
 }
 
 /** All that the product needs to know of a cube before reading its pixels: plain JSON, stored with the cube. */
@@ -34,11 +47,25 @@ export interface CubeHead {
   /** BUNIT as written. */
   bunit: string | null;
   object: string | null;
-  /** Bytes from the start of the file to the first pixel, and bytes of pixels (padding not counted). */
+  /**
+   * How the pixels are stored; absent in heads of older cubes, which are plain. A cube that is not plain is read
+   * through a plain copy: its dataOffset counts in the expanded bytes, and is where the table begins for tiles.
+   */
+  container?: 'plain' | 'gzip' | 'tiled';
+  /** What else of the file could be read: images by HDU, and planes along a Stokes axis; absent in older heads. */
+  choices?: { hdus: HduChoice[]; stokes: { index: number; name: string }[] };
+  /** Bytes from the start of the file to the first pixel, and bytes stored from there on (padding not counted). */
   dataOffset: number;
   dataBytes: number;
   /** Lengths of all axes in the file's order, and which of them (from 0) is which. */
-  layout: { naxis: number[]; longitude: number; latitude: number; spectral: number };
+  layout: {
+    naxis: number[];
+    longitude: number;
+    latitude: number;
+    spectral: number;
+    /** The plane that is read of an axis beyond these three; absent: the first. */
+    stokes?: StokesPlane;
+  };
   beam: Beam | null;
   frame: SkyFrame;
   equinox: number | null;
@@ -60,47 +87,68 @@ export interface CubeHead {
   cards: HeaderCard[];
 }
 
+/** Which part of a file is described. */
+export interface HduPlace {
+  /** Where the header starts in the file, bytes. */
+  offset?: number;
+  /** Which HDU it is, from 0. */
+  hdu?: number;
+  /** Plane along the Stokes axis, from 0; absent: the first, with a caution. */
+  stokes?: number;
+}
+
 /**
- * Describe the cube whose header these bytes are (whole 2880-byte blocks up to and with END).
+ * Describe the cube whose header these bytes are (whole 2880-byte blocks up to and with END): an image, or a table
+ * that holds a tile-compressed image.
  *
- * @param headerBytes  one header, from SIMPLE or XTENSION on
- * @param fileSize     bytes of the whole file; when given, a file too short for its data is refused
- * @param headerOffset where the header starts in the file, bytes
- * @param hdu          which HDU it is, from 0
- * @throws Problem not-fits, fits-card (names the card), fits-shape, fits-truncated (names the missing bytes)
+ * @param headerBytes one header, from SIMPLE or XTENSION on
+ * @param fileSize    bytes of the whole file; when given, a file too short for its data is refused
+ * @throws Problem not-fits, fits-card (names the card), fits-shape, fits-truncated (names the missing bytes),
+ *         invalid-input (field stokes)
  */
 export function describeCube(
   headerBytes: Uint8Array,
   fileSize?: number,
-  headerOffset = 0,
-  hdu = 0,
+  { offset = 0, hdu = 0, stokes }: HduPlace = {},
 ): CubeHead {
-  const header = new Header(headerBytes);
+  const stored = new Header(headerBytes);
+  const tiles = stored.logical('ZIMAGE') === true ? tiledImage(stored) : null;
+  const header = tiles ? new Header(plainImageHeader(headerBytes)) : stored;
   const cautions: string[] = [];
   requireImage(header);
   const bitpix = bitpixOf(header);
   const naxis = axisLengths(header);
-  const data = dataExtent(naxis, bitpix, headerOffset + headerBytes.length, fileSize);
+  const dataOffset = offset + headerBytes.length;
+  const plainBytes = pixelBytes(naxis, bitpix);
+  const dataBytes = tiles ? tiles.heapOffset + tiles.heapBytes : plainBytes;
+  requireBytes(dataOffset, dataBytes, fileSize);
+  if (tiles) requireBytes(dataOffset, plainBytes, undefined);
   const axes = cubeAxes(header, naxis);
   const wcs = wcsOf(header, axes, cautions);
   const beam = beamOf(header);
   const { spectral } = wcs;
   const { velocityOf } = usable(() => buildWcs(wcs), axes, header);
   const velocities: [number, number] = [velocityOf(0), velocityOf(spectral.channels - 1)];
-  const extra = naxis.findIndex(
-    (n, i) => n > 1 && ![axes.longitude, axes.latitude, axes.spectral].includes(i),
-  );
-  if (extra >= 0) cautions.push(`Axis ${extra + 1} has ${naxis[extra]} planes; the first is read.`);
+  const { plane, choices } = stokesOf(header, axes, stokes, cautions);
   return {
     shape: { nx: naxis[axes.longitude]!, ny: naxis[axes.latitude]!, channels: naxis[axes.spectral]! },
     hdu,
     bitpix,
-    ...scaling(header, bitpix, cautions),
+    ...scalingOf(header, bitpix, cautions),
     unit: unitOfBrightness(header, beam, cautions),
     bunit: header.text('BUNIT'),
     object: header.text('OBJECT'),
-    ...data,
-    layout: { naxis, longitude: axes.longitude, latitude: axes.latitude, spectral: axes.spectral },
+    container: tiles ? 'tiled' : 'plain',
+    choices: { hdus: [], stokes: choices },
+    dataOffset,
+    dataBytes,
+    layout: {
+      naxis,
+      longitude: axes.longitude,
+      latitude: axes.latitude,
+      spectral: axes.spectral,
+      ...(plane && { stokes: plane }),
+    },
     beam,
     frame: wcs.sky.frame,
     equinox: wcs.sky.equinox,
@@ -121,89 +169,6 @@ export function describeCube(
       value: value === null ? null : typeof value === 'string' ? value : field,
       comment,
     })),
-  };
-}
-
-function requireImage(header: Header): void {
-  if (header.logical('SIMPLE') === false) {
-    throw new Problem(
-      'fits-card',
-      'SIMPLE = F: the file says itself that it does not follow the FITS standard.',
-      {
-        card: 'SIMPLE',
-      },
-    );
-  }
-  const extension = header.text('XTENSION');
-  if (header.logical('ZIMAGE') === true) {
-    throw new Problem(
-      'fits-shape',
-      'The image is tile-compressed, which is not read yet: expand it first (for example with funpack) and send the result.',
-      { card: 'ZIMAGE' },
-    );
-  }
-  if (extension !== null && extension !== 'IMAGE') {
-    throw new Problem('fits-shape', `This part of the file is a table (${extension}), not an image.`, {
-      card: 'XTENSION',
-    });
-  }
-  if (header.logical('GROUPS') === true && header.integer('NAXIS1') === 0) {
-    throw new Problem('fits-shape', 'The file holds random groups (visibilities), not an image.', {
-      card: 'GROUPS',
-    });
-  }
-}
-
-function bitpixOf(header: Header): Bitpix {
-  const bitpix = required(header, 'BITPIX');
-  if (![8, 16, 32, 64, -32, -64].includes(bitpix)) {
-    throw new Problem('fits-card', `BITPIX must be 8, 16, 32, 64, -32 or -64; the header says ${bitpix}.`, {
-      card: 'BITPIX',
-    });
-  }
-  return bitpix as Bitpix;
-}
-
-/** Where the pixels lie; nothing of that size is allocated here. */
-function dataExtent(naxis: number[], bitpix: Bitpix, dataOffset: number, fileSize: number | undefined) {
-  if (naxis.length === 0) {
-    throw new Problem('fits-shape', 'The file has a header and no image (NAXIS = 0).', { card: 'NAXIS' });
-  }
-  const empty = naxis.indexOf(0);
-  if (empty >= 0) {
-    const card = `NAXIS${empty + 1}`;
-    throw new Problem('fits-card', `${card} = 0: the image has no pixels.`, { card });
-  }
-  const dataBytes = naxis.reduce((product, n) => product * n, Math.abs(bitpix) / 8);
-  if (fileSize !== undefined && dataOffset + dataBytes > fileSize) {
-    const missingBytes = dataOffset + dataBytes - fileSize;
-    throw new Problem(
-      'fits-truncated',
-      `The header declares ${dataBytes} bytes of data after byte ${dataOffset}; the file ends ${missingBytes} bytes too early. Send the whole file.`,
-      { missingBytes },
-    );
-  }
-  if (!Number.isSafeInteger(dataOffset + dataBytes)) {
-    throw new Problem(
-      'fits-card',
-      `The axes declare ${dataBytes.toPrecision(2)} bytes, more than any file has.`,
-      { card: 'NAXIS' },
-    );
-  }
-  return { dataOffset, dataBytes };
-}
-
-function scaling(header: Header, bitpix: Bitpix, cautions: string[]) {
-  const bscale = header.number('BSCALE') ?? 1;
-  if (bscale === 0) {
-    throw new Problem('fits-card', 'BSCALE = 0: all pixels would have one value.', { card: 'BSCALE' });
-  }
-  if (bitpix < 0 && header.has('BLANK'))
-    cautions.push('BLANK has no meaning for floating-point pixels and is ignored.');
-  return {
-    bscale,
-    bzero: header.number('BZERO') ?? 0,
-    blank: bitpix > 0 ? (header.wideInteger('BLANK')?.toString() ?? null) : null,
   };
 }
 

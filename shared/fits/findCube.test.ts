@@ -56,7 +56,7 @@ const readerOf =
   (file: Uint8Array): ReadBytes =>
   async (offset, length) =>
     file.subarray(offset, offset + length);
-const find = (file: Uint8Array, hdu?: number) => findCube(readerOf(file), file.length, hdu);
+const find = (file: Uint8Array, hdu?: number) => findCube(readerOf(file), file.length, { hdu });
 const refusal = async (file: Uint8Array, hdu?: number) => {
   const failure = await find(file, hdu).catch((error: unknown) => error);
   if (!isProblem(failure)) throw new Error('no problem');

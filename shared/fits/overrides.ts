@@ -1,6 +1,11 @@
 import { Problem } from '@/shared/contract/problem';
 import { buildWcs } from '@/shared/sky/wcs';
-import { WcsError, type SpectralSpec, type SpectralType, type VelocityConvention } from '@/shared/sky/wcsSpec';
+import {
+  WcsError,
+  type SpectralSpec,
+  type SpectralType,
+  type VelocityConvention,
+} from '@/shared/sky/wcsSpec';
 import { SPEED_OF_LIGHT } from '@/shared/sky/doppler';
 import type { Beam } from './brightness';
 import type { CubeHead } from './cubeHead';
@@ -108,7 +113,10 @@ function validated(overrides: Overrides): Given {
   }
   if (present(restFrequencyHz)) {
     if (!(restFrequencyHz >= 1e6 && restFrequencyHz <= 1e15))
-      throw wrong('restFrequencyHz', `A rest frequency lies between 1e6 and 1e15 Hz, not at ${restFrequencyHz}.`);
+      throw wrong(
+        'restFrequencyHz',
+        `A rest frequency lies between 1e6 and 1e15 Hz, not at ${restFrequencyHz}.`,
+      );
     given.restFrequencyHz = restFrequencyHz;
   }
   if (present(beam)) given.beam = checkedBeam(beam);
@@ -127,10 +135,12 @@ function validated(overrides: Overrides): Given {
 }
 
 function checkedBeam({ major, minor, angle }: NonNullable<Overrides['beam']>): Beam {
-  if (!(major > 0 && major <= 90)) throw wrong('beam.major', 'The major axis of a beam is more than 0 and at most 90 degrees.');
+  if (!(major > 0 && major <= 90))
+    throw wrong('beam.major', 'The major axis of a beam is more than 0 and at most 90 degrees.');
   if (!(minor > 0 && minor <= major))
     throw wrong('beam.minor', 'The minor axis of a beam is more than 0 and not longer than the major axis.');
-  if (!(Math.abs(angle) <= 360)) throw wrong('beam.angle', 'The position angle lies between -360 and 360 degrees.');
+  if (!(Math.abs(angle) <= 360))
+    throw wrong('beam.angle', 'The position angle lies between -360 and 360 degrees.');
   return { majorDeg: major, minorDeg: minor, positionAngleDeg: angle, source: 'person' };
 }
 
@@ -179,8 +189,7 @@ function said(head: CubeHead, given: Given): string[] {
     all.push(sentence('The rest frequency', `${given.restFrequencyHz} Hz`, spectral.restFrequencyHz));
   if (given.beam)
     all.push(sentence('The beam', beamText(given.beam), head.beam === null ? null : beamText(head.beam)));
-  if (given.convention)
-    all.push(sentence('The velocity convention', given.convention, spectral.convention));
+  if (given.convention) all.push(sentence('The velocity convention', given.convention, spectral.convention));
   if (given.velocityFrame) all.push(sentence('The velocity frame', given.velocityFrame, spectral.frame));
   return all;
 }

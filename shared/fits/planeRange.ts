@@ -26,7 +26,7 @@ interface Loop {
  *
  * One slice a channel or fewer when the spectral axis is the slowest; runs of pixels when it lies between the sky
  * axes; the whole of the data when it is the fastest: read many channels at a time then. Of axes beyond the three the
- * first plane is taken.
+ * chosen plane is taken (layout.stokes), else the first.
  *
  * @param maxBytes upper limit of a slice; at least one pixel
  */
@@ -38,9 +38,10 @@ export function* planeSlices(
 ): Generator<ByteSlice> {
   const size = Math.abs(head.bitpix) / 8;
   const most = Math.max(1, Math.floor(maxBytes / size));
+  const base = planeBase(head);
   for (const [start, end] of spans(loopsOf(head, from, to), MAX_GAP / size)) {
-    for (let element = start; element < end; element += most) {
-      const count = Math.min(most, end - element);
+    for (let element = base + start; element < base + end; element += most) {
+      const count = Math.min(most, base + end - element);
       yield { offset: head.dataOffset + element * size, length: count * size, element };
     }
   }
@@ -62,19 +63,20 @@ export function placeSlice(
   out: Float32Array | Float64Array,
 ): void {
   const [fast, middle, slow] = loopsOf(head, from, to);
-  const end = slice.element + values.length;
+  const begin = slice.element - planeBase(head);
+  const end = begin + values.length;
   for (let k = slow.from; k < slow.to; k++) {
     const slowBase = k * slow.stride;
     if (slowBase >= end) break;
-    if (slowBase + middle.to * middle.stride + fast.to * fast.stride <= slice.element) continue;
+    if (slowBase + middle.to * middle.stride + fast.to * fast.stride <= begin) continue;
     for (let j = middle.from; j < middle.to; j++) {
       const base = slowBase + j * middle.stride;
-      const first = Math.max(fast.from, Math.ceil((slice.element - base) / fast.stride));
+      const first = Math.max(fast.from, Math.ceil((begin - base) / fast.stride));
       const last = Math.min(fast.to, Math.ceil((end - base) / fast.stride));
       let target =
         (k - slow.from) * slow.out + (j - middle.from) * middle.out + (first - fast.from) * fast.out;
       for (let i = first; i < last; i++, target += fast.out) {
-        out[target] = values[base + i * fast.stride - slice.element]!;
+        out[target] = values[base + i * fast.stride - begin]!;
       }
     }
   }
@@ -84,7 +86,10 @@ export function placeSlice(
 export function pixelOffset(head: CubeLayout, x: number, y: number, channel: number): number {
   const { naxis, longitude, latitude, spectral } = head.layout;
   const element =
-    x * strideOf(naxis, longitude) + y * strideOf(naxis, latitude) + channel * strideOf(naxis, spectral);
+    planeBase(head) +
+    x * strideOf(naxis, longitude) +
+    y * strideOf(naxis, latitude) +
+    channel * strideOf(naxis, spectral);
   return head.dataOffset + element * (Math.abs(head.bitpix) / 8);
 }
 
@@ -92,6 +97,11 @@ export function pixelOffset(head: CubeLayout, x: number, y: number, channel: num
 export function isChannelContiguous(head: CubeLayout): boolean {
   const { longitude, latitude, spectral } = head.layout;
   return spectral > longitude && spectral > latitude;
+}
+
+/** Number of the first pixel of the plane that is read along the Stokes axis. */
+function planeBase({ layout: { naxis, stokes } }: CubeLayout): number {
+  return stokes ? stokes.plane * strideOf(naxis, stokes.axis) : 0;
 }
 
 const strideOf = (naxis: number[], axis: number) =>

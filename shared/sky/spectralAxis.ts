@@ -2,7 +2,7 @@ import { SPECTRAL_QUANTITIES, SPEED_OF_LIGHT, velocityOfFrequency, frequencyOfVe
 import { WcsError, type SpectralSpec, type SpectralType } from './wcsSpec';
 
 export interface SpectralAxis {
-  /** km/s, in the axis' own convention (frequencies: radio, wavelengths: optical). */
+  /** km/s, in the convention of the axis (unless spec.convention says otherwise: frequencies radio, wavelengths optical). */
   velocityOf(channel: number): number;
   channelOf(velocity: number): number;
   frequencyHzOf(channel: number): number | null;
@@ -40,17 +40,18 @@ export function spectralAxis(spec: SpectralSpec): SpectralAxis {
       `A rest frequency is needed to read velocities from an axis of type ${spec.type}.`,
     );
   }
+  const convention = spec.convention ?? quantity.convention;
   const { valueOf, channelAt } = coordinate(spec, rest ?? 1);
   requirePhysical(spec, (channel) => quantity.frequency(valueOf(channel), rest ?? 1));
   const velocityOf = (channel: number): number =>
     unit !== undefined
       ? (valueOf(channel) * unit) / 1000
-      : velocityOfFrequency(quantity.convention, quantity.frequency(valueOf(channel), rest!), rest!) / 1000;
+      : velocityOfFrequency(convention, quantity.frequency(valueOf(channel), rest!), rest!) / 1000;
   const channelOf = (v: number): number =>
     channelAt(
       unit !== undefined
         ? (v * 1000) / unit
-        : quantity.value(frequencyOfVelocity(quantity.convention, v * 1000, rest!), rest!),
+        : quantity.value(frequencyOfVelocity(convention, v * 1000, rest!), rest!),
     );
   const frequencyHzOf = (channel: number): number | null =>
     rest === null && quantity.needsRest ? null : quantity.frequency(valueOf(channel), rest ?? 1);
