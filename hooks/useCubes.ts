@@ -1,5 +1,13 @@
 import { useSWRConfig } from 'swr';
-import type { Cube, CubeHeader, Channel, Spectrum, UploadState } from '@/shared/contract/cubes';
+import type {
+  Channel,
+  Cube,
+  CubeHeader,
+  CubeOverrides,
+  CubeSource,
+  Spectrum,
+  UploadState,
+} from '@/shared/contract/cubes';
 import { api } from './api';
 import { keys } from './keys';
 import { useRead, type List } from './useRead';
@@ -30,6 +38,16 @@ export function useCubeActions() {
     retry: async (id: string) => put(await api<Cube>(`${keys.cube(id)}/retry`, { method: 'POST' })),
     cancel: async (id: string) => put(await api<Cube>(`${keys.cube(id)}/cancel`, { method: 'POST' })),
     restore: async (id: string) => put(await api<Cube>(`${keys.cube(id)}/restore`, { method: 'POST' })),
+    /** Sends only what changes; null takes it back. */
+    async override(id: string, change: CubeOverrides) {
+      const cube = await api<Cube>(`${keys.cube(id)}/overrides`, { method: 'PATCH', body: change });
+      // another rest frequency or convention moves the velocities
+      void mutate(keys.channels(id));
+      void mutate((key) => typeof key === 'string' && key.startsWith(keys.spectrum(id)));
+      return put(cube);
+    },
+    chooseSource: async (id: string, source: CubeSource) =>
+      put(await api<Cube>(`${keys.cube(id)}/source`, { method: 'PATCH', body: source })),
     async remove(cube: Cube) {
       await api(keys.cube(cube.id), { method: 'DELETE' });
       void mutate(keys.cubes(cube.regionId));

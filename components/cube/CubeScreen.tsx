@@ -11,6 +11,7 @@ import { useRecordFit } from '@/components/cube/useRecordFit';
 import { WideCube } from '@/components/cube/WideCube';
 import { RecordGate } from '@/components/frame/RecordGate';
 import { Screen } from '@/components/frame/Screen';
+import { IconButton } from '@/components/ui/Button';
 import { ProblemNotice } from '@/components/ui/ProblemNotice';
 import { Skeleton } from '@/components/ui/Skeleton';
 import { space } from '@/components/ui/tokens';
@@ -102,7 +103,12 @@ function Instrument({ cube, axes, wcs }: { cube: Cube; axes: CubeAxes; wcs: Wcs 
         cube={cube}
         title={!wide && shell ? shell.name : cube.name}
         subtitle={shell ? `${cube.name} · ${shell.status}` : undefined}
-        aside={<SaveState short={!wide} />}
+        aside={
+          <View style={{ flexDirection: 'row', alignItems: 'center', marginRight: -space(3) }}>
+            <SaveState short={!wide} />
+            <IconButton icon="info" label="About this cube" href={`/cubes/${cube.id}/about`} />
+          </View>
+        }
       >
         {wide ? <WideCube record={record} look={look} /> : <PhoneCube record={record} look={look} />}
       </Framed>

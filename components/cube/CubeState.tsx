@@ -15,6 +15,33 @@ import type { Cube } from '@/shared/contract/cubes';
 
 /** A cube that cannot be looked at yet, or at all: what is happening, and what can be done. */
 export function CubeState({ cube }: { cube: Cube }) {
+  return (
+    <View
+      style={{
+        padding: space(5),
+        gap: space(4),
+        width: '100%',
+        maxWidth: layout.readable,
+        alignSelf: 'center',
+      }}
+    >
+      <CubeProgress cube={cube} />
+      {cube.cautions.length > 0 && (
+        <Panel title="Read with care">
+          {cube.cautions.map((caution) => (
+            <Text key={caution}>{caution}</Text>
+          ))}
+        </Panel>
+      )}
+      <View style={{ flexDirection: 'row' }}>
+        <Button label="About this cube" icon="info" href={`/cubes/${cube.id}/about`} />
+      </View>
+    </View>
+  );
+}
+
+/** How far its reading is, why it failed, and the ways on from there. */
+export function CubeProgress({ cube }: { cube: Cube }) {
   const { retry, cancel } = useCubeActions();
   const may = useMay();
   const [problem, setProblem] = useState<ApiProblem | null>(null);
@@ -28,15 +55,7 @@ export function CubeState({ cube }: { cube: Cube }) {
   };
   const reading = cube.status === 'uploaded' || cube.status === 'ingesting';
   return (
-    <View
-      style={{
-        padding: space(5),
-        gap: space(4),
-        width: '100%',
-        maxWidth: layout.readable,
-        alignSelf: 'center',
-      }}
-    >
+    <>
       {reading && (
         <Panel title={cube.status === 'uploaded' ? 'Waiting to be read' : 'Being read'}>
           <Text tone="quiet">
@@ -75,13 +94,6 @@ export function CubeState({ cube }: { cube: Cube }) {
         </EmptyState>
       )}
       {problem && <ProblemNotice problem={problem} />}
-      {cube.cautions.length > 0 && (
-        <Panel title="Read with care">
-          {cube.cautions.map((caution) => (
-            <Text key={caution}>{caution}</Text>
-          ))}
-        </Panel>
-      )}
-    </View>
+    </>
   );
 }

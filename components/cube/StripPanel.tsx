@@ -9,7 +9,7 @@ import { useChannels } from '@/hooks/useCubes';
 export function StripPanel() {
   const { cube, order, channel, showChannel, marksByChannel, model, look } = useSession();
   const { data: channels, problem, reload } = useChannels(cube.id);
-  const strip = useStripPicture(cube.id, look.look.ramp, look.tone);
+  const strip = useStripPicture(cube, look.look.ramp, look.tone);
   const spectrum = useMemo(() => {
     const means: (number | null)[] = order.channels.map(() => null);
     for (const c of channels?.items ?? []) means[c.channel] = c.mean;

@@ -103,7 +103,7 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const { model } = shown;
 
   const image = useMemo(() => ({ nx: axes.nx, ny: axes.ny, channels: axes.channels }), [axes]);
-  const planes = usePlanes(cube.id, image, channel, useValue(store.viewport, sharpness));
+  const planes = usePlanes(cube, image, channel, useValue(store.viewport, sharpness));
   const selected = marks.find((m) => m.id === selectedId && m.channel === channel) ?? null;
   const scene = useScene({
     wcs,

@@ -1,7 +1,9 @@
 import { useState } from 'react';
+import { useRouter } from 'expo-router';
 import { Image, View } from 'react-native';
 import type { Cube } from '@/shared/contract/cubes';
-import { API, asProblem } from '@/hooks/api';
+import { asProblem } from '@/hooks/api';
+import { cubeImage } from '@/hooks/cubeImages';
 import { useCubeActions } from '@/hooks/useCubes';
 import { useMay } from '@/hooks/useMe';
 import { velocityLabel } from '@/shared/image/velocityDigits';
@@ -39,6 +41,7 @@ export function CubeRow({ cube }: { cube: Cube }) {
   const mayManage = useMay()('cube.manage');
   const { retry, cancel, remove, restore, rename } = useCubeActions();
   const say = useToast();
+  const router = useRouter();
   const [busy, setBusy] = useState(false);
   const [renaming, setRenaming] = useState(false);
 
@@ -105,24 +108,34 @@ export function CubeRow({ cube }: { cube: Cube }) {
           head
         )}
         <StatusChip status={cube.status} />
-        {mayManage && (
-          <Menu
-            label={`What can be done with ${cube.name}`}
-            items={[
-              { label: 'Rename', icon: 'edit', perform: () => setRenaming(true) },
-              ...(going
-                ? [
-                    {
-                      label: 'Stop reading',
-                      icon: 'close' as const,
-                      perform: () => void act('Stopping', () => cancel(cube.id)),
-                    },
-                  ]
-                : []),
-              { label: 'Take out of the region', icon: 'trash', danger: true, perform: () => void takeOut() },
-            ]}
-          />
-        )}
+        <Menu
+          label={`What can be done with ${cube.name}`}
+          items={[
+            { label: 'About this cube', icon: 'info', perform: () => router.push(`/cubes/${cube.id}/about`) },
+            ...(mayManage
+              ? [{ label: 'Rename', icon: 'edit' as const, perform: () => setRenaming(true) }]
+              : []),
+            ...(mayManage && going
+              ? [
+                  {
+                    label: 'Stop reading',
+                    icon: 'close' as const,
+                    perform: () => void act('Stopping', () => cancel(cube.id)),
+                  },
+                ]
+              : []),
+            ...(mayManage
+              ? [
+                  {
+                    label: 'Take out of the region',
+                    icon: 'trash' as const,
+                    danger: true,
+                    perform: () => void takeOut(),
+                  },
+                ]
+              : []),
+          ]}
+        />
       </View>
       {going && (
         <View style={{ flexDirection: 'row', alignItems: 'center', gap: space(2), paddingRight: space(3) }}>
@@ -194,7 +207,7 @@ function CubePicture({ cube }: { cube: Cube }) {
     >
       {cube.status === 'ready' ? (
         <Image
-          source={{ uri: `${API}/cubes/${cube.id}/channels/${middle}/thumbnail` }}
+          source={{ uri: cubeImage(cube, `channels/${middle}/thumbnail`) }}
           alt=""
           resizeMode="cover"
           style={{ width: side, height: side }}

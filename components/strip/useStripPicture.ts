@@ -1,6 +1,8 @@
 import { useEffect, useMemo, useState } from 'react';
 import type { StripPicture } from '@/components/strip/drawStrip';
-import { API, apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
+import { apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
+import { cubeImage } from '@/hooks/cubeImages';
+import type { Cube } from '@/shared/contract/cubes';
 import { TONE_CURVES, type Tone } from '@/shared/image/tone';
 
 interface Grey {
@@ -10,31 +12,32 @@ interface Grey {
 
 /** The cube's thumbnails in the palette and tone of the map; they keep one brightness window, so that they compare. */
 export function useStripPicture(
-  cubeId: string | null,
+  cube: Pick<Cube, 'id' | 'readyAt'>,
   ramp: Uint32Array,
   tone: Tone,
 ): { picture: StripPicture | null; problem: ApiProblem | null } {
   const [grey, setGrey] = useState<Grey | null>(null);
   const [problem, setProblem] = useState<ApiProblem | null>(null);
 
+  const path = cubeImage(cube, 'strip');
   useEffect(() => {
-    if (!cubeId || typeof createImageBitmap === 'undefined') return;
+    if (typeof createImageBitmap === 'undefined') return;
     const leaving = new AbortController();
     setGrey(null);
     setProblem(null);
-    readStrip(cubeId, leaving.signal).then(
+    readStrip(path, leaving.signal).then(
       (found) => !leaving.signal.aborted && setGrey(found),
       (error: unknown) => !leaving.signal.aborted && setProblem(asProblem(error)),
     );
     return () => leaving.abort();
-  }, [cubeId]);
+  }, [path]);
 
   const picture = useMemo(() => (grey ? coloured(grey, ramp, tone) : null), [grey, ramp, tone]);
   return { picture, problem };
 }
 
-async function readStrip(cubeId: string, signal: AbortSignal): Promise<Grey | null> {
-  const answer = await apiResponse(`${API}/cubes/${cubeId}/strip`, { signal });
+async function readStrip(path: string, signal: AbortSignal): Promise<Grey | null> {
+  const answer = await apiResponse(path, { signal });
   const bitmap = await createImageBitmap(await answer.blob());
   const canvas = document.createElement('canvas');
   canvas.width = bitmap.width;

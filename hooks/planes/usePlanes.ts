@@ -1,7 +1,9 @@
 import { useEffect, useMemo, useSyncExternalStore } from 'react';
-import { API, apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
+import { apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
+import { cubeImage } from '@/hooks/cubeImages';
 import { decodePlane, type ChannelPlane } from '@/hooks/planes/decodePlane';
 import { planeStore, type PlaneStore } from '@/hooks/planes/planeStore';
+import type { Cube } from '@/shared/contract/cubes';
 
 /** Phones keep less: a tab that takes too much is ended by the system. */
 const BUDGET_BYTES = { fine: 256e6, coarse: 96e6 };
@@ -12,11 +14,14 @@ export interface Planes {
   retry: () => void;
 }
 
+type Drawn = Pick<Cube, 'id' | 'readyAt'>;
+
 const stores = new Map<string, PlaneStore>();
 
-/** One store a cube; opening another cube lets the first one's planes go. */
-function storeOf(cubeId: string, side: number, channels: number): PlaneStore {
-  const known = stores.get(cubeId);
+/** One store for a reading of a cube; opening another cube lets the first one's planes go. */
+function storeOf(cube: Drawn, side: number, channels: number): PlaneStore {
+  const key = `${cube.id} ${cube.readyAt}`;
+  const known = stores.get(key);
   if (known) return known;
   for (const [id, store] of stores) {
     store.close();
@@ -28,12 +33,12 @@ function storeOf(cubeId: string, side: number, channels: number): PlaneStore {
     channels,
     budgetBytes: coarse ? BUDGET_BYTES.coarse : BUDGET_BYTES.fine,
     async load(channel, size, signal) {
-      const path = `${API}/cubes/${cubeId}/channels/${channel}/plane${size === null ? '' : `?size=${size}`}`;
-      const answer = await apiResponse(path, { signal });
+      const path = `channels/${channel}/plane${size === null ? '' : `?size=${size}`}`;
+      const answer = await apiResponse(cubeImage(cube, path), { signal });
       return decodePlane(channel, await answer.arrayBuffer(), (name) => answer.headers.get(name));
     },
   });
-  stores.set(cubeId, store);
+  stores.set(key, store);
   return store;
 }
 
@@ -43,13 +48,16 @@ function storeOf(cubeId: string, side: number, channels: number): PlaneStore {
  * @param sidePx device pixels along the image's longer side as it is drawn now
  */
 export function usePlanes(
-  cubeId: string,
+  { id, readyAt }: Drawn,
   image: { nx: number; ny: number; channels: number },
   channel: number,
   sidePx: number,
 ): Planes {
   const side = Math.max(image.nx, image.ny);
-  const store = useMemo(() => storeOf(cubeId, side, image.channels), [cubeId, side, image.channels]);
+  const store = useMemo(
+    () => storeOf({ id, readyAt }, side, image.channels),
+    [id, readyAt, side, image.channels],
+  );
   useSyncExternalStore(store.subscribe, store.version, store.version);
   useEffect(() => store.want(channel, sidePx), [store, channel, sidePx]);
   const plane = store.best(channel);
