@@ -38,7 +38,7 @@ export function FactPanels({ cube, part }: { cube: Cube; part: 'axes' | 'rest' }
 /** A row whose value may be prose, which wraps, unlike a number. */
 const row = (name: string, value: string, prose = false): DefinitionRow => ({
   key: name,
-  name,
+  name: <Text style={{ flexShrink: 0 }}>{name}</Text>,
   value: prose ? <Text align="right">{value}</Text> : value,
 });
 
@@ -139,7 +139,7 @@ function FilePanel({ cube }: { cube: Cube }) {
           ...(cube.readyAt ? [row('Read', moment(cube.readyAt), true)] : []),
           {
             key: 'checksum',
-            name: 'SHA-256',
+            name: <Text style={{ flexShrink: 0 }}>Checksum</Text>,
             value: (
               <Text
                 mono
@@ -148,7 +148,7 @@ function FilePanel({ cube }: { cube: Cube }) {
                 selectable
                 style={{ overflowWrap: 'anywhere', maxWidth: space(72) } as object}
               >
-                {cube.checksum}
+                {`SHA-256 ${cube.checksum}`}
               </Text>
             ),
           },

@@ -119,6 +119,6 @@ const Value = ({ text }: { text: string }) =>
 const Comment = ({ text }: { text: string | null }) =>
   text ? (
     <Text size="small" tone="quiet" style={anywhere}>
-      {text}
+      {text.trim()}
     </Text>
   ) : null;

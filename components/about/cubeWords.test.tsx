@@ -16,7 +16,7 @@ test('angles in degrees and in minutes or seconds of arc', () => {
 
 test('a beam has an angle only where it is not round', () => {
   expect(beamWords({ major: 0.15, minor: 0.15, angle: 0 })).toBe('9′');
-  expect(beamWords({ major: 0.15, minor: 0.1, angle: 30 })).toBe('9′ × 6′, 30° from north through east');
+  expect(beamWords({ major: 0.15, minor: 0.1, angle: 30 })).toBe('9′ × 6′ at 30°');
   expect(beamWords({ major: 20 / 3600, minor: 15 / 3600, angle: -5 })).toContain('20″ × 15″');
   expect(beamWords(null)).toBe('not said');
 });

@@ -69,13 +69,13 @@ export function angleWords(degrees: number): string {
   return minutes >= 120 ? `${three(degrees)}°` : `${three(degrees)}° (${arc})`;
 }
 
-/** '9′ × 6′, 30° from north through east'; a round beam has one width and no angle. */
+/** '9′ × 6′ at 30°', from north through east; a round beam has one width and no angle. */
 export function beamWords(beam: CubeAxes['beam']): string {
   if (!beam) return 'not said';
   const part = (degrees: number) =>
     degrees < 1 / 60 ? `${three(degrees * 3600)}″` : `${three(degrees * 60)}′`;
   const [major, minor] = [part(beam.major), part(beam.minor)];
-  return major === minor ? major : `${major} × ${minor}, ${three(beam.angle)}° from north through east`;
+  return major === minor ? major : `${major} × ${minor} at ${three(beam.angle)}°`;
 }
 
 /** '1420.405752 MHz'. */

@@ -1,12 +1,19 @@
 import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
+import { VIEWS } from '@/components/cube/views';
 import { Text } from '@/components/ui/Text';
 import { space } from '@/components/ui/tokens';
 import { velocityLabel } from '@/shared/image/velocityDigits';
 
 /** The velocity shown, large; the channel beside it. */
 export function Headline({ compact }: { compact?: boolean }) {
-  const { velocity, channel, axes } = useSession();
+  const { velocity, channel, axes, view } = useSession();
+  if (view !== 'channel')
+    return (
+      <Text size={compact ? 'lead' : 'display'} weight="semibold" numberOfLines={1}>
+        {VIEWS[view].label}
+      </Text>
+    );
   return (
     <View
       style={{

@@ -3,6 +3,8 @@ import { ActivityIndicator, View } from 'react-native';
 import { Readout } from '@/components/cube/Readout';
 import { SelectedMark } from '@/components/cube/SelectedMark';
 import { useSession } from '@/components/cube/session';
+import { VIEWS } from '@/components/cube/views';
+import { ViewNote } from '@/components/cube/ViewNote';
 import { ChannelMap } from '@/components/map/ChannelMap';
 import { ProblemNotice } from '@/components/ui/ProblemNotice';
 import { Text } from '@/components/ui/Text';
@@ -16,16 +18,20 @@ export function MapPanel({ round = true }: { round?: boolean }) {
   const s = useSession();
   const { color } = useTheme();
   const { plane, problem, retry } = s.planes;
-  const before = useRef<ChannelPlane | null>(null); // stays, dimmed, until the next one is here
+  // stays, dimmed, until the next one is here
+  const before = useRef<{ view: string; plane: ChannelPlane } | null>(null);
   useEffect(() => {
-    if (plane) before.current = plane;
-  }, [plane]);
+    if (plane) before.current = { view: s.view, plane };
+  }, [plane, s.view]);
+  const last = before.current?.view === s.view ? before.current.plane : null;
   const late = useLate(!plane && !problem);
   const own = s.marksByChannel.get(s.channel) ?? 0;
-  const label =
+  const channelLabel =
     `Channel map at ${velocityLabel(s.velocity, s.axes.spectral.channelWidth)} kilometres per second, channel ${s.channel + 1} of ${s.axes.channels}` +
     `${own > 0 ? `, ${own} mark${own === 1 ? '' : 's'}` : ''}.` +
     `${s.marking ? ' Arrow keys move the crosshair, Enter places a mark.' : ''}`;
+  const label =
+    s.view === 'channel' ? channelLabel : `${VIEWS[s.view].long}, all ${s.axes.channels} channels together.`;
   return (
     <View
       style={{
@@ -40,7 +46,7 @@ export function MapPanel({ round = true }: { round?: boolean }) {
         store={s.store}
         nx={s.axes.nx}
         ny={s.axes.ny}
-        plane={plane ?? before.current}
+        plane={plane ?? last}
         stale={!plane}
         look={s.look.look}
         scene={s.scene}
@@ -52,6 +58,7 @@ export function MapPanel({ round = true }: { round?: boolean }) {
         onMove={s.moveMark}
       />
       <SelectedMark />
+      <ViewNote />
       <Readout />
       {late && (
         <View
@@ -70,7 +77,7 @@ export function MapPanel({ round = true }: { round?: boolean }) {
         >
           <ActivityIndicator size="small" color={color.onImage} />
           <Text size="small" tone="onImage">
-            Loading this channel
+            {s.view === 'channel' ? 'Loading this channel' : 'Loading the map'}
           </Text>
         </View>
       )}

@@ -116,13 +116,16 @@ export function PhoneCube({
   );
   const over = look.open && (
     <View
+      pointerEvents="box-none"
       style={{
         position: 'absolute',
         left: space(2),
         right: space(2),
+        top: space(2),
         bottom: space(2),
         zIndex: 3,
         alignItems: 'center',
+        justifyContent: 'flex-end',
       }}
     >
       <LookPanel onClose={look.toggle} />

@@ -4,7 +4,7 @@ import { brightness, coordinateDigits, degrees, frameWords } from '@/components/
 import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { radius, space } from '@/components/ui/tokens';
-import { brightnessAt } from '@/hooks/planes/decodePlane';
+import { ALL_CHANNELS, brightnessAt } from '@/hooks/planes/decodePlane';
 import { useValue } from '@/hooks/valueStore';
 import { pixelAt, type ImagePoint } from '@/shared/image/viewport';
 import { velocityLabel } from '@/shared/image/velocityDigits';
@@ -14,7 +14,7 @@ const itself = (at: ImagePoint | null) => at;
 
 /** Longitude, latitude, velocity and brightness under the pointer. Renders with the pointer, and nothing else does. */
 export function Readout() {
-  const { wcs, axes, store, velocity, channel, planes } = useSession();
+  const { wcs, axes, store, velocity, channel, planes, view, unit } = useSession();
   const { color } = useTheme();
   const at = useValue(store.hover, itself);
   const pixel = at && pixelAt(axes, at);
@@ -23,8 +23,10 @@ export function Readout() {
   const galactic = wcs.pixelToGalactic(at.x, at.y);
   const sky = axes.frame === 'galactic' ? null : wcs.pixelToSky(at.x, at.y);
   const own = frameWords(axes.frame);
-  const plane = planes.plane?.channel === channel ? planes.plane : null;
+  const plane = planes.plane?.channel === (view === 'channel' ? channel : ALL_CHANNELS) ? planes.plane : null;
   const value = plane ? brightnessAt(plane, pixel.i, pixel.j) : NaN;
+  const channelWords =
+    view === 'channel' ? `${velocityLabel(velocity, axes.spectral.channelWidth)} km/s  ` : '';
   return (
     <View
       pointerEvents="none"
@@ -52,9 +54,7 @@ export function Readout() {
         </Text>
       )}
       <Text mono size="small" tone="onImage" align="right">
-        {`${velocityLabel(velocity, axes.spectral.channelWidth)} km/s  ${plane ? brightness(value) : '…'}${
-          plane && Number.isFinite(value) && axes.unit ? ` ${axes.unit}` : ''
-        }`}
+        {`${channelWords}${plane ? brightness(value) : '…'}${plane && Number.isFinite(value) && unit ? ` ${unit}` : ''}`}
       </Text>
     </View>
   );

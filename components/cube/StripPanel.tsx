@@ -7,9 +7,9 @@ import { useChannels } from '@/hooks/useCubes';
 
 /** The strip, wired to the session. */
 export function StripPanel() {
-  const { cube, order, channel, showChannel, marksByChannel, model, look } = useSession();
+  const { cube, order, channel, showChannel, marksByChannel, model, channelLook } = useSession();
   const { data: channels, problem, reload } = useChannels(cube.id);
-  const strip = useStripPicture(cube, look.look.ramp, look.tone);
+  const strip = useStripPicture(cube, channelLook.look.ramp, channelLook.tone);
   const spectrum = useMemo(() => {
     const means: (number | null)[] = order.channels.map(() => null);
     for (const c of channels?.items ?? []) means[c.channel] = c.mean;

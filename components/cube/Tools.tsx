@@ -21,11 +21,11 @@ export function Tools({
   /** Room for palette and tone beside the window. */
   roomy?: boolean;
 }) {
-  const { markMode, setMarkMode, shell, mayMark, reading, look, axes, store } = useSession();
+  const { markMode, setMarkMode, shell, mayMark, reading, look, unit, store, view } = useSession();
   const showKeys = useShowKeys();
   const { undo, redo, ready } = reading.state;
   const canMark = shell !== null && mayMark;
-  const window = windowWords(look.window, axes.unit);
+  const window = windowWords(look.window, unit);
   return (
     <View
       role="toolbar"
@@ -41,7 +41,12 @@ export function Tools({
     >
       {canMark && (
         <>
-          <ToggleChip label="Mark" selected={markMode} onPress={() => setMarkMode(!markMode)} />
+          <ToggleChip
+            label="Mark"
+            selected={markMode && view === 'channel'}
+            disabled={view !== 'channel'}
+            onPress={() => setMarkMode(!markMode)}
+          />
           <IconButton
             icon="undo"
             label="Undo"

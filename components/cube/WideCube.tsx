@@ -72,9 +72,11 @@ export function WideCube({
           <MapPanel />
           {look.open && (
             <View
+              pointerEvents="box-none"
               style={{
                 position: 'absolute',
                 top: space(2),
+                bottom: space(2),
                 right: space(2),
                 left: space(2),
                 alignItems: 'flex-end',

@@ -1,5 +1,5 @@
 import { cubeCommands } from '@/components/cube/cubeCommands';
-import type { CubeSession } from '@/components/cube/useCubeSession';
+import type { CubeSession } from '@/components/cube/cubeSession';
 import { commandFor } from '@/components/ui/commands/command';
 
 const session = (more: object = {}) =>

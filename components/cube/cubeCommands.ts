@@ -1,4 +1,5 @@
-import type { CubeSession } from '@/components/cube/useCubeSession';
+import type { CubeSession } from '@/components/cube/cubeSession';
+import { VIEW_ORDER } from '@/components/cube/views';
 import { zoomMap } from '@/components/cube/zoomMap';
 import type { Command } from '@/components/ui/commands/command';
 import { PALETTES } from '@/shared/image/palettes';
@@ -98,6 +99,13 @@ export function cubeCommands(s: CubeSession, view: CommandView): Command[] {
       keys: ['w'],
       group: 'Map',
       perform: view.onLook,
+    },
+    {
+      name: 'map.view',
+      label: 'Channel, or the next map of all channels',
+      keys: ['v'],
+      group: 'Map',
+      perform: () => s.setView(after(VIEW_ORDER, s.view)),
     },
     {
       name: 'map.palette',

@@ -3,6 +3,7 @@ import { paramsOf, placeOf, type CubePlace } from '@/components/cube/place';
 const nothing: CubePlace = {
   channel: null,
   shell: null,
+  map: null,
   view: null,
   mark: null,
   palette: null,
@@ -14,6 +15,7 @@ test('a place goes into the address and comes back', () => {
   const place: CubePlace = {
     channel: 19,
     shell: 'a-b',
+    map: 'velocity',
     view: { x: 200.5, y: 311, zoom: 2.5 },
     mark: 3,
     palette: 'Tide',
@@ -21,7 +23,14 @@ test('a place goes into the address and comes back', () => {
     window: [-2.5, 27],
   };
   const params = paramsOf(place);
-  expect(params).toMatchObject({ ch: '19', zoom: '2.5', x: '200.5', low: '-2.5', palette: 'Tide' });
+  expect(params).toMatchObject({
+    ch: '19',
+    zoom: '2.5',
+    x: '200.5',
+    low: '-2.5',
+    palette: 'Tide',
+    map: 'velocity',
+  });
   expect(placeOf(params)).toEqual(place);
 });
 
@@ -36,6 +45,7 @@ test('nonsense is as if it were not given', () => {
   expect(
     placeOf({
       ch: '-3',
+      map: 'channel',
       zoom: '0',
       x: 'a',
       y: '1',

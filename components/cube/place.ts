@@ -1,3 +1,5 @@
+import type { MapKind } from '@/shared/contract/cubes';
+import { VIEW_ORDER } from '@/components/cube/views';
 import { PALETTES, type Palette } from '@/shared/image/palettes';
 import { TONES, type Tone } from '@/shared/image/tone';
 
@@ -5,6 +7,8 @@ import { TONES, type Tone } from '@/shared/image/tone';
 export interface CubePlace {
   channel: number | null;
   shell: string | null;
+  /** A map of all channels in the channel's place. */
+  map: MapKind | null;
   /** The image point in the middle of the map; zoom 1 fits the image. Null: the whole image. */
   view: { x: number; y: number; zoom: number } | null;
   /** A mark of the reading, by its number in the list. */
@@ -36,6 +40,7 @@ export function placeOf(params: Record<string, string | string[] | undefined>): 
   return {
     channel: count('ch'),
     shell: text('shell'),
+    map: VIEW_ORDER.find((v): v is MapKind => v !== 'channel' && v === text('map')) ?? null,
     view: x !== null && y !== null && zoom !== null && zoom > 0 ? { x, y, zoom } : null,
     mark: count('mark'),
     palette: palette ?? null,
@@ -53,6 +58,7 @@ export function paramsOf(place: CubePlace): AddressParams {
   return {
     ch: place.channel === null ? undefined : String(place.channel),
     shell: place.shell ?? undefined,
+    map: place.map ?? undefined,
     zoom: moved ? short(view.zoom, 4) : undefined,
     x: moved ? short(view.x, 6) : undefined,
     y: moved ? short(view.y, 6) : undefined,

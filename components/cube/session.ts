@@ -1,5 +1,5 @@
 import { createContext, useContext } from 'react';
-import type { CubeSession } from '@/components/cube/useCubeSession';
+import type { CubeSession } from '@/components/cube/cubeSession';
 
 export const SessionContext = createContext<CubeSession | null>(null);
 

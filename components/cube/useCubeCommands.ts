@@ -1,5 +1,5 @@
 import { cubeCommands, type CommandView } from '@/components/cube/cubeCommands';
-import type { CubeSession } from '@/components/cube/useCubeSession';
+import type { CubeSession } from '@/components/cube/cubeSession';
 import { useCommands } from '@/components/ui/commands/CommandsProvider';
 
 /** Makes the cube screen's keys live. */

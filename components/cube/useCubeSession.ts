@@ -1,69 +1,24 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import type { CubeSession, Grid } from '@/components/cube/cubeSession';
 import type { CubePlace } from '@/components/cube/place';
-import { useLook, type LookControl } from '@/components/cube/useLook';
+import { useLook } from '@/components/cube/useLook';
 import { useAddress } from '@/components/cube/usePlace';
-import { useModel, type ShownModel } from '@/components/cube/useModel';
+import { useModel } from '@/components/cube/useModel';
 import { useScene } from '@/components/cube/useScene';
-import { mapStore, type MapStore } from '@/components/map/mapStore';
-import type { Scene } from '@/components/map/scene';
-import { stepped, stripOrder, type StripOrder } from '@/components/strip/stripOrder';
-import { newMarkId, type PlacedMark } from '@/hooks/reading/placedMark';
-import { useLiveFit, type LiveFit } from '@/hooks/reading/useLiveFit';
-import { useReading, type ReadingSession } from '@/hooks/reading/useReading';
-import { usePlanes, type Planes } from '@/hooks/planes/usePlanes';
+import { useView } from '@/components/cube/useView';
+import { unitOf } from '@/components/cube/views';
+import { mapStore } from '@/components/map/mapStore';
+import { stepped, stripOrder } from '@/components/strip/stripOrder';
+import { newMarkId } from '@/hooks/reading/placedMark';
+import { useLiveFit } from '@/hooks/reading/useLiveFit';
+import { useReading } from '@/hooks/reading/useReading';
+import { usePlanes } from '@/hooks/planes/usePlanes';
 import { useMay, useMe } from '@/hooks/useMe';
 import { useShells } from '@/hooks/useShells';
-import type { List, Read } from '@/hooks/useRead';
 import { useValue } from '@/hooks/valueStore';
 import type { Cube, CubeAxes } from '@/shared/contract/cubes';
-import type { Shell } from '@/shared/contract/shells';
 import { clamped, within, type ImagePoint, type Viewport } from '@/shared/image/viewport';
 import type { Wcs } from '@/shared/sky/wcs';
-
-export type Grid = 'galactic' | 'own' | 'off';
-
-/** Everything the cube screen's parts share. */
-export interface CubeSession extends ShownModel {
-  cube: Cube;
-  axes: CubeAxes;
-  wcs: Wcs;
-  order: StripOrder;
-  channel: number;
-  velocity: number;
-  look: LookControl;
-  grid: Grid;
-  setGrid: (grid: Grid) => void;
-  planes: Planes;
-  store: MapStore;
-  scene: Scene;
-  start: CubePlace;
-  shells: Read<List<Shell>>;
-  shell: Shell | null;
-  chooseShell: (id: string | null) => void;
-  /** The role allows marking at all. */
-  mayMark: boolean;
-  /** Marks can be placed now. */
-  marking: boolean;
-  markMode: boolean;
-  setMarkMode: (on: boolean) => void;
-  reading: ReadingSession;
-  /** My marks of the shell lie on another cube. */
-  elsewhere: string | null;
-  marks: readonly PlacedMark[];
-  marksByChannel: ReadonlyMap<number, number>;
-  live: LiveFit;
-  /** I have a reading of this shell on this cube, or can begin one. */
-  hasReading: boolean;
-  selected: PlacedMark | null;
-  select: (id: string | null) => void;
-  showChannel: (channel: number) => void;
-  stepChannel: (steps: number) => void;
-  placeMark: (at: ImagePoint) => void;
-  moveMark: (id: string, at: ImagePoint, gesture: string) => void;
-  removeMarks: (ids: readonly string[]) => void;
-  /** Show a place: its channel, with the mark there selected, and in sight. */
-  showPlace: (at: { channel: number; x: number; y: number }) => void;
-}
 
 /** How sharp a plane is wanted, in steps of two so that zooming asks rarely. */
 const sharpness = (v: Viewport | null): number =>
@@ -85,7 +40,11 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const [selectedId, setSelected] = useState<string | null>(null);
   const [markMode, setMarkMode] = useState(true);
   const [grid, setGrid] = useState<Grid>('galactic');
-  const look = useLook(start, cube.window ?? [0, 1]);
+  const channelLook = useLook(start, cube.window ?? [0, 1]);
+  const shownView = useView(cube, start.map, channelLook);
+  const { view, setView } = shownView;
+  const onMap = view !== 'channel';
+  const look = shownView.look ?? channelLook;
 
   const shell = shells.data?.items.find((s) => s.id === shellId) ?? null;
   const mayMark = may('reading.write');
@@ -94,7 +53,8 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const elsewhere =
     state.cubeId !== null && state.cubeId !== cube.id && state.marks.length > 0 ? state.cubeId : null;
   const marks = useMemo(() => (elsewhere ? [] : state.marks), [elsewhere, state.marks]);
-  const marking = shell !== null && mayMark && state.ready && !elsewhere && !state.conflict && markMode;
+  const marking =
+    shell !== null && mayMark && state.ready && !elsewhere && !state.conflict && markMode && !onMap;
 
   const velocities = axes.spectral.velocities;
   const range = useMemo(() => [velocities[0], velocities[1]] as const, [velocities]);
@@ -103,14 +63,16 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const { model } = shown;
 
   const image = useMemo(() => ({ nx: axes.nx, ny: axes.ny, channels: axes.channels }), [axes]);
-  const planes = usePlanes(cube, image, channel, useValue(store.viewport, sharpness));
-  const selected = marks.find((m) => m.id === selectedId && m.channel === channel) ?? null;
+  const channelPlanes = usePlanes(cube, image, channel, useValue(store.viewport, sharpness));
+  const planes = onMap ? shownView.planes : channelPlanes;
+  const selected = (!onMap && marks.find((m) => m.id === selectedId && m.channel === channel)) || null;
   const scene = useScene({
     wcs,
     image,
     order,
     channel,
     channelWidth: axes.spectral.channelWidth,
+    allChannels: onMap,
     marks,
     selected: selected?.id ?? null,
     readings: live.readings,
@@ -124,10 +86,14 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     return counts;
   }, [marks]);
 
-  const showChannel = useCallback((to: number) => {
-    performance.mark?.('outswell:channel-asked', { detail: { channel: to } });
-    setChannel(to);
-  }, []);
+  const showChannel = useCallback(
+    (to: number) => {
+      performance.mark?.('outswell:channel-asked', { detail: { channel: to } });
+      setChannel(to);
+      setView('channel'); // who moves along the strip wants to see channels
+    },
+    [setView],
+  );
   const here = useRef({ channel, marks, order, image, store });
   useEffect(() => {
     here.current = { channel, marks, order, image, store };
@@ -185,11 +151,12 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
       channel,
       shell: shellId,
       mark: markNumber < 0 ? null : markNumber,
-      palette: look.palette === 'Ink' ? null : look.palette,
-      tone: look.tone === 'arcsinh' ? null : look.tone,
-      window: look.usual ? null : look.window,
+      map: view === 'channel' ? null : view,
+      palette: channelLook.palette === 'Ink' ? null : channelLook.palette,
+      tone: channelLook.tone === 'arcsinh' ? null : channelLook.tone,
+      window: channelLook.usual ? null : channelLook.window,
     }),
-    [channel, shellId, markNumber, look],
+    [channel, shellId, markNumber, view, channelLook],
   );
   useAddress(place, store);
 
@@ -200,7 +167,11 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     order,
     channel,
     velocity: wcs.velocityOf(channel),
+    view,
+    setView,
     look,
+    channelLook,
+    unit: unitOf(view, axes.unit),
     grid,
     setGrid,
     planes,

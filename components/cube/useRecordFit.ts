@@ -1,5 +1,5 @@
 import { useCallback, useState } from 'react';
-import type { CubeSession } from '@/components/cube/useCubeSession';
+import type { CubeSession } from '@/components/cube/cubeSession';
 import { ApiProblem, asProblem } from '@/hooks/api';
 import { useFitActions, useFits } from '@/hooks/useFits';
 import { useMay } from '@/hooks/useMe';

@@ -27,6 +27,8 @@ export interface SceneInput {
   order: StripOrder;
   channel: number;
   channelWidth: number;
+  /** The picture is a map of all channels: no marks lie on it, and the model shows its widest ring. */
+  allChannels: boolean;
   marks: readonly PlacedMark[];
   selected: string | null;
   readings: readonly ChannelReading[];
@@ -38,6 +40,7 @@ export interface SceneInput {
 /** What lies over the map, in image pixels; every ring is a circle on the sky, drawn where the projection puts it. */
 export function useScene(input: SceneInput): Scene {
   const { wcs, image, order, channel, channelWidth, marks, selected, readings, model, beam, grid } = input;
+  const { allChannels } = input;
   const { nx, ny } = image;
   const jump = Math.max(nx, ny) / 2;
   const galactic = useMemo<Project>(
@@ -64,24 +67,25 @@ export function useScene(input: SceneInput): Scene {
   }, [wcs, beam, nx, ny]);
 
   const sceneMarks = useMemo<SceneMark[]>(() => {
+    if (allChannels) return [];
     const here = order.positions[channel] ?? 0;
     return marks.flatMap((mark) => {
       const away = (order.positions[mark.channel] ?? Infinity) - here;
       if (Math.abs(away) > NEIGHBOURS) return [];
       return [{ id: mark.id, x: mark.x, y: mark.y, away, selected: mark.id === selected }];
     });
-  }, [marks, order, channel, selected]);
+  }, [marks, order, channel, selected, allChannels]);
 
   const velocity = wcs.velocityOf(channel);
   const modelRing = useMemo(() => {
     if (!model) return null;
-    const radius = modelRadius(velocity, channelWidth, model);
+    const radius = allChannels ? model.theta : modelRadius(velocity, channelWidth, model);
     return radius === null || radius <= 0
       ? null
       : ringPath({ lon: model.l, lat: model.b }, radius, galactic, jump);
-  }, [model, velocity, channelWidth, galactic, jump]);
+  }, [model, velocity, channelWidth, allChannels, galactic, jump]);
 
-  const own = readings.find((r) => r.channel === channel)?.ring ?? null;
+  const own = allChannels ? null : (readings.find((r) => r.channel === channel)?.ring ?? null);
   const ownRing = useMemo(
     () => (own ? ringPath({ lon: own.l, lat: own.b }, own.theta, galactic, jump) : null),
     [own, galactic, jump],

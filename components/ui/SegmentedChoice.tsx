@@ -16,6 +16,8 @@ export interface ChoiceProps<T extends string> {
   onChange: (value: T) => void;
   hideLabel?: boolean;
   disabled?: boolean;
+  /** Tighter, for many options in a narrow place. */
+  small?: boolean;
 }
 
 /** One of a few, all in sight; arrow keys move as in any group of radio buttons. */
@@ -26,6 +28,7 @@ export function SegmentedChoice<T extends string>({
   onChange,
   hideLabel,
   disabled,
+  small,
 }: ChoiceProps<T>) {
   const { color } = useTheme();
   const step = (key: string) => {
@@ -80,7 +83,7 @@ export function SegmentedChoice<T extends string>({
               style={({ hovered }: PressState) => ({
                 minHeight: touch,
                 minWidth: touch,
-                paddingHorizontal: space(3),
+                paddingHorizontal: space(small ? 1.5 : 3),
                 alignItems: 'center',
                 justifyContent: 'center',
                 backgroundColor: selected ? color.action : hovered ? color.chip : color.panel,
@@ -89,7 +92,11 @@ export function SegmentedChoice<T extends string>({
                 opacity: disabled || option.disabled ? 0.5 : 1,
               })}
             >
-              <Text weight={selected ? 'semibold' : 'regular'} tone={selected ? 'onAction' : 'text'}>
+              <Text
+                size={small ? 'small' : 'body'}
+                weight={selected ? 'semibold' : 'regular'}
+                tone={selected ? 'onAction' : 'text'}
+              >
                 {option.label}
               </Text>
             </Press>

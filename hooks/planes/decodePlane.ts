@@ -1,6 +1,9 @@
 import { brightnessOf } from '@/shared/image/quantise';
 
-/** One channel as numbers, whole or reduced; row y = 0 first. */
+/** In the place of a channel's number: the plane is a map made of all of them. */
+export const ALL_CHANNELS = -1;
+
+/** One channel, or a map of all, as numbers, whole or reduced; row y = 0 first. */
 export interface ChannelPlane {
   channel: number;
   values: Uint16Array;
@@ -23,10 +26,11 @@ export function decodePlane(
   body: ArrayBuffer,
   header: (name: string) => string | null,
 ): ChannelPlane {
+  const what = channel === ALL_CHANNELS ? 'The map' : `The plane of channel ${channel}`;
   const read = (name: string): number => {
     const text = header(name);
     const value = text === null || text.trim() === '' ? NaN : Number(text);
-    if (!Number.isFinite(value)) throw new Error(`The plane of channel ${channel} came without ${name}.`);
+    if (!Number.isFinite(value)) throw new Error(`${what} came without ${name}.`);
     return value;
   };
   const plane = {
@@ -39,9 +43,7 @@ export function decodePlane(
     blank: read('Plane-Blank'),
   };
   if (body.byteLength !== plane.width * plane.height * 2)
-    throw new Error(
-      `The plane of channel ${channel} has ${body.byteLength} bytes, not ${plane.width} × ${plane.height} × 2.`,
-    );
+    throw new Error(`${what} has ${body.byteLength} bytes, not ${plane.width} × ${plane.height} × 2.`);
   return { ...plane, values: new Uint16Array(body) };
 }
 

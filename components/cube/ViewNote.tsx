@@ -1,0 +1,45 @@
+import { View } from 'react-native';
+import { useSession } from '@/components/cube/session';
+import { VIEWS } from '@/components/cube/views';
+import { IconButton } from '@/components/ui/Button';
+import { Text } from '@/components/ui/Text';
+import { useTheme } from '@/components/ui/theme';
+import { radius, space } from '@/components/ui/tokens';
+
+/** Over a map of all channels: what it is, why nothing can be marked on it, and the way back. */
+export function ViewNote() {
+  const { view, setView, mayMark, shell } = useSession();
+  const { color } = useTheme();
+  if (view === 'channel') return null;
+  return (
+    <View
+      style={{
+        position: 'absolute',
+        left: space(2),
+        top: space(2),
+        flexDirection: 'row',
+        alignItems: 'center',
+        paddingLeft: space(3),
+        borderRadius: radius.small,
+        backgroundColor: color.image,
+      }}
+    >
+      <View>
+        <Text size="small" tone="onImage" weight="semibold">
+          {`${VIEWS[view].label}, all channels`}
+        </Text>
+        {mayMark && shell && (
+          <Text size="small" tone="onImage">
+            Marks go on channels.
+          </Text>
+        )}
+      </View>
+      <IconButton
+        icon="close"
+        label="Back to the channel"
+        tone="onImage"
+        onPress={() => setView('channel')}
+      />
+    </View>
+  );
+}
