@@ -1,18 +1,20 @@
 import { stat } from 'node:fs/promises';
 import { isProblem, Problem } from '@/shared/contract/problem';
-import type { CubeHead } from '@/shared/fits/cubeHead';
 import { planeStatistics } from '@/shared/fits/statistics';
 import { buildWcs, type Wcs } from '@/shared/sky/wcs';
 import { openDiskSource, type ByteSource } from '@/server/files/byteSource';
-import { readCubeHead } from '@/server/files/cubeHead';
+import { openPlain, type PlainSource } from '@/server/files/plainSource';
 import { readPixel, readPlanes } from '@/server/files/planes';
 
 const USAGE =
-  'npm run inspect -- file.fits [--hdu n] [--at=x,y,channel]... [--from=l,b,velocity]... [--stats]';
+  'npm run inspect -- file.fits [--hdu n] [--stokes n] [--at=x,y,channel]... [--from=l,b,velocity]... [--stats]';
+
+type Pixels = PlainSource['pixels'];
 
 interface Options {
   file: string;
   hdu?: number;
+  stokes?: number;
   at: number[][];
   from: number[][];
   stats: boolean;
@@ -23,21 +25,22 @@ async function main(args: string[]): Promise<void> {
   const options = parse(args);
   const source = await open(options.file);
   try {
-    process.stdout.write(`${JSON.stringify(await inspect(source, options), null, 2)}\n`);
+    const plain = await openPlain(source, { hdu: options.hdu, stokes: options.stokes });
+    const seen = await inspect(plain, options).finally(() => plain.close());
+    process.stdout.write(`${JSON.stringify(seen, null, 2)}\n`);
   } finally {
     await source.close();
   }
 }
 
-async function inspect(source: ByteSource, options: Options) {
-  const head = await readCubeHead(source, options.hdu);
+async function inspect({ head, pixels }: PlainSource, options: Options) {
   const wcs = buildWcs(head.wcs);
   const { type, convention, frame, restFrequencyHz, velocities } = head.spectral;
   const cautions = [...head.cautions];
-  const stats = options.stats ? await statisticsOf(source, head, cautions) : [];
-  if (!options.stats) await requireNumbers(source, head);
+  const stats = options.stats ? await statisticsOf(pixels, cautions) : [];
+  if (!options.stats) await requireNumbers(pixels);
   const at = [];
-  for (const [x, y, channel] of options.at) at.push(await placeAt(source, head, wcs, x!, y!, channel!));
+  for (const [x, y, channel] of options.at) at.push(await placeAt(pixels, wcs, x!, y!, channel!));
   return {
     shape: head.shape,
     bitpix: head.bitpix,
@@ -53,7 +56,7 @@ async function inspect(source: ByteSource, options: Options) {
   };
 }
 
-async function placeAt(source: ByteSource, head: CubeHead, wcs: Wcs, x: number, y: number, channel: number) {
+async function placeAt(pixels: Pixels, wcs: Wcs, x: number, y: number, channel: number) {
   const sky = wcs.pixelToSky(x, y);
   const galactic = wcs.pixelToGalactic(x, y);
   return {
@@ -66,12 +69,12 @@ async function placeAt(source: ByteSource, head: CubeHead, wcs: Wcs, x: number, 
     b: galactic?.b ?? null,
     velocity: wcs.velocityOf(channel),
     frequencyHz: wcs.frequencyHzOf(channel),
-    value: await valueNear(source, head, x, y, channel),
+    value: await valueNear(pixels, x, y, channel),
   };
 }
 
 /** Brightness of the pixel that holds the place; null outside the cube and at a blank. */
-async function valueNear(source: ByteSource, head: CubeHead, x: number, y: number, channel: number) {
+async function valueNear({ source, head }: Pixels, x: number, y: number, channel: number) {
   const { nx, ny, channels } = head.shape;
   const [i, j, k] = [Math.round(x), Math.round(y), Math.round(channel)];
   const inside = i >= 0 && j >= 0 && k >= 0 && i < nx && j < ny && k < channels;
@@ -91,7 +94,7 @@ function placeFrom(wcs: Wcs, l: number, b: number, velocity: number) {
   };
 }
 
-async function statisticsOf(source: ByteSource, head: CubeHead, cautions: string[]) {
+async function statisticsOf({ source, head }: Pixels, cautions: string[]) {
   const scratch = new Float64Array(head.shape.nx * head.shape.ny);
   const stats = [];
   let infinite = 0;
@@ -105,7 +108,7 @@ async function statisticsOf(source: ByteSource, head: CubeHead, cautions: string
 }
 
 /** Refuse a cube without a single number; one plane is enough to tell for most cubes. */
-async function requireNumbers(source: ByteSource, head: CubeHead): Promise<void> {
+async function requireNumbers({ source, head }: Pixels): Promise<void> {
   for await (const plane of readPlanes(source, head)) {
     if (plane.values.some((v) => !Number.isNaN(v))) return;
   }
@@ -135,6 +138,7 @@ function parse(args: string[]): Options {
     else if (name === '--at') options.at.push(numbers(name, value(), 3));
     else if (name === '--from') options.from.push(numbers(name, value(), 3));
     else if (name === '--hdu') options.hdu = numbers(name, value(), 1)[0]!;
+    else if (name === '--stokes') options.stokes = numbers(name, value(), 1)[0]!;
     else if (name.startsWith('--') || options.file !== '') throw wrong(`${args[i]} is not understood`);
     else options.file = args[i]!;
   }

@@ -48,8 +48,17 @@ export interface FoundCube {
  * @throws Problem not-fits, fits-card, fits-shape, fits-truncated; of several HDUs without a cube, the first image's
  */
 export async function findCube(read: ReadBytes, size: FileSize, choice: CubeChoice = {}): Promise<CubeHead> {
-  return withWhatFollows(await locateCube(read, size, choice), read, size, choice.hdu === undefined);
+  const found = await locateCube(read, size, choice);
+  return (await withWhatFollows(found, read, size, choice.hdu === undefined)).head;
 }
+
+/** Where the HDUs that were looked at end, and the number of the next. */
+export interface RestOfFile {
+  start: number;
+  index: number;
+}
+
+export const restAfter = ({ hdu }: FoundCube): RestOfFile => ({ start: hdu.end, index: hdu.index + 1 });
 
 /** The head of a cube that was located, with the images and cautions of the rest of the file. */
 export async function withWhatFollows(
@@ -57,14 +66,15 @@ export async function withWhatFollows(
   read: ReadBytes,
   size: FileSize,
   isFirst: boolean,
-): Promise<CubeHead> {
+): Promise<{ head: CubeHead; rest: RestOfFile }> {
   const after = await lookBehind(read, hdu, size);
   const other = after.hdus.find((h) => h.usable);
   const cautions = [...head.cautions, ...after.cautions];
   if (isFirst && other)
     cautions.push(`The file holds more than one cube; HDU ${hdu.index} is read, HDU ${other.index} is not.`);
   const hdus = [...before, choiceOf(hdu, true), ...after.hdus];
-  return { ...head, cautions, choices: { hdus, stokes: head.choices?.stokes ?? [] } };
+  const choices = { hdus, stokes: head.choices?.stokes ?? [] };
+  return { head: { ...head, cautions, choices }, rest: after.rest };
 }
 
 /**
@@ -204,28 +214,33 @@ async function lookBehind(
   read: ReadBytes,
   { end, index }: Hdu,
   size: FileSize,
-): Promise<{ hdus: HduChoice[]; cautions: string[] }> {
+): Promise<{ hdus: HduChoice[]; cautions: string[]; rest: RestOfFile }> {
   const hdus: HduChoice[] = [];
-  let offset = end;
-  for (let k = index + 1; k < MAX_HDUS && offset < now(size); k++) {
-    const begin = await read(offset, BLOCK);
+  const cautions: string[] = [];
+  const rest = { start: end, index: index + 1 };
+  for (; rest.index < MAX_HDUS && rest.start < now(size); rest.index++) {
+    const begin = await read(rest.start, BLOCK);
     if (begin.length === 0) break;
     if (!startsExtension(begin)) {
-      if (begin.every((b) => b === 0)) break;
-      const rest = Number.isFinite(now(size)) ? `${now(size) - offset} bytes` : 'The bytes';
-      return { hdus, cautions: [`${rest} after the data are no FITS and are ignored.`] };
+      const bytes = now(size) - rest.start;
+      if (begin.some((b) => b !== 0))
+        cautions.push(
+          `${Number.isFinite(bytes) ? `${bytes} bytes` : 'Bytes'} after the data are no FITS and are ignored.`,
+        );
+      break;
     }
     try {
-      const next = await readHdu(read, offset, size, k);
+      const next = await readHdu(read, rest.start, size, rest.index);
       if (next === null) break;
       if (next.hasImage) hdus.push(choiceOf(next, !(tryDescribe(next, size, undefined) instanceof Problem)));
-      offset = next.end;
+      rest.start = next.end;
     } catch (error) {
-      if (!(error instanceof Problem) || error.type === 'gzip-damaged') throw error;
-      return { hdus, cautions: [`What follows the cube (HDU ${k}) cannot be read and is ignored.`] };
+      if (!(error instanceof Problem) || error.type === 'compressed-damaged') throw error;
+      cautions.push(`What follows the cube (HDU ${rest.index}) cannot be read and is ignored.`);
+      break;
     }
   }
-  return { hdus, cautions: [] };
+  return { hdus, cautions, rest };
 }
 
 export function startsExtension(bytes: Uint8Array): boolean {

@@ -38,7 +38,7 @@ export interface TableColumn {
 }
 
 /** Most pixels of a tile: its integers and its pixels are in memory together. */
-export const MAX_TILE_PIXELS = 2 ** 24;
+export const MAX_TILE_PIXELS = 2 ** 23;
 const BYTES: Record<string, number> = {
   L: 1,
   B: 1,
