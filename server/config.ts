@@ -45,6 +45,8 @@ export interface Config {
   /** null: no mail is sent. */
   mail: MailConfig | null;
   maxUploadBytes: number;
+  /** A gzip or tile-compressed file is expanded up to here. */
+  maxExpandedBytes: number;
   workerThreads: number;
   logLevel: Environment['LOG_LEVEL'];
   /** Written into the provenance of every fit. */
@@ -166,6 +168,7 @@ function toConfig(e: Environment): Config {
           },
     mail: e.SMTP_URL === undefined ? null : { smtpUrl: e.SMTP_URL, from: e.MAIL_FROM! },
     maxUploadBytes: e.MAX_UPLOAD_BYTES,
+    maxExpandedBytes: e.MAX_EXPANDED_BYTES,
     workerThreads: e.WORKER_THREADS,
     logLevel: e.LOG_LEVEL,
     codeVersion: packageJson.version + (e.OUTSWELL_COMMIT ? `+${e.OUTSWELL_COMMIT}` : ''),

@@ -73,6 +73,7 @@ export const variables = {
   ),
   MAIL_FROM: optional(z.string().regex(/^[^@\r\n]*[^@\s<>]+@[^@\s<>]+>?$/, 'must be an e-mail address')),
   MAX_UPLOAD_BYTES: withDefault(whole(2880, Number.MAX_SAFE_INTEGER), String(20 * 1024 ** 3)),
+  MAX_EXPANDED_BYTES: withDefault(whole(2880, Number.MAX_SAFE_INTEGER), String(64 * 1024 ** 3)),
   WORKER_THREADS: withDefault(whole(1, 64), '2'),
   LOG_LEVEL: withDefault(
     z.enum(
