@@ -124,7 +124,7 @@ export function PhoneCube({
         top: space(2),
         bottom: space(2),
         zIndex: 3,
-        alignItems: 'center',
+        alignItems: lying ? 'flex-end' : 'center', // beside the map where there is a beside
         justifyContent: 'flex-end',
       }}
     >

@@ -96,6 +96,9 @@ export function Screen({
   );
 }
 
+/** A name without a space must not push the page sideways. */
+const anywhere = { overflowWrap: 'anywhere' } as object;
+
 function PageHead({
   title,
   subtitle,
@@ -127,7 +130,7 @@ function PageHead({
             flexWrap: 'wrap',
           }}
         >
-          <Text heading={1} size="title" weight="bold">
+          <Text heading={1} size="title" weight="bold" style={anywhere}>
             {title}
           </Text>
           {subtitle && (

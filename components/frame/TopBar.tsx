@@ -136,6 +136,9 @@ export function TopBar({
   );
 }
 
+/** Names up to this long stay whole; longer ones make room. */
+const SHORT_CRUMB = 20;
+
 function Crumbs({ crumbs, heading }: { crumbs: readonly Crumb[]; heading: boolean }) {
   return (
     <View
@@ -145,6 +148,7 @@ function Crumbs({ crumbs, heading }: { crumbs: readonly Crumb[]; heading: boolea
     >
       {crumbs.map((crumb, i) => {
         const last = i === crumbs.length - 1;
+        const flexShrink = crumb.label.length > SHORT_CRUMB ? 1 : 0;
         const text = (
           <Text tone={last ? 'text' : 'quiet'} numberOfLines={1} heading={last && heading ? 1 : undefined}>
             {crumb.label}
@@ -161,12 +165,12 @@ function Crumbs({ crumbs, heading }: { crumbs: readonly Crumb[]; heading: boolea
               <Press
                 href={crumb.href}
                 aria-label={crumb.label}
-                style={{ minHeight: touch, justifyContent: 'center', flexShrink: 1 }}
+                style={{ minHeight: touch, justifyContent: 'center', flexShrink }}
               >
                 {text}
               </Press>
             ) : (
-              <View style={{ flexShrink: 1 }}>{text}</View>
+              <View style={{ flexShrink }}>{text}</View>
             )}
           </Fragment>
         );

@@ -73,7 +73,7 @@ export function CubeRow({ cube }: { cube: Cube }) {
     <View style={{ flexDirection: 'row', alignItems: 'center', gap: space(3), flex: 1, minWidth: 0 }}>
       <CubePicture cube={cube} />
       <View style={{ flex: 1, minWidth: 0, gap: space(0.5) }}>
-        <Text weight="semibold" numberOfLines={1}>
+        <Text weight="semibold" numberOfLines={2} style={{ overflowWrap: 'anywhere' } as object}>
           {cube.name}
         </Text>
         <Text size="small" mono tone="quiet" numberOfLines={3}>

@@ -147,6 +147,7 @@ function About({ region }: { region: Region }) {
 
 function CubeList({ regionId, upload }: { regionId: string; upload: React.ReactNode }) {
   const cubes = useCubes(regionId);
+  const { wide } = useWide();
   const total = cubes.data?.items.length;
   return (
     <Panel
@@ -165,7 +166,7 @@ function CubeList({ regionId, upload }: { regionId: string; upload: React.ReactN
           items.length === 0 ? (
             <EmptyState icon="cube" title="No cube yet" action={upload}>
               {upload
-                ? 'Drop FITS files anywhere on this page, or choose them. The header is checked as soon as its first bytes are there.'
+                ? `${wide ? 'Drop FITS files anywhere on this page, or choose them.' : 'Choose one FITS file or several.'} The header is checked as soon as its first bytes are there.`
                 : 'A lead or an analyst of your team uploads the first one.'}
             </EmptyState>
           ) : (

@@ -37,7 +37,7 @@ export function ShellRow({ shell, showNumbers = true }: { shell: Shell; showNumb
       >
         <ShellSign shell={shell} />
         <View style={{ flex: 1, minWidth: 0, gap: space(0.5) }}>
-          <Text weight="semibold" numberOfLines={1}>
+          <Text weight="semibold" numberOfLines={2} style={{ overflowWrap: 'anywhere' } as object}>
             {shell.name}
           </Text>
           <Text size="small" mono tone="quiet" numberOfLines={1}>

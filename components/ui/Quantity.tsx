@@ -36,7 +36,7 @@ export function Quantity({
       aria-label={q.spoken}
       style={{
         flexDirection: 'row',
-        flexWrap: hideUnit ? 'nowrap' : 'wrap',
+        flexWrap: 'wrap',
         columnGap: space(1.5),
         alignItems: 'baseline',
         justifyContent: align === 'right' ? 'flex-end' : 'flex-start',
@@ -46,7 +46,13 @@ export function Quantity({
         {q.value}
       </Text>
       {q.error && (
-        <Text mono size={size} tone="quiet" style={oneLine}>
+        <Text
+          mono
+          size={size}
+          tone="quiet"
+          align={align}
+          style={q.error.includes('bound') ? undefined : oneLine}
+        >
           {q.error}
         </Text>
       )}
