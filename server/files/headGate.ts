@@ -1,6 +1,8 @@
 import { open } from 'node:fs/promises';
 import { isProblem, type Problem } from '@/shared/contract/problem';
 import { checkBeginning } from '@/shared/fits/findCube';
+import { checkGzipBeginning } from './gzipBeginning';
+import { isGzip } from './gunzip';
 
 /** How much of a refused file is still taken in, so that the answer reaches a client in the middle of sending. */
 const DRAIN_BYTES = 32 * 2 ** 20;
@@ -20,7 +22,11 @@ export class HeadGate {
   private length = 0;
   private nextTry = 1;
 
-  constructor(private readonly fileSize: number) {}
+  /** @param maxExpandedBytes a gzip file that holds a larger cube is refused */
+  constructor(
+    private readonly fileSize: number,
+    private readonly maxExpandedBytes: number,
+  ) {}
 
   /** Begin with what an earlier connection left on disk. */
   async resume(path: string, offset: number): Promise<void> {
@@ -54,9 +60,14 @@ export class HeadGate {
   private async look(): Promise<void> {
     // a long header is looked at each time it has doubled, not for every packet
     if (this.length < this.nextTry && this.length < this.fileSize) return;
+    if (this.length < 2 && this.length < this.fileSize) return; // gzip shows in two bytes
     this.nextTry = this.length * 2;
     try {
-      if (!(await checkBeginning(Buffer.concat(this.seen), this.fileSize))) return;
+      const bytes = Buffer.concat(this.seen);
+      const head = isGzip(bytes)
+        ? await checkGzipBeginning(bytes, this.fileSize, this.maxExpandedBytes)
+        : await checkBeginning(bytes, this.fileSize);
+      if (!head) return;
       this.accepted = true;
       this.seen = [];
     } catch (error) {

@@ -14,7 +14,7 @@ export class CheckedStore extends FileStore {
 
   override async write(incoming: Readable, id: string, offset: number): Promise<number> {
     const row = (await uploads.uploadById(this.parts, id))!;
-    const gate = new HeadGate(row.sizeBytes);
+    const gate = new HeadGate(row.sizeBytes, this.parts.config.maxExpandedBytes);
     if (row.headChecked) gate.accepted = true;
     else if (offset > 0) await gate.resume(uploads.uploadPath(this.parts, id), offset);
     const received = await super.write(Readable.from(gate.pass(incoming), { objectMode: false }), id, offset);

@@ -142,7 +142,10 @@ export async function finishUpload(parts: Parts, uploadId: string): Promise<stri
   try {
     const source =
       (await sizeOf(path)) === null ? await parts.cubeFiles.open(fileKey) : await openDiskSource(path);
-    const checked = async () => ({ head: await readCubeHead(source), checksum: await checksumOf(source) });
+    const checked = async () => ({
+      head: await readCubeHead(source, { maxExpandedBytes: parts.config.maxExpandedBytes }),
+      checksum: await checksumOf(source),
+    });
     const { head, checksum } = await checked().finally(() => source.close());
     await refuseDuplicate(parts, row, checksum);
     await parts.cubeFiles.put(fileKey, path);
@@ -156,6 +159,12 @@ export async function finishUpload(parts: Parts, uploadId: string): Promise<stri
     }
     throw error;
   }
+}
+
+/** The file's name without its endings: `field.fits.gz` is a cube called `field`. */
+function cubeName(fileName: string): string {
+  const bare = fileName.replace(/\.gz$/i, '');
+  return basename(bare, extname(bare)) || fileName;
 }
 
 const fileKeyOf = (uploadId: string) => `cubes/${uploadId}.fits`;
@@ -184,7 +193,7 @@ async function recordCube(
       await insertCube(trx, {
         id,
         regionId: row.regionId,
-        name: basename(row.fileName, extname(row.fileName)) || row.fileName,
+        name: cubeName(row.fileName),
         fileName: row.fileName,
         fileKey: cube.fileKey,
         sizeBytes: row.sizeBytes,

@@ -96,7 +96,7 @@ export async function checkBeginning(bytes: Uint8Array, size: number): Promise<C
 }
 
 /** The reader had fewer bytes than the file's size promises. */
-class MoreBytesNeeded extends Problem {
+export class MoreBytesNeeded extends Problem {
   constructor() {
     super('fits-truncated', 'The file ends inside its header.', { card: 'END' });
   }
