@@ -48,6 +48,10 @@ export interface Config {
   /** A gzip or tile-compressed file is expanded up to here. */
   maxExpandedBytes: number;
   workerThreads: number;
+  /** Memory that reading a cube may take in all threads of a worker together, beside what Node itself needs. */
+  workerMemoryBytes: number;
+  /** Cubes with more bytes of pixels than this are copied plane by plane, whatever their order. */
+  copyFromBytes: number;
   logLevel: Environment['LOG_LEVEL'];
   /** Written into the provenance of every fit. */
   codeVersion: string;
@@ -170,6 +174,8 @@ function toConfig(e: Environment): Config {
     maxUploadBytes: e.MAX_UPLOAD_BYTES,
     maxExpandedBytes: e.MAX_EXPANDED_BYTES,
     workerThreads: e.WORKER_THREADS,
+    workerMemoryBytes: e.WORKER_MEMORY_BYTES,
+    copyFromBytes: e.COPY_FROM_BYTES,
     logLevel: e.LOG_LEVEL,
     codeVersion: packageJson.version + (e.OUTSWELL_COMMIT ? `+${e.OUTSWELL_COMMIT}` : ''),
     demo: e.OUTSWELL_DEMO,

@@ -75,6 +75,8 @@ export const variables = {
   MAX_UPLOAD_BYTES: withDefault(whole(2880, Number.MAX_SAFE_INTEGER), String(20 * 1024 ** 3)),
   MAX_EXPANDED_BYTES: withDefault(whole(2880, Number.MAX_SAFE_INTEGER), String(64 * 1024 ** 3)),
   WORKER_THREADS: withDefault(whole(1, 64), '2'),
+  WORKER_MEMORY_BYTES: withDefault(whole(64 * 2 ** 20, 2 ** 40), String(256 * 2 ** 20)),
+  COPY_FROM_BYTES: withDefault(whole(0, Number.MAX_SAFE_INTEGER), String(2 ** 30)),
   LOG_LEVEL: withDefault(
     z.enum(
       ['trace', 'debug', 'info', 'warn', 'error', 'fatal', 'silent'],

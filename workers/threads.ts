@@ -2,8 +2,7 @@ import { MessageChannel } from 'node:worker_threads';
 import type Piscina from 'piscina';
 import type { FitOutcome, FrozenMark } from '@/shared/contract/fits';
 import { Problem, type ProblemType } from '@/shared/contract/problem';
-import type { CubeReducer } from '@/server/services/ingest';
-import type { Reduced } from '@/server/services/reduceCube';
+import type { CubeThreads } from '@/server/services/passes';
 import type { FitSolver } from '@/server/services/runFit';
 import type { ThreadAnswer } from './threadTasks';
 
@@ -14,18 +13,31 @@ function unpack<T>(answer: ThreadAnswer<T>): T {
   throw new Problem(type.replace('/problems/', '') as ProblemType, detail, extra);
 }
 
-export const reducer =
-  (pool: Piscina): CubeReducer =>
-  async (task, onChannel, signal) => {
-    const { port1, port2 } = new MessageChannel();
-    port1.on('message', onChannel);
-    try {
-      const options = { name: 'reduce', signal, transferList: [port2] };
-      return unpack((await pool.run({ task, port: port2 }, options)) as ThreadAnswer<Reduced>);
-    } finally {
-      port1.close();
-    }
-  };
+/** Run a task that tells of its progress over a port of its own. */
+async function withProgress<T>(
+  pool: Piscina,
+  name: string,
+  task: object,
+  onStep: (steps: number) => void,
+  signal: AbortSignal,
+): Promise<T> {
+  const { port1, port2 } = new MessageChannel();
+  port1.on('message', onStep);
+  try {
+    return unpack(
+      (await pool.run({ task, port: port2 }, { name, signal, transferList: [port2] })) as ThreadAnswer<T>,
+    );
+  } finally {
+    port1.close();
+  }
+}
+
+export const cubeThreads = (pool: Piscina): CubeThreads => ({
+  rearrange: (task, onStep, signal) => withProgress(pool, 'rearrange', task, onStep, signal),
+  sample: async (task, signal) =>
+    unpack((await pool.run(task, { name: 'sample', signal })) as ThreadAnswer<number | null>),
+  reduce: (task, onChannel, signal) => withProgress(pool, 'reduce', task, onChannel, signal),
+});
 
 /** The rings of a fit carry velocities; the channel they were marked on comes from the frozen marks. */
 function withChannels(outcome: FitOutcome, marks: FrozenMark[]): FitOutcome {

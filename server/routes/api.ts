@@ -1,5 +1,5 @@
 import express, { Router, type Request } from 'express';
-import { CubeChange, CubeOverrides, CubeSource, PlaneQuery, SpectrumQuery } from '@/shared/contract/cubes';
+import { CubeChange, CubeOverrides, CubeSource, SpectrumQuery } from '@/shared/contract/cubes';
 import { FitDraft } from '@/shared/contract/fits';
 import { MemberChange, MemberDraft, TokenDraft, type Me } from '@/shared/contract/people';
 import { ReadingDraft } from '@/shared/contract/readings';
@@ -13,10 +13,10 @@ import * as cubes from '../services/cubes';
 import * as distances from '../services/distances';
 import * as fits from '../services/fits';
 import * as members from '../services/members';
-import { spectrumOf } from '../services/planes';
 import * as readings from '../services/readings';
 import * as regions from '../services/regions';
 import * as shells from '../services/shells';
+import { spectrumOf } from '../services/spectra';
 import * as tokens from '../services/tokens';
 import { uploadsOfRegion } from '../services/uploads';
 import { idOf, parse } from './problems';
@@ -123,7 +123,7 @@ export function apiRoutes(): Router {
   api.get('/cubes/:cubeId/spectrum', async (req, res) => {
     res.json(await spectrumOf(contextOf(req), idOf(req, 'cubeId'), parse(SpectrumQuery, req.query)));
   });
-  planeRoutes(api, { channelOf, planeQuery: (req) => parse(PlaneQuery, req.query) });
+  planeRoutes(api, channelOf);
 
   api.get('/regions/:regionId/shells', async (req, res) => {
     res.json(list(await shells.shellsOfRegion(contextOf(req), idOf(req, 'regionId'))));

@@ -1,40 +1,74 @@
 import type { Request, Response, Router } from 'express';
-import { PLANE_HEADERS } from '@/shared/contract/cubes';
+import {
+  CUT_HEADERS,
+  CutQuery,
+  MAP_KINDS,
+  PLANE_HEADERS,
+  PlaneQuery,
+  type MapKind,
+} from '@/shared/contract/cubes';
 import { contextOf } from '../auth/requests';
-import { planeOf, stripOf, thumbnailOf, totalOf, type PlaneAnswer } from '../services/planes';
-import { idOf } from './problems';
+import { notFound } from '../services/access';
+import { cutOf, INTERPOLATION } from '../services/cuts';
+import { mapOf, planeOf, stripOf, thumbnailOf, versionOf, type PlaneAnswer } from '../services/planes';
+import { idOf, parse } from './problems';
 
-/** A ready cube never changes, so a browser may keep its pictures; private, as they are one team's. */
+/**
+ * A browser may keep pictures and numbers; private, as they are one team's. Whoever shows a cube puts its `readyAt`
+ * into the address, so that one that is read again is asked for anew.
+ */
 const KEEP = 'private, max-age=31536000, immutable';
 
 /** Pictures and numbers of a cube that are not JSON. */
-export function planeRoutes(
-  api: Router,
-  read: { channelOf: (req: Request) => number; planeQuery: (req: Request) => { size?: number | undefined } },
-): void {
+export function planeRoutes(api: Router, channelOf: (req: Request) => number): void {
   api.get('/cubes/:cubeId/channels/:channel/thumbnail', async (req, res) => {
-    const bytes = await thumbnailOf(contextOf(req), idOf(req, 'cubeId'), read.channelOf(req));
-    res.set('Cache-Control', KEEP).type('image/webp').send(bytes);
+    if (await isKept(req, res)) return;
+    res.type('image/webp').send(await thumbnailOf(contextOf(req), idOf(req, 'cubeId'), channelOf(req)));
   });
   api.get('/cubes/:cubeId/strip', async (req, res) => {
+    if (await isKept(req, res)) return;
     const { bytes, meta } = await stripOf(contextOf(req), idOf(req, 'cubeId'));
-    res.set('Cache-Control', KEEP).set('Strip-Step', String(meta.step)).type('image/webp').send(bytes);
+    res.set('Strip-Step', String(meta.step)).type('image/webp').send(bytes);
   });
   api.get('/cubes/:cubeId/channels/:channel/plane', async (req, res) => {
-    const { size } = read.planeQuery(req);
-    sendPlane(res, await planeOf(contextOf(req), idOf(req, 'cubeId'), read.channelOf(req), size));
+    const query = parse(PlaneQuery, req.query);
+    if (await isKept(req, res)) return;
+    sendPlane(res, await planeOf(contextOf(req), idOf(req, 'cubeId'), channelOf(req), query));
   });
-  api.get('/cubes/:cubeId/total', async (req, res) => {
-    sendPlane(res, await totalOf(contextOf(req), idOf(req, 'cubeId')));
+  api.get('/cubes/:cubeId/maps/:kind', async (req, res) => {
+    const kind = MAP_KINDS.find((name) => name === req.params.kind) as MapKind | undefined;
+    if (!kind) throw notFound('map');
+    if (await isKept(req, res)) return;
+    const map = await mapOf(contextOf(req), idOf(req, 'cubeId'), kind);
+    if (map.mask) res.set(PLANE_HEADERS.mask, printable(map.mask));
+    sendPlane(res, map);
+  });
+  api.get('/cubes/:cubeId/cut', async (req, res) => {
+    const query = parse(CutQuery, req.query);
+    if (await isKept(req, res)) return;
+    const cut = await cutOf(contextOf(req), idOf(req, 'cubeId'), query);
+    res.set({ [CUT_HEADERS.step]: String(cut.step), [CUT_HEADERS.interpolation]: INTERPOLATION });
+    sendPlane(res, cut);
   });
 }
+
+/** Name the version of the cube; true when the asker has it already, and has been told so. */
+async function isKept(req: Request, res: Response): Promise<boolean> {
+  const version = await versionOf(contextOf(req), idOf(req, 'cubeId'));
+  res.set({ ETag: `"${version}"`, 'Cache-Control': KEEP });
+  if (!req.fresh) return false;
+  res.status(304).end();
+  return true;
+}
+
+/** A header carries no other letters; units of a file may. */
+const printable = (text: string) => text.replace(/[^\x20-\x7e]/g, '?');
 
 function sendPlane(res: Response, plane: PlaneAnswer) {
   // every machine this runs on is little-endian, as the contract promises
   const { buffer, byteOffset, byteLength } = plane.values;
   res
     .set({
-      'Cache-Control': KEEP,
       [PLANE_HEADERS.width]: String(plane.nx),
       [PLANE_HEADERS.height]: String(plane.ny),
       [PLANE_HEADERS.scale]: String(plane.scale),

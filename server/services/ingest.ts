@@ -1,20 +1,14 @@
+import { randomBytes } from 'node:crypto';
 import { isProblem, Problem, type ProblemBody } from '@/shared/contract/problem';
-import type { CubeHead } from '@/shared/fits/cubeHead';
-import { isChannelContiguous } from '@/shared/fits/planeRange';
-import { blockFor } from '@/shared/image/blockAverage';
-import { readCubeHead } from '../files/cubeHead';
 import { findCube, type CubeRow } from '../store/cubes';
 import { appendEvent } from '../store/events';
 import { claimCube, failCube, finishCube, releaseCube, renewCube } from '../store/ingests';
 import { announce } from './announce';
-import { assemble } from './assembleCube';
 import type { Parts } from './context';
 import { queueMail } from './mail';
-import type { Reduced, ReduceTask } from './reduceCube';
-import { THUMBNAIL_SIZE } from './thumbnails';
-
-/** Reduces channels in a thread; rejects when the signal fires. */
-export type CubeReducer = (task: ReduceTask, onChannel: () => void, signal: AbortSignal) => Promise<Reduced>;
+import type { CubeThreads } from './passes';
+import { takeIn } from './takeIn';
+import { WorkingFiles } from './workingFiles';
 
 const BEAT_MS = 1000;
 
@@ -27,25 +21,29 @@ export async function ingestCube(
   parts: Parts,
   cubeId: string,
   holder: string,
-  reduce: CubeReducer,
+  threads: CubeThreads,
   outer?: AbortSignal,
 ): Promise<void> {
-  if (!(await claimCube(parts.db, cubeId, holder))) return; // ready, cancelled, or another worker has it
+  const attempt = newAttempt();
+  const before = await claimCube(parts.db, cubeId, holder, attempt);
+  if (before === undefined) return; // ready, cancelled, or another worker has it
   const row = (await findCube(parts.db, cubeId))!;
+  const files = new WorkingFiles(parts, cubeId, attempt);
   const stop = new AbortController();
   const stopNow = () => stop.abort();
   outer?.addEventListener('abort', stopNow);
-  const state = { done: 0, activity: 'opening the file' };
+  const state = { progress: 0, activity: 'opening the file' };
   const beat = heartbeat(parts, row, holder, state, stop);
+  let kept = false;
   try {
     await tell(parts, row, 'ingesting', 0, state.activity);
-    const head = await readHead(parts, row);
-    state.activity = `reading ${head.shape.channels} channels`;
-    const reduced = await reduceAll(parts, row, head, reduce, () => state.done++, stop.signal);
-    state.activity = 'drawing thumbnails';
-    const result = await assemble(head, reduced, stop.signal);
+    const present = keysOf(row);
+    await files.clean();
+    if (before !== null) await new WorkingFiles(parts, cubeId, before).discard(present);
+    const result = await takeIn(parts, row, files, threads, state, stop.signal);
     await parts.db.transaction(async (trx) => {
-      if (!(await finishCube(trx, cubeId, holder, result))) return;
+      kept = await finishCube(trx, cubeId, holder, result);
+      if (!kept) return;
       await appendEvent(trx, { teamId: row.teamId, personId: null, kind: 'cube.ready', subjectId: cubeId });
       await announce(trx, row.teamId, {
         subject: 'cube',
@@ -56,6 +54,7 @@ export async function ingestCube(
       });
       await queueMail(trx, parts, { kind: 'cube-ready', cubeId });
     });
+    if (kept) for (const key of present) await parts.cubeFiles.remove(key);
   } catch (error) {
     if (isProblem(error)) await fail(parts, row, holder, error.toJSON());
     else {
@@ -66,56 +65,27 @@ export async function ingestCube(
   } finally {
     clearInterval(beat);
     outer?.removeEventListener('abort', stopNow);
+    if (!kept)
+      await files
+        .discard()
+        .catch((error) => parts.log.warn({ error, cubeId }, 'files of a failed attempt stay'));
   }
 }
 
-async function readHead(parts: Parts, row: CubeRow): Promise<CubeHead> {
-  const source = await parts.cubeFiles.open(row.fileKey);
-  return readCubeHead(source).finally(() => source.close());
-}
-
-/** Split the channels over the threads, unless every channel is spread over the whole file. */
-async function reduceAll(
-  parts: Parts,
-  row: CubeRow,
-  head: CubeHead,
-  reduce: CubeReducer,
-  onChannel: () => void,
-  signal: AbortSignal,
-): Promise<Reduced[]> {
-  const { nx, ny, channels } = head.shape;
-  const shares = isChannelContiguous(head) ? Math.min(parts.config.workerThreads, channels) : 1;
-  const cut = (i: number) => Math.round((i * channels) / shares);
-  const { dataDir, objectStore } = parts.config;
-  return Promise.all(
-    Array.from({ length: shares }, (_, i) =>
-      reduce(
-        {
-          files: { dataDir, objectStore },
-          fileKey: row.fileKey,
-          head: { ...head, cards: [] },
-          from: cut(i),
-          to: cut(i + 1),
-          block: blockFor(nx, ny, THUMBNAIL_SIZE),
-        },
-        onChannel,
-        signal,
-      ),
-    ),
-  );
-}
+const newAttempt = () => randomBytes(5).toString('hex');
+const keysOf = ({ planesKey, spectraKey, reducedKey }: CubeRow) =>
+  [planesKey, spectraKey, reducedKey].filter((key) => key !== null);
 
 /** Renew the lease and say how far it is, once a second; stop when the lease is no longer ours. */
 function heartbeat(
   parts: Parts,
   row: CubeRow,
   holder: string,
-  state: { done: number; activity: string },
+  state: { progress: number; activity: string },
   stop: AbortController,
 ): NodeJS.Timeout {
-  const channels = Math.max(row.head?.shape.channels ?? 1, 1);
   return setInterval(() => {
-    const progress = Math.min((0.95 * state.done) / channels, 0.95);
+    const progress = Math.min(state.progress, 0.95);
     renewCube(parts.db, row.id, holder, progress, state.activity)
       .then(async (held) => {
         if (held) await tell(parts, row, 'ingesting', progress, state.activity);
@@ -152,7 +122,7 @@ export async function giveUpIngest(
   holder: string,
   cause: string,
 ): Promise<void> {
-  if (!(await claimCube(parts.db, cubeId, holder))) return;
+  if ((await claimCube(parts.db, cubeId, holder, newAttempt())) === undefined) return;
   const row = (await findCube(parts.db, cubeId))!;
   await fail(
     parts,

@@ -1,55 +1,85 @@
-import type { Spectrum } from '@/shared/contract/cubes';
-import { Problem } from '@/shared/contract/problem';
+import type { MapKind } from '@/shared/contract/cubes';
 import type { CubeHead } from '@/shared/fits/cubeHead';
-import { blockAverage, blockFor } from '@/shared/image/blockAverage';
+import { blockAverage, blockFor, type Plane } from '@/shared/image/blockAverage';
 import { quantise, type Quantised } from '@/shared/image/quantise';
-import { buildWcs } from '@/shared/sky/wcs';
-import type { ByteSource } from '../files/byteSource';
-import { readPixel, readPlane, readPlanes } from '../files/planes';
-import { findImage, findThumbnail, listChannels } from '../store/channels';
+import { fillFrom } from '../files/pixelFile';
+import { readPlane } from '../files/planes';
+import { findImage, findThumbnail } from '../store/channels';
+import type { CubeRow } from '../store/cubes';
 import { notFound } from './access';
 import type { Context } from './context';
+import { withPlanes } from './cubePixels';
 import { readyCube } from './cubes';
 
-export interface PlaneAnswer extends Quantised {
+export interface PlaneAnswer extends Omit<Quantised, 'values'> {
+  values: Uint8Array | Uint16Array;
   nx: number;
   ny: number;
   /** Pixels of the cube in one of these, a side. */
   block: number;
   unit: string | null;
+  /** Of a map: which values were left out, in words. */
+  mask?: string;
 }
 
-/** One channel as 16-bit numbers, reduced by block averages to at most `size` pixels on its longer side. */
+/** One channel as 16- or 8-bit numbers, reduced by block averages to at most `size` pixels on its longer side. */
 export async function planeOf(
   ctx: Context,
   cubeId: string,
   channel: number,
-  size?: number,
+  { size, bits }: { size?: number | undefined; bits: 8 | 16 },
 ): Promise<PlaneAnswer> {
-  const { head, fileKey } = await readyCube(ctx, cubeId);
+  const row = await readyCube(ctx, cubeId);
+  const { head } = row;
   requireChannel(head, channel);
   const { nx, ny } = head.shape;
-  const plane = new Float32Array(nx * ny);
-  const source = await ctx.cubeFiles.open(fileKey);
-  await readPlane(source, head, channel, plane).finally(() => source.close());
   const block = size === undefined ? 1 : blockFor(nx, ny, size);
-  const small = blockAverage(plane, nx, ny, block);
-  return { ...quantise(small.plane), nx: small.nx, ny: small.ny, block, unit: head.unit ?? head.bunit };
+  const small =
+    row.reducedKey && row.layout?.reduced?.block === block
+      ? await readReduced(ctx, row.reducedKey, head, block, channel)
+      : blockAverage(await readWhole(ctx, { ...row, head }, channel), nx, ny, block);
+  return { ...quantise(small.plane, bits), nx: small.nx, ny: small.ny, block, unit: head.unit ?? head.bunit };
 }
 
-/** The total-intensity map, stored by ingest. */
-export async function totalOf(ctx: Context, cubeId: string): Promise<PlaneAnswer> {
+async function readWhole(
+  ctx: Context,
+  row: CubeRow & { head: CubeHead },
+  channel: number,
+): Promise<Float32Array> {
+  const plane = new Float32Array(row.head.shape.nx * row.head.shape.ny);
+  await withPlanes(ctx, row, (source, head) => readPlane(source, head, channel, plane));
+  return plane;
+}
+
+/** A plane that ingest has reduced to the same block. */
+async function readReduced(
+  ctx: Context,
+  key: string,
+  head: CubeHead,
+  block: number,
+  channel: number,
+): Promise<Plane> {
+  const [nx, ny] = [Math.ceil(head.shape.nx / block), Math.ceil(head.shape.ny / block)];
+  const plane = new Float32Array(nx * ny);
+  const source = await ctx.cubeFiles.open(key);
+  const bytes = new Uint8Array(plane.buffer);
+  await fillFrom(source, bytes, channel * bytes.length).finally(() => source.close());
+  return { plane, nx, ny };
+}
+
+/** A map over all channels, stored by ingest. */
+export async function mapOf(ctx: Context, cubeId: string, kind: MapKind): Promise<PlaneAnswer> {
   await readyCube(ctx, cubeId);
-  const image = await findImage(ctx.db, cubeId, 'total');
-  if (!image) throw notFound('total-intensity map');
-  const { nx, ny, unit, scale, offset, blank } = image.meta as unknown as Omit<
+  const image = await findImage(ctx.db, cubeId, kind);
+  if (!image) throw notFound('map');
+  const { nx, ny, unit, scale, offset, blank, mask } = image.meta as unknown as Omit<
     PlaneAnswer,
     'values' | 'block'
   >;
   const values = new Uint16Array(
     image.bytes.buffer.slice(image.bytes.byteOffset, image.bytes.byteOffset + image.bytes.byteLength),
   );
-  return { values, nx, ny, unit, scale, offset, blank, block: 1 };
+  return { values, nx, ny, unit, scale, offset, blank, block: 1, ...(mask !== undefined && { mask }) };
 }
 
 export async function thumbnailOf(ctx: Context, cubeId: string, channel: number): Promise<Buffer> {
@@ -67,87 +97,10 @@ export async function stripOf(ctx: Context, cubeId: string) {
   return image;
 }
 
-/** Mean spectrum of the cube as ingest found it, or of the disc of pixels about a place. */
-export async function spectrumOf(
-  ctx: Context,
-  cubeId: string,
-  place: { x?: number | undefined; y?: number | undefined; radius: number },
-): Promise<Spectrum> {
-  const { head, fileKey } = await readyCube(ctx, cubeId);
-  const unit = head.unit ?? head.bunit;
-  if (place.x === undefined || place.y === undefined) {
-    if (place.x !== undefined || place.y !== undefined)
-      throw new Problem('invalid-input', 'Give x and y both, or neither for the whole cube.', {
-        field: place.x === undefined ? 'x' : 'y',
-      });
-    const channels = await listChannels(ctx.db, cubeId);
-    return {
-      velocities: channels.map((c) => c.velocity),
-      brightness: channels.map((c) => c.mean),
-      unit,
-      over: 'all pixels that are not blank',
-    };
-  }
-  const inside = discPixels(head, place.x, place.y, place.radius);
-  const wcs = buildWcs(head.wcs);
-  const result: Spectrum = {
-    velocities: [],
-    brightness: [],
-    unit,
-    over: inside.length === 1 ? 'one pixel' : `${inside.length} pixels within ${place.radius} pixels`,
-  };
-  const source = await ctx.cubeFiles.open(fileKey);
-  try {
-    if (inside.length === 1) return await pixelSpectrum(source, head, inside[0]!, result);
-    for await (const { channel, values } of readPlanes(source, head)) {
-      const found = inside.map((i) => values[i]!).filter(Number.isFinite);
-      result.velocities.push(wcs.velocityOf(channel));
-      result.brightness.push(found.length ? found.reduce((a, b) => a + b, 0) / found.length : null);
-    }
-  } finally {
-    await source.close();
-  }
-  return result;
-}
-
-/** One pixel a channel is read, not whole planes. */
-async function pixelSpectrum(
-  source: ByteSource,
-  head: CubeHead,
-  pixel: number,
-  result: Spectrum,
-): Promise<Spectrum> {
-  const { nx, channels } = head.shape;
-  const wcs = buildWcs(head.wcs);
-  for (let channel = 0; channel < channels; channel++) {
-    result.velocities.push(wcs.velocityOf(channel));
-    result.brightness.push(await readPixel(source, head, pixel % nx, Math.floor(pixel / nx), channel));
-  }
-  return result;
-}
-
-/** Indices of the pixels whose centres lie within the radius; at least the nearest one. */
-function discPixels(head: CubeHead, x: number, y: number, radius: number): number[] {
-  const { nx, ny } = head.shape;
-  const cx = Math.round(x);
-  const cy = Math.round(y);
-  if (!(cx >= 0 && cx < nx && cy >= 0 && cy < ny))
-    throw new Problem('invalid-input', `This place lies outside the ${nx} by ${ny} pixels of the cube.`, {
-      field: cx >= 0 && cx < nx ? 'y' : 'x',
-    });
-  const found = [cy * nx + cx];
-  for (let j = Math.ceil(y - radius); j <= y + radius; j++)
-    for (let i = Math.ceil(x - radius); i <= x + radius; i++)
-      if (
-        i >= 0 &&
-        i < nx &&
-        j >= 0 &&
-        j < ny &&
-        Math.hypot(i - x, j - y) <= radius &&
-        !(i === cx && j === cy)
-      )
-        found.push(j * nx + i);
-  return found;
+/** Changes whenever the numbers of the cube, or what they mean, do: it is read again, or something is said of it. */
+export async function versionOf(ctx: Context, cubeId: string): Promise<string> {
+  const { readyAt, overriddenAt } = await readyCube(ctx, cubeId);
+  return [readyAt, overriddenAt].map((time) => (time ? time.getTime().toString(36) : '0')).join('-');
 }
 
 function requireChannel(head: CubeHead, channel: number) {

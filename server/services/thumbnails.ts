@@ -56,7 +56,25 @@ const webp = (grey: Uint8Array, width: number, height: number) =>
     .webp({ quality: QUALITY })
     .toBuffer();
 
-export function thumbnail(small: SmallCube, channel: number, window: [number, number]): Promise<Buffer> {
+/** Pictures encoded at a time: enough to keep the encoder's threads busy. */
+const AT_ONCE = 16;
+
+/** The thumbnail of every channel, in order. */
+export async function thumbnails(
+  small: SmallCube,
+  window: [number, number],
+  signal: AbortSignal,
+): Promise<Buffer[]> {
+  const pictures: Buffer[] = [];
+  for (let first = 0; first < small.channels; first += AT_ONCE) {
+    signal.throwIfAborted();
+    const some = Array.from({ length: Math.min(AT_ONCE, small.channels - first) }, (_, i) => first + i);
+    pictures.push(...(await Promise.all(some.map((channel) => thumbnail(small, channel, window)))));
+  }
+  return pictures;
+}
+
+function thumbnail(small: SmallCube, channel: number, window: [number, number]): Promise<Buffer> {
   const grey = new Uint8Array(small.nx * small.ny);
   paint(planeOf(small, channel), small.nx, small.ny, window, grey);
   return webp(grey, small.nx, small.ny);

@@ -1,10 +1,11 @@
-import type { Channel } from '@/shared/contract/cubes';
+import type { Channel, MapKind } from '@/shared/contract/cubes';
 import { rows, type Db } from './db';
 
 export const listChannels = (db: Db, cubeId: string) =>
   rows<Channel>(
     db,
-    `select channels.channel, channels.velocity, channels.minimum, channels.maximum, channels.mean, null::float8 as median, channels.rms,
+    `select channels.channel, channels.velocity, channels.minimum, channels.maximum, channels.mean, channels.median,
+            channels.rms,
             channels.rms_about_zero as "rmsAboutZero", channels.blanks
      from channels where channels.cube_id = ? order by channels.channel`,
     [cubeId],
@@ -36,7 +37,7 @@ export interface CubeImage {
 export async function findImage(
   db: Db,
   cubeId: string,
-  kind: 'total' | 'strip',
+  kind: MapKind | 'strip',
 ): Promise<CubeImage | undefined> {
   const found = await rows<CubeImage>(
     db,

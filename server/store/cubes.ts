@@ -1,6 +1,7 @@
 import type { CubeOverrides } from '@/shared/contract/cubes';
 import type { ProblemBody } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
+import type { PixelSource } from '@/shared/fits/cubeOrder';
 import { rows, type Db } from './db';
 
 export interface CubeStatistics {
@@ -9,7 +10,23 @@ export interface CubeStatistics {
   rms: number | null;
   blanks: number;
 }
-export interface CubeRow {
+/** Copies of the pixels in another order, which ingest has made; null: not made. */
+export interface CubeCopies {
+  /** Plane by plane, where the uploaded file is not (or is not plain, or is large). */
+  planesKey: string | null;
+  /** Spectra together. */
+  spectraKey: string | null;
+  /** Every channel reduced. */
+  reducedKey: string | null;
+  layout: CopyLayout | null;
+}
+export interface CopyLayout {
+  /** How pixels lie in the file of planes. */
+  planes: PixelSource | null;
+  spectra: { slab: number } | null;
+  reduced: { block: number } | null;
+}
+export interface CubeRow extends CubeCopies {
   id: string;
   teamId: string;
   regionId: string;
@@ -43,6 +60,7 @@ export interface CubeRow {
 const columns = `
   cubes.id, regions.team_id as "teamId", cubes.region_id as "regionId", cubes.name, cubes.file_name as "fileName",
   cubes.file_key as "fileKey", cubes.size_bytes::float8 as "sizeBytes",
+  cubes.planes_key as "planesKey", cubes.spectra_key as "spectraKey", cubes.reduced_key as "reducedKey", cubes.layout,
   cubes.checksum, cubes.head, cubes.status, cubes.progress, cubes.activity, cubes.problem, cubes.statistics,
   cubes.window_low as "windowLow", cubes.window_high as "windowHigh", cubes.created_by as "createdById",
   people.name as "createdByName", cubes.overrides, cubes.overridden_by as "overriddenById",

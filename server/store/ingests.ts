@@ -1,23 +1,35 @@
 /** What one worker does to one cube. Every write names the lease, so that a late twin changes nothing. */
+import type { MapKind } from '@/shared/contract/cubes';
 import type { ProblemBody } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
-import type { CubeStatistics } from './cubes';
+import type { CubeCopies, CubeStatistics } from './cubes';
 import { rows, type Db } from './db';
 
 export const LEASE_SECONDS = 10;
 
-/** Take the cube if it waits, or if the worker that had it stopped renewing its lease. */
-export async function claimCube(db: Db, id: string, holder: string): Promise<boolean> {
-  const found = await rows(
+/**
+ * Take the cube if it waits, or if the worker that had it stopped renewing its lease.
+ *
+ * @param attempt a name for this attempt, which its files carry
+ * @returns the name of the attempt before, null when there was none; undefined when the cube is not to be had
+ */
+export async function claimCube(
+  db: Db,
+  id: string,
+  holder: string,
+  attempt: string,
+): Promise<string | null | undefined> {
+  const found = await rows<{ before: string | null }>(
     db,
-    `update cubes set status = 'ingesting', lease_holder = ?, lease_until = now() + make_interval(secs => ?),
+    `update cubes set attempt = ?, status = 'ingesting', lease_holder = ?, lease_until = now() + make_interval(secs => ?),
             progress = 0, problem = null, activity = 'opening the file'
-     where id = ? and removed_at is null
+     from (select id as found, attempt as before from cubes where id = ? for update) as old
+     where id = old.found and removed_at is null
        and (status = 'uploaded' or (status = 'ingesting' and lease_until < now()))
-     returning id`,
-    [holder, LEASE_SECONDS, id],
+     returning old.before`,
+    [attempt, holder, LEASE_SECONDS, id],
   );
-  return found.length > 0;
+  return found[0]?.before;
 }
 
 /** Renew the lease and say how far it is. False: cancelled, removed or taken over; stop. */
@@ -43,13 +55,14 @@ export interface ChannelDraft {
   minimum: number | null;
   maximum: number | null;
   mean: number | null;
+  median: number | null;
   rms: number | null;
   rmsAboutZero: number | null;
   blanks: number;
   thumbnail: Buffer;
 }
 export interface ImageDraft {
-  kind: 'total' | 'strip';
+  kind: MapKind | 'strip';
   meta: Record<string, unknown>;
   bytes: Buffer;
 }
@@ -65,18 +78,24 @@ export async function finishCube(
     window: [number, number];
     channels: ChannelDraft[];
     images: ImageDraft[];
+    copies: CubeCopies;
   },
 ): Promise<boolean> {
   const found = await rows(
     db,
     `update cubes set status = 'ready', progress = 1, activity = null, ready_at = now(), lease_holder = null,
-            lease_until = null, head = ?::jsonb, statistics = ?::jsonb, window_low = ?, window_high = ?
+            lease_until = null, head = ?::jsonb, statistics = ?::jsonb, window_low = ?, window_high = ?,
+            planes_key = ?, spectra_key = ?, reduced_key = ?, layout = ?::jsonb
      where id = ? and lease_holder = ? and status = 'ingesting' returning id`,
     [
       JSON.stringify(result.head),
       JSON.stringify(result.statistics),
       result.window[0],
       result.window[1],
+      result.copies.planesKey,
+      result.copies.spectraKey,
+      result.copies.reducedKey,
+      JSON.stringify(result.copies.layout),
       id,
       holder,
     ],
@@ -93,6 +112,7 @@ export async function finishCube(
         minimum: c.minimum,
         maximum: c.maximum,
         mean: c.mean,
+        median: c.median,
         rms: c.rms,
         rms_about_zero: c.rmsAboutZero,
         blanks: c.blanks,

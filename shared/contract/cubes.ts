@@ -189,9 +189,14 @@ export const PlaneQuery = z.object({
     .max(8192)
     .optional()
     .describe('longest side in pixels; reduced by block averages'),
+  bits: z
+    .enum(['8', '16'])
+    .default('16')
+    .transform((bits) => (bits === '8' ? 8 : 16))
+    .describe('of a number'),
 });
 
-/** Answer headers that go with the 16-bit numbers of a plane. */
+/** Answer headers that go with the numbers of a plane; the mask with those of a map. */
 export const PLANE_HEADERS = {
   width: 'Plane-Width',
   height: 'Plane-Height',
@@ -199,6 +204,7 @@ export const PLANE_HEADERS = {
   offset: 'Plane-Offset',
   blank: 'Plane-Blank',
   block: 'Plane-Block',
+  mask: 'Plane-Mask',
 } as const;
 
 export const UploadState = z

@@ -6,6 +6,7 @@ import {
   CubeHeader,
   CubeOverrides,
   CubeSource,
+  CutQuery,
   PlaneQuery,
   Spectrum,
   SpectrumQuery,
@@ -111,14 +112,23 @@ export const CUBE_ENDPOINTS: readonly Endpoint[] = [
     method: 'get',
     path: '/cubes/:cubeId/channels/:channel/plane',
     summary:
-      'A channel as little-endian unsigned 16-bit numbers, row y = 0 first: brightness = Plane-Offset + Plane-Scale × number, Plane-Blank where there is none; error at most half of Plane-Scale',
+      'A channel as little-endian unsigned 16-bit (or 8-bit) numbers, row y = 0 first: brightness = Plane-Offset + Plane-Scale × number, Plane-Blank where there is none; error at most half of Plane-Scale',
     query: PlaneQuery,
     answer: { status: 200, binary: 'application/octet-stream' },
   },
   {
     method: 'get',
-    path: '/cubes/:cubeId/total',
-    summary: 'Total intensity (sum over channels times the channel width), in the form of a plane',
+    path: '/cubes/:cubeId/maps/:kind',
+    summary:
+      'A map over all channels, in the form of a plane: total (sum times the channel width), velocity and dispersion (weighted by brightness, above a mask that Plane-Mask states), peak',
+    answer: { status: 200, binary: 'application/octet-stream' },
+  },
+  {
+    method: 'get',
+    path: '/cubes/:cubeId/cut',
+    summary:
+      'Position against velocity along a great-circle segment or around a ring, in the form of a plane: places across, at most one pixel and Cut-Step degrees apart; channels upward',
+    query: CutQuery,
     answer: { status: 200, binary: 'application/octet-stream' },
   },
   {
@@ -138,7 +148,7 @@ export const CUBE_ENDPOINTS: readonly Endpoint[] = [
   {
     method: 'get',
     path: '/cubes/:cubeId/spectrum',
-    summary: 'Mean spectrum of the cube, or of a disc about a pixel',
+    summary: 'Spectrum of the cube, or the mean over a disc or ring about a pixel',
     query: SpectrumQuery,
     answer: { status: 200, schema: Spectrum },
   },

@@ -23,10 +23,16 @@ const GAUSSIAN_MAD = 1.4826;
  * @param plane   brightness; NaN (and an infinity, should there be one) is blank
  * @param scratch at least as long as the plane; given, it is used instead of allocating
  */
-export function planeStatistics(
+export function planeStatistics(plane: Float32Array | Float64Array, scratch?: Float64Array): PlaneStatistics {
+  const { median: _median, ...statistics } = channelStatistics(plane, scratch);
+  return statistics;
+}
+
+/** The same with the median, of which the noise makes use; null where there are no pixels. */
+export function channelStatistics(
   plane: Float32Array | Float64Array,
-  scratch = new Float64Array(plane.length),
-): PlaneStatistics {
+  scratch: Float64Array = new Float64Array(plane.length),
+): PlaneStatistics & { median: number | null } {
   let n = 0;
   let min = Infinity;
   let max = -Infinity;
@@ -42,11 +48,11 @@ export function planeStatistics(
     squares += v * v;
   }
   const blank = plane.length - n;
-  if (n === 0) return { min: null, max: null, mean: null, rms: null, noise: null, blank };
+  if (n === 0) return { min: null, max: null, mean: null, rms: null, noise: null, blank, median: null };
   const median = medianOf(scratch, n);
   for (let i = 0; i < n; i++) scratch[i] = Math.abs(scratch[i]! - median);
   const noise = GAUSSIAN_MAD * medianOf(scratch, n);
-  return { min, max, mean: sum / n, rms: Math.sqrt(squares / n), noise, blank };
+  return { min, max, mean: sum / n, rms: Math.sqrt(squares / n), noise, blank, median };
 }
 
 /**

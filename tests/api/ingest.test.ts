@@ -56,7 +56,7 @@ test('statistics, spectrum and total intensity are those of the numbers in the f
   const spectrum = (await lead.get(`/cubes/${cubeId}/spectrum?x=7&y=3`)).body;
   expect(spectrum.brightness[2]).toBeNull();
   expect(spectrum.brightness[4]).toBeCloseTo(4.07, 6);
-  const total = await lead.get(`/cubes/${cubeId}/total`).buffer(true).parse(binaryBody).expect(200);
+  const total = await lead.get(`/cubes/${cubeId}/maps/total`).buffer(true).parse(binaryBody).expect(200);
   const values = new Uint16Array(total.body.buffer, total.body.byteOffset, 480);
   expect(values[6 * 24 + 5]).toBe(Number(total.headers['plane-blank']));
   const at = (x: number, y: number) =>

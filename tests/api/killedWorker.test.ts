@@ -61,7 +61,7 @@ test('a worker killed during ingest leaves a cube that the next worker completes
   const done = await until(cube, (c) => c.status === 'ready' || c.status === 'failed', 50_000);
   expect(done).toMatchObject({ status: 'ready', problem: null });
   expect(Number((await db('channels').where({ cube_id: cubeId }).count())[0]!.count)).toBe(channels);
-  expect(Number((await db('cube_images').where({ cube_id: cubeId }).count())[0]!.count)).toBe(2);
+  expect(Number((await db('cube_images').where({ cube_id: cubeId }).count())[0]!.count)).toBe(5);
   const ready = await db('events').where({ subject_id: cubeId, kind: 'cube.ready' });
   expect(ready).toHaveLength(1);
 }, 90_000);

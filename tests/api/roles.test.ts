@@ -161,7 +161,12 @@ const CASES: Case[] = [
     path: () => `/cubes/${f.cubeId}/channels/3/plane?size=32`,
     expected: READ,
   },
-  { route: 'get /cubes/:cubeId/total', path: () => `/cubes/${f.cubeId}/total`, expected: READ },
+  { route: 'get /cubes/:cubeId/maps/:kind', path: () => `/cubes/${f.cubeId}/maps/total`, expected: READ },
+  {
+    route: 'get /cubes/:cubeId/cut',
+    path: () => `/cubes/${f.cubeId}/cut?l=120.5&b=-0.5&toL=119.5&toB=0.5`,
+    expected: READ,
+  },
   {
     route: 'get /cubes/:cubeId/spectrum',
     path: () => `/cubes/${f.cubeId}/spectrum?x=32&y=30&radius=2`,

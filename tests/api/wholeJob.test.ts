@@ -53,7 +53,7 @@ test('region, upload, ingest, look, mark, fit, adopt, compare, download', async 
   expect(pixel(SHELL.x, SHELL.y)).toBeLessThan(0.01);
   await lead.get(`/cubes/${cubeId}/channels/16/thumbnail`).expect(200).expect('content-type', 'image/webp');
   await lead.get(`/cubes/${cubeId}/strip`).expect(200).expect('content-type', 'image/webp');
-  await lead.get(`/cubes/${cubeId}/total`).expect(200).expect('plane-width', '64');
+  await lead.get(`/cubes/${cubeId}/maps/total`).expect(200).expect('plane-width', '64');
 
   const shell = (await lead.post(`/regions/${region.id}/shells`, { name: 'Ring one' }).expect(201)).body;
   const marks = [10, 12, 14, 16, 18, 20, 22].flatMap((k) => marksOnRing(k));

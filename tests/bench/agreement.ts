@@ -42,7 +42,7 @@ export async function agreements(
       allowed: scale * 1e-12,
     },
     { what: 'brightness window', difference: largest(cube.window!, numpy.window), allowed: float32 },
-    await totals(await raw('/total'), numpy.total),
+    await totals(await raw('/maps/total'), numpy.total),
     await thumbnails(raw, items.length, numpy),
   ];
 }

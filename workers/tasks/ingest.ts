@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { giveUpIngest, ingestCube } from '@/server/services/ingest';
-import { reducer } from '../threads';
+import { cubeThreads } from '../threads';
 import { isLastAttempt, causeOf, type TaskMaker } from './task';
 
 const Payload = z.object({ cubeId: z.uuid() });
@@ -11,7 +11,7 @@ export const ingest: TaskMaker =
     const { cubeId } = Payload.parse(payload);
     const lease = holder(helpers.job.id);
     try {
-      await ingestCube(parts, cubeId, lease, reducer(pool), stopping);
+      await ingestCube(parts, cubeId, lease, cubeThreads(pool), stopping);
     } catch (error) {
       if (isLastAttempt(helpers)) await giveUpIngest(parts, cubeId, lease, causeOf(error));
       throw error;

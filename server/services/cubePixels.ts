@@ -1,0 +1,32 @@
+import type { CubeHead } from '@/shared/fits/cubeHead';
+import type { ByteSource } from '../files/byteSource';
+import { readSpectra, readSpectraFromPlanes, type SpectrumVisitor } from '../files/spectra';
+import type { CubeRow } from '../store/cubes';
+import type { Parts } from './context';
+
+type Ready = CubeRow & { head: CubeHead };
+
+/** Read from where the cube's channels are one piece each: its own file, or the copy that ingest made. */
+export async function withPlanes<T>(
+  parts: Pick<Parts, 'cubeFiles'>,
+  row: Ready,
+  work: (source: ByteSource, head: CubeHead) => Promise<T>,
+): Promise<T> {
+  const copied = row.planesKey !== null && row.layout?.planes;
+  const source = await parts.cubeFiles.open(copied ? row.planesKey! : row.fileKey);
+  return work(source, copied ? { ...row.head, ...copied } : row.head).finally(() => source.close());
+}
+
+/** The spectra of some pixels (y · nx + x, each once), from the copy in tiles where there is one. */
+export async function visitSpectra(
+  parts: Pick<Parts, 'cubeFiles'>,
+  row: Ready,
+  pixels: Iterable<number>,
+  visit: SpectrumVisitor,
+): Promise<void> {
+  const tiles = row.spectraKey !== null && row.layout?.spectra;
+  if (!tiles)
+    return withPlanes(parts, row, (source, head) => readSpectraFromPlanes(source, head, pixels, visit));
+  const source = await parts.cubeFiles.open(row.spectraKey!);
+  return readSpectra(source, row.head, tiles.slab, pixels, visit).finally(() => source.close());
+}

@@ -1,0 +1,46 @@
+import { cubeNoise } from '@/shared/fits/cubeNoise';
+import { shapeOf, stridesOf, type PixelSource } from '@/shared/fits/cubeOrder';
+import { decodePixels } from '@/shared/fits/decode';
+import { channelStatistics } from '@/shared/fits/statistics';
+import { fillFrom, withPixels, type PixelPlace } from '../files/pixelFile';
+
+export interface SampleTask {
+  place: PixelPlace;
+  /** Plane by plane. */
+  head: PixelSource;
+}
+
+const CHANNELS = 64;
+const PIXELS = 65_536;
+
+/**
+ * The noise of a cube from a sample, before it is read as a whole: rows spread over up to 64 of its channels, some
+ * 65 000 pixels of each. Good to about one per cent, and exact for a cube that is no larger than the sample.
+ */
+export async function sampleNoise({ place, head }: SampleTask): Promise<number | null> {
+  const { nx, ny, channels } = shapeOf(head);
+  const size = Math.abs(head.bitpix) / 8;
+  const { start, channel: stride, x, y } = stridesOf(head);
+  const [across, rows] = y >= x ? [nx, ny] : [ny, nx];
+  const some = Math.min(rows, Math.max(1, Math.floor(PIXELS / across)));
+  const raw = new Uint8Array(across * some * size);
+  const values = new Float32Array(across * some);
+  const noises: (number | null)[] = [];
+  await withPixels(place, async (source) => {
+    const count = Math.min(CHANNELS, channels);
+    for (let i = 0; i < count; i++) {
+      const plane = start + Math.floor((i * channels) / count) * stride * size;
+      if (some === rows) await fillFrom(source, raw, plane);
+      else
+        for (let r = 0; r < some; r++)
+          await fillFrom(
+            source,
+            raw.subarray(r * across * size, (r + 1) * across * size),
+            plane + Math.floor((r * rows) / some) * across * size,
+          );
+      decodePixels(raw, head, values);
+      noises.push(channelStatistics(values).noise);
+    }
+  });
+  return cubeNoise(noises);
+}
