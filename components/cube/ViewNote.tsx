@@ -8,9 +8,11 @@ import { radius, space } from '@/components/ui/tokens';
 
 /** Over a map of all channels: what it is, why nothing can be marked on it, and the way back. */
 export function ViewNote() {
-  const { view, setView, mayMark, shell } = useSession();
+  const { view, setView, mayMark, shell, planes } = useSession();
   const { color } = useTheme();
   if (view === 'channel') return null;
+  // which values weigh in matters where they are averaged; its reason, after the colon, is too long for a corner
+  const masked = view === 'velocity' || view === 'dispersion' ? planes.plane?.mask?.split(':')[0] : null;
   return (
     <View
       style={{
@@ -20,14 +22,20 @@ export function ViewNote() {
         flexDirection: 'row',
         alignItems: 'center',
         paddingLeft: space(3),
+        maxWidth: '60%', // the readout has the other corner
         borderRadius: radius.small,
         backgroundColor: color.image,
       }}
     >
-      <View>
+      <View style={{ flexShrink: 1, paddingVertical: space(1) }}>
         <Text size="small" tone="onImage" weight="semibold">
           {`${VIEWS[view].label}, all channels`}
         </Text>
+        {masked && (
+          <Text size="small" tone="onImage">
+            {`From ${masked}`}
+          </Text>
+        )}
         {mayMark && shell && (
           <Text size="small" tone="onImage">
             Marks go on channels.

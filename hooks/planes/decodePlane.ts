@@ -14,6 +14,8 @@ export interface ChannelPlane {
   scale: number;
   offset: number;
   blank: number;
+  /** Of a map: which values were left out, in words. */
+  mask?: string;
 }
 
 /**
@@ -44,7 +46,8 @@ export function decodePlane(
   };
   if (body.byteLength !== plane.width * plane.height * 2)
     throw new Error(`${what} has ${body.byteLength} bytes, not ${plane.width} × ${plane.height} × 2.`);
-  return { ...plane, values: new Uint16Array(body) };
+  const mask = header('Plane-Mask');
+  return { ...plane, values: new Uint16Array(body), ...(mask && { mask }) };
 }
 
 /** Brightness at an image pixel; NaN for a blank, and outside the image. */
