@@ -28,5 +28,6 @@ export async function visitSpectra(
   if (!tiles)
     return withPlanes(parts, row, (source, head) => readSpectraFromPlanes(source, head, pixels, visit));
   const source = await parts.cubeFiles.open(row.spectraKey!);
-  return readSpectra(source, row.head, tiles.slab, pixels, visit).finally(() => source.close());
+  const head = { ...row.head, ...row.layout?.planes }; // a compressed file may store pixels otherwise
+  return readSpectra(source, head, tiles.slab, pixels, visit).finally(() => source.close());
 }

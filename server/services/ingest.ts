@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { isProblem, Problem, type ProblemBody } from '@/shared/contract/problem';
-import { findCube, type CubeRow } from '../store/cubes';
+import { findCube, type CubeCopies, type CubeRow } from '../store/cubes';
 import { appendEvent } from '../store/events';
 import { claimCube, failCube, finishCube, releaseCube, renewCube } from '../store/ingests';
 import { announce } from './announce';
@@ -34,16 +34,14 @@ export async function ingestCube(
   outer?.addEventListener('abort', stopNow);
   const state = { progress: 0, activity: 'opening the file' };
   const beat = heartbeat(parts, row, holder, state, stop);
-  let kept = false;
   try {
     await tell(parts, row, 'ingesting', 0, state.activity);
     const present = keysOf(row);
     await files.clean();
     if (before !== null) await new WorkingFiles(parts, cubeId, before).discard(present);
     const result = await takeIn(parts, row, files, threads, state, stop.signal);
-    await parts.db.transaction(async (trx) => {
-      kept = await finishCube(trx, cubeId, holder, result);
-      if (!kept) return;
+    const done = await parts.db.transaction(async (trx) => {
+      if (!(await finishCube(trx, cubeId, holder, result))) return false;
       await appendEvent(trx, { teamId: row.teamId, personId: null, kind: 'cube.ready', subjectId: cubeId });
       await announce(trx, row.teamId, {
         subject: 'cube',
@@ -53,8 +51,9 @@ export async function ingestCube(
         progress: 1,
       });
       await queueMail(trx, parts, { kind: 'cube-ready', cubeId });
+      return true;
     });
-    if (kept) for (const key of present) await parts.cubeFiles.remove(key);
+    if (done) for (const key of present) await parts.cubeFiles.remove(key);
   } catch (error) {
     if (isProblem(error)) await fail(parts, row, holder, error.toJSON());
     else {
@@ -65,15 +64,21 @@ export async function ingestCube(
   } finally {
     clearInterval(beat);
     outer?.removeEventListener('abort', stopNow);
-    if (!kept)
-      await files
-        .discard()
-        .catch((error) => parts.log.warn({ error, cubeId }, 'files of a failed attempt stay'));
+    await discardUnnamed(parts, cubeId, files);
+  }
+}
+
+/** Remove what the row does not name. A database that is away says nothing, so that then all stays for the next attempt. */
+async function discardUnnamed(parts: Parts, cubeId: string, files: WorkingFiles) {
+  try {
+    await files.discard(keysOf((await findCube(parts.db, cubeId))!));
+  } catch (error) {
+    parts.log.warn({ error, cubeId }, 'files of an attempt that are no use stay until the next one');
   }
 }
 
 const newAttempt = () => randomBytes(5).toString('hex');
-const keysOf = ({ planesKey, spectraKey, reducedKey }: CubeRow) =>
+const keysOf = ({ planesKey, spectraKey, reducedKey }: CubeCopies) =>
   [planesKey, spectraKey, reducedKey].filter((key) => key !== null);
 
 /** Renew the lease and say how far it is, once a second; stop when the lease is no longer ours. */

@@ -24,8 +24,8 @@ const GAUSSIAN_MAD = 1.4826;
  * @param scratch at least as long as the plane; given, it is used instead of allocating
  */
 export function planeStatistics(plane: Float32Array | Float64Array, scratch?: Float64Array): PlaneStatistics {
-  const { median: _median, ...statistics } = channelStatistics(plane, scratch);
-  return statistics;
+  const { min, max, mean, rms, noise, blank } = channelStatistics(plane, scratch);
+  return { min, max, mean, rms, noise, blank };
 }
 
 /** The same with the median, of which the noise makes use; null where there are no pixels. */
