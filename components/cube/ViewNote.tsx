@@ -1,5 +1,6 @@
 import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
+import { brightness } from '@/components/cube/words';
 import { VIEWS } from '@/components/cube/views';
 import { IconButton } from '@/components/ui/Button';
 import { Text } from '@/components/ui/Text';
@@ -12,7 +13,8 @@ export function ViewNote() {
   const { color } = useTheme();
   if (view === 'channel') return null;
   // which values weigh in matters where they are averaged; its reason, after the colon, is too long for a corner
-  const masked = view === 'velocity' || view === 'dispersion' ? planes.plane?.mask?.split(':')[0] : null;
+  const mask = view === 'velocity' || view === 'dispersion' ? planes.plane?.mask?.split(':')[0] : null;
+  const masked = mask?.replace(/\d+\.\d+/, (number) => brightness(Number(number)));
   return (
     <View
       style={{
