@@ -5,6 +5,7 @@ import { readingWords, ShellSign } from '@/components/shells/ShellRow';
 import { ShellDialog } from '@/components/shells/ShellDialog';
 import { Button } from '@/components/ui/Button';
 import { StatusChip } from '@/components/ui/Chip';
+import { Field } from '@/components/ui/Field';
 import { SectionTitle } from '@/components/ui/Panel';
 import { Press, type PressState } from '@/components/ui/Press';
 import { ProblemNotice } from '@/components/ui/ProblemNotice';
@@ -15,12 +16,24 @@ import { radius, space, touch } from '@/components/ui/tokens';
 import { useMay } from '@/hooks/useMe';
 import type { Shell } from '@/shared/contract/shells';
 
+/** From this many shells on the list folds. */
+const MANY = 7;
+
 /** The region's shells: choose the one to mark, or name a new one. */
 export function ShellChooser({ onChosen }: { onChosen?: () => void }) {
   const { shells, shell, chooseShell, cube, mayMark } = useSession();
   const may = useMay();
   const [naming, setNaming] = useState(false);
+  const [open, setOpen] = useState(false);
+  const [text, setText] = useState('');
   const items = shells.data?.items.filter((s) => s.status !== 'withdrawn' || s.id === shell?.id) ?? [];
+  // a long list would push the reading out of sight: it folds to the shell that is worked on
+  const many = items.length > MANY;
+  const folded = many && shell !== null && !open;
+  const wanted = text.trim().toLowerCase();
+  const shown = folded
+    ? items.filter((s) => s.id === shell.id)
+    : items.filter((s) => `${s.name} ${s.designation ?? ''}`.toLowerCase().includes(wanted));
   return (
     <View style={{ gap: space(1) }}>
       <View
@@ -51,19 +64,43 @@ export function ShellChooser({ onChosen }: { onChosen?: () => void }) {
             : 'No shell has a name here yet.'}
         </Text>
       )}
+      {many && !folded && (
+        <Field
+          hideLabel
+          label="Find a shell"
+          placeholder="Find a shell"
+          value={text}
+          onChangeText={setText}
+        />
+      )}
+      {many && !folded && shown.length === 0 && (
+        <Text tone="quiet" size="small" role="status">
+          No shell has that in its name.
+        </Text>
+      )}
       <View role="list" aria-label="Shells of the region">
-        {items.map((s) => (
+        {shown.map((s) => (
           <Row
             key={s.id}
             shell={s}
             current={s.id === shell?.id}
             onPress={() => {
               chooseShell(s.id);
+              setOpen(false);
+              setText('');
               onChosen?.();
             }}
           />
         ))}
       </View>
+      {many && shell && (
+        <Button
+          kind="quiet"
+          label={open ? 'Only this shell' : `All ${items.length} shells`}
+          aria-expanded={open}
+          onPress={() => setOpen(!open)}
+        />
+      )}
       {naming && (
         <ShellDialog
           regionId={cube.regionId}

@@ -189,7 +189,21 @@ function ShellList({ regionId, onNew }: { regionId: string; onNew: (() => void) 
   const shells = useShells(regionId);
   const button = onNew && <Button icon="plus" label="New shell" onPress={onNew} />;
   return (
-    <Panel flush title="Shells" aside={shells.data && shells.data.items.length > 0 ? button : undefined}>
+    <Panel
+      flush
+      title="Shells"
+      aside={
+        shells.data &&
+        shells.data.items.length > 0 && (
+          <View style={{ flexDirection: 'row', alignItems: 'center', gap: space(3) }}>
+            <Text mono tone="quiet">
+              {shells.data.items.length}
+            </Text>
+            {button}
+          </View>
+        )
+      }
+    >
       <RecordGate read={shells} what="shells" skeleton={<Waiting />}>
         {({ items }) =>
           items.length === 0 ? (

@@ -36,6 +36,7 @@ const cellStyle = (column: { align?: 'left' | 'right'; width: number; grow?: num
   flexGrow: column.grow ?? (column.align === 'right' ? 0 : 1),
   flexShrink: 0,
   paddingHorizontal: space(2),
+  paddingVertical: space(0.5),
   alignItems: column.align === 'right' ? 'flex-end' : 'flex-start',
   justifyContent: 'center',
 });
