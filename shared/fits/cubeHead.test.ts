@@ -97,6 +97,12 @@ describe('describeCube', () => {
     ['BSCALE', { BSCALE: '0.0' }],
     ['SIMPLE', { SIMPLE: 'F' }],
     ['PV1_1', { PV1_1: '10.0' }],
+    ['CDELT1', { CDELT1: '1E307' }],
+    ['CDELT2', { CDELT2: '-500.0' }],
+    ['CRPIX2', { CRPIX2: '1E300' }],
+    ['BSCALE', { BITPIX: '16', BSCALE: '1E308' }],
+    ['BZERO', { BITPIX: '16', BZERO: '1E300' }],
+    ['ZCMPTYPE', { SIMPLE: null, XTENSION: "'BINTABLE'", ZIMAGE: 'T' }],
   ])('refuses, naming %s, with %j', (card, changes) => {
     expect(refusal(changes)).toMatchObject({ type: 'fits-card', extra: { card } });
   });

@@ -128,7 +128,7 @@ export function describeCube(
   const beam = beamOf(header);
   const { spectral } = wcs;
   const { velocityOf } = usable(() => buildWcs(wcs), axes, header);
-  const velocities: [number, number] = [velocityOf(0), velocityOf(spectral.channels - 1)];
+  const velocities: [number, number] = [velocityOf(0) + 0, velocityOf(spectral.channels - 1) + 0];
   const { plane, choices } = stokesOf(header, axes, stokes, cautions);
   return {
     shape: { nx: naxis[axes.longitude]!, ny: naxis[axes.latitude]!, channels: naxis[axes.spectral]! },

@@ -12,6 +12,8 @@ export interface PixelFormat {
 
 /** Values at a time on the way through the scratch arrays: small enough to stay in the processor's cache. */
 const CHUNK = 16_384;
+/** Largest number that float32 holds. */
+const FLOAT32_MAX = 3.4028234663852886e38;
 
 /**
  * Decode big-endian FITS pixels.
@@ -143,10 +145,11 @@ function scaled(
   at: number,
 ): number {
   let infinite = 0;
+  const most = out instanceof Float32Array ? FLOAT32_MAX : Number.MAX_VALUE;
   for (let i = 0; i < n; i++) {
-    const v = source[i]!;
-    // Unscaled values pass untouched; NaN fails both comparisons.
-    if (v - v === 0) out[at + i] = bzero + bscale * v;
+    const v = bzero + bscale * source[i]!;
+    // NaN fails both comparisons; what is too large for the output is as good as infinite.
+    if (v <= most && v >= -most) out[at + i] = v;
     else {
       if (v === v) infinite++;
       out[at + i] = NaN;

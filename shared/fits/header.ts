@@ -65,7 +65,7 @@ export class Header {
         `${keyword} = ${card.field} has a lower-case exponent; it is read as one.`,
       );
     }
-    return card.value;
+    return card.value + 0; // never -0, which JSON loses
   }
 
   /** A number the product can do without: null, and a caution, when the card holds something else. */

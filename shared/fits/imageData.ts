@@ -80,11 +80,16 @@ export function scalingOf(header: Header, bitpix: Bitpix, cautions: string[]) {
   if (bscale === 0) {
     throw new Problem('fits-card', 'BSCALE = 0: all pixels would have one value.', { card: 'BSCALE' });
   }
+  const bzero = header.number('BZERO') ?? 0;
+  if (bitpix > 0 && Math.abs(bscale) * 2 ** bitpix + Math.abs(bzero) > 1e38) {
+    const card = Math.abs(bzero) > 1e37 ? 'BZERO' : 'BSCALE';
+    throw new Problem('fits-card', `${card} makes pixels larger than any number that is kept.`, { card });
+  }
   if (bitpix < 0 && header.has('BLANK'))
     cautions.push('BLANK has no meaning for floating-point pixels and is ignored.');
   return {
     bscale,
-    bzero: header.number('BZERO') ?? 0,
+    bzero,
     blank: bitpix > 0 ? (header.wideInteger('BLANK')?.toString() ?? null) : null,
   };
 }

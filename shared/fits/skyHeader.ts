@@ -39,7 +39,25 @@ export function skyOfHeader(header: Header, axes: CubeAxes, step: LinearStep, ca
         { card },
       );
   }
+  requireSense(spec, axes);
   return axes.projection === null ? unprojected(spec, cautions) : spec;
+}
+
+/** No pixel spans more than the whole sky, and no image is so many pixels from its reference. */
+function requireSense({ matrix, referencePixel }: SkySpec, { longitude, latitude }: CubeAxes): void {
+  const [a, b, c, d] = matrix.map(Math.abs) as SkySpec['matrix'];
+  if (!(Math.max(a, b, c, d) <= 360)) {
+    const card = `CDELT${(Math.max(a, b) <= 360 ? latitude : longitude) + 1}`;
+    throw new Problem('fits-card', `${card} (or the matrix beside it) makes a pixel larger than the sky.`, {
+      card,
+    });
+  }
+  if (!(Math.max(...referencePixel.map(Math.abs)) <= 1e9)) {
+    const card = `CRPIX${(Math.abs(referencePixel[0]) <= 1e9 ? latitude : longitude) + 1}`;
+    throw new Problem('fits-card', `${card} lies more than a thousand million pixels from the image.`, {
+      card,
+    });
+  }
 }
 
 /**

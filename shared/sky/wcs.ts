@@ -55,8 +55,10 @@ export function buildWcs(spec: WcsSpec): Wcs {
     throw new WcsError('CD', 'The matrix from pixels to degrees is singular: pixels do not span the sky.');
   }
 
-  const vectorAt = (x: number, y: number): Vector | null =>
-    toSky(a * (x - x0) + b * (y - y0), c * (x - x0) + d * (y - y0));
+  const vectorAt = (x: number, y: number): Vector | null => {
+    const v = toSky(a * (x - x0) + b * (y - y0), c * (x - x0) + d * (y - y0));
+    return v && Number.isFinite(v[0] + v[1] + v[2]) ? v : null; // numbers beyond float64 name no place
+  };
 
   /** The place in pixels; of several turns of longitude, the one in the image or nearest to it. */
   const pixelOf = (v: Vector): PixelPoint | null => {
