@@ -1,5 +1,8 @@
 import { execFile } from 'node:child_process';
+import { mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { headerBytesOf } from '@/tests/reference/headerBytes';
 
 const root = join(__dirname, '..');
 const corpus = join(root, 'tests/reference/fits-corpus');
@@ -10,12 +13,15 @@ interface Outcome {
   stderr: string;
 }
 
+const work = mkdtempSync(join(tmpdir(), 'inspect-'));
+afterAll(() => rmSync(work, { recursive: true }));
+
 const inspect = (...args: string[]): Promise<Outcome> =>
   new Promise((resolve) => {
     execFile(
       process.execPath,
       ['--import', 'tsx', 'scripts/inspect.ts', ...args],
-      { cwd: root },
+      { cwd: root, env: { ...process.env, TMPDIR: work } },
       (error, stdout, stderr) => resolve({ code: Number(error?.code ?? 0), stdout, stderr }),
     );
   });
@@ -66,6 +72,42 @@ describe('npm run inspect', () => {
   it('reads the named HDU', async () => {
     const { stdout } = await inspect(join(corpus, 'two-cubes.fits'), '--hdu=2');
     expect(JSON.parse(stdout).cautions).toEqual([]);
+  });
+
+  const packed = join(root, 'tests/reference/fits-corpus-compressed');
+  it.each([
+    ['gzip', join(corpus, 'gzipped.fits.gz')],
+    ['tiles', join(packed, 'rice-float32-dither1.fits')],
+    ['tiles in gzip', join(packed, 'rice-int32.fits.gz')],
+  ])('reads %s through a copy that it removes', async (_what, file) => {
+    const copies = () => readdirSync(work).filter((name) => name.includes('.plain'));
+    const { code, stdout, stderr } = await inspect(file, '--at=3,2,1', '--stats');
+    expect({ code, stderr }).toEqual({ code: 0, stderr: '' });
+    const seen = JSON.parse(stdout);
+    expect(seen.at[0].value).toEqual(expect.any(Number));
+    expect(seen.stats).toHaveLength(seen.shape.channels);
+    expect(copies()).toEqual([]);
+  });
+
+  it('reads the named plane of a Stokes axis', async () => {
+    const file = join(work, 'stokes.fits');
+    const cards = [
+      'SIMPLE  = T',
+      'BITPIX  = 8',
+      'NAXIS   = 4',
+      ...[2, 2, 2, 3].map((n, i) => `NAXIS${i + 1}  = ${n}`),
+    ];
+    const types = ['GLON-CAR', 'GLAT-CAR', 'VRAD', 'STOKES'].map((t, i) => `CTYPE${i + 1}  = '${t}'`);
+    const pixels = Buffer.alloc(2880, 0);
+    for (let i = 0; i < 24; i++) pixels[i] = i;
+    writeFileSync(file, Buffer.concat([headerBytesOf([...cards, ...types]), pixels]));
+    const first = JSON.parse((await inspect(file, '--at=1,0,1')).stdout);
+    expect(first.at[0].value).toBe(5);
+    expect(first.cautions.join()).toMatch(/3 planes; the first is read/);
+    const third = JSON.parse((await inspect(file, '--at=1,0,1', '--stokes=2')).stdout);
+    expect(third.at[0].value).toBe(21);
+    expect(third.cautions.join()).not.toMatch(/planes/);
+    expect((await inspect(file, '--stokes=3')).stderr).toMatch(/no plane 3/);
   });
 
   it.each([

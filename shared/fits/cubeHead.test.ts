@@ -185,4 +185,26 @@ describe('describeCube', () => {
       source: 'history',
     });
   });
+
+  it('names the planes of a Stokes axis and reads the chosen one', () => {
+    const cards = Object.entries({
+      ...CARDS,
+      ...{ NAXIS: '4', NAXIS4: '3', CTYPE4: "'STOKES'", CRVAL4: '2', CRPIX4: '2', CDELT4: '1' },
+    }).map(([k, v]) => `${k.padEnd(8)}= ${v}`);
+    const bytes = headerBytesOf(cards);
+    const first = describeCube(bytes);
+    expect(first.choices!.stokes).toEqual([
+      { index: 0, name: 'I' },
+      { index: 1, name: 'Q' },
+      { index: 2, name: 'U' },
+    ]);
+    expect(first.layout.stokes).toEqual({ axis: 3, plane: 0 });
+    const third = describeCube(bytes, undefined, { stokes: 2 });
+    expect(third.layout.stokes).toEqual({ axis: 3, plane: 2 });
+    expect(third.cautions).toEqual([]);
+    for (const stokes of [3, -1, 0.5])
+      expect(() => describeCube(bytes, undefined, { stokes })).toThrow(/there is no plane/);
+    expect(() => describeCube(bytesOf(), undefined, { stokes: 1 })).toThrow(/one plane only/);
+    expect(describeCube(bytesOf(), undefined, { stokes: 0 }).layout).not.toHaveProperty('stokes');
+  });
 });

@@ -90,6 +90,20 @@ describe('findCube', () => {
     expect(await find(two, 2)).toMatchObject({ hdu: 2, cautions: [] });
   });
 
+  it('lists the images that could be chosen, and what can be read of them', async () => {
+    const file = joined(emptyPrimary, table, flat, EXTENSION, EXTENSION);
+    const hdus = [
+      { index: 2, name: '', shape: [4, 3], usable: false },
+      { index: 3, name: '', shape: [4, 3, 2], usable: true },
+      { index: 4, name: '', shape: [4, 3, 2], usable: true },
+    ];
+    expect((await find(file)).choices).toEqual({ hdus, stokes: [] });
+    expect((await find(file, 4)).choices).toEqual({ hdus, stokes: [] });
+    expect((await find(PRIMARY)).choices!.hdus).toEqual([
+      { index: 0, name: '', shape: [4, 3, 2], usable: true },
+    ]);
+  });
+
   it('cautions about bytes behind, but not about zeros', async () => {
     expect((await find(joined(PRIMARY, new Uint8Array(100).fill(1)))).cautions).toEqual([
       expect.stringMatching(/100 bytes after the data/),

@@ -7,16 +7,18 @@ const cubes = fc
     nx: fc.integer({ min: 1, max: 6 }),
     ny: fc.integer({ min: 1, max: 6 }),
     channels: fc.integer({ min: 2, max: 6 }),
-    extra: fc.constantFrom(1, 2),
+    extra: fc.constantFrom(1, 2, 3),
+    plane: fc.nat(2),
     order: fc.shuffledSubarray([0, 1, 2, 3], { minLength: 4 }),
   })
-  .map(({ nx, ny, channels, extra, order }) => {
+  .map(({ nx, ny, channels, extra, plane, order }) => {
     const lengths = [nx, ny, channels, extra];
     const layout = {
       naxis: order.map((axis) => lengths[axis]!),
       longitude: order.indexOf(0),
       latitude: order.indexOf(1),
       spectral: order.indexOf(2),
+      ...(plane < extra && { stokes: { axis: order.indexOf(3), plane } }),
     };
     return { nx, ny, channels, head: { bitpix: 16, dataOffset: 2880, layout } satisfies CubeLayout };
   });
@@ -50,6 +52,23 @@ describe('planes of a cube in any axis order', () => {
               }
         },
       ),
+    );
+  });
+
+  it('takes the chosen plane of a fourth axis, wherever it lies', () => {
+    fc.assert(
+      fc.property(cubes, ({ nx, ny, channels, head }) => {
+        const { naxis, longitude, latitude, spectral } = head.layout;
+        const stokes = 'stokes' in head.layout ? head.layout.stokes : undefined;
+        const at = naxis.map(() => 0);
+        at[longitude] = nx - 1;
+        at[latitude] = ny - 1;
+        at[spectral] = channels - 1;
+        if (stokes) at[stokes.axis] = stokes.plane;
+        let element = 0;
+        for (let i = naxis.length - 1; i >= 0; i--) element = element * naxis[i]! + at[i]!;
+        expect(pixelOffset(head, nx - 1, ny - 1, channels - 1)).toBe(2880 + 2 * element);
+      }),
     );
   });
 
