@@ -11,7 +11,7 @@ import {
   spectralWords,
 } from '@/components/about/cubeWords';
 import { degreesPerPixel } from '@/components/cube/Readout';
-import { brightness } from '@/components/cube/words';
+import { brightness, coordinateDigits, degrees } from '@/components/cube/words';
 import { DefinitionRows, type DefinitionRow } from '@/components/ui/DefinitionRows';
 import { fileSize, moment } from '@/components/ui/format';
 import { Panel } from '@/components/ui/Panel';
@@ -60,9 +60,7 @@ function SkyPanel({ axes }: { axes: CubeAxes }) {
         rows={[
           row('Pixels', `${axes.nx} × ${axes.ny}`),
           ...(sky ? [row('A pixel', angleWords(sky.perPixel))] : []),
-          ...(sky?.at
-            ? [row('Middle', `l ${plainNumber(sky.at.l, 5)}°  b ${plainNumber(sky.at.b, 5)}°`)]
-            : []),
+          ...(sky?.at ? [row('Middle', middleWords(sky.at, coordinateDigits(sky.perPixel)))] : []),
           row('Projection', projectionWords(axes.projection), true),
           row('Coordinates', skyWords(axes.frame), true),
           row('Beam', beamWords(axes.beam), axes.beam === null),
@@ -71,6 +69,9 @@ function SkyPanel({ axes }: { axes: CubeAxes }) {
     </Panel>
   );
 }
+
+const middleWords = ({ l, b }: { l: number; b: number }, digits: number): string =>
+  `l ${degrees(l, digits)}  b ${degrees(b, digits)}`;
 
 function SpectralPanel({ axes: { channels, spectral } }: { axes: CubeAxes }) {
   const rising = spectral.velocities[0] <= spectral.velocities[1];

@@ -1,7 +1,10 @@
 /** What a cube's own page says, what the team says over its header, and the maps of all its channels. */
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
 import type { Page } from 'playwright-core';
-import { newRegion, newShell, readyCube } from '../api/fixture';
+import { makeFixture, newRegion, newShell, readyCube } from '../api/fixture';
 import { until, type SignedIn } from '../api/harness';
+import { upload } from '../api/uploading';
 import { openStage, PHONE, shot, violations, WIDE, type Screen, type Stage } from './browser';
 
 jest.setTimeout(60_000);
@@ -139,6 +142,48 @@ const paintedAfter = (page: Page, before: number) =>
     () => mapsPainted(page),
     (times) => times > before,
   );
+
+test('each tab of the phone’s sheet begins at its top', async () => {
+  const { shellId, cubeId: fitted } = await makeFixture(stage.product, lead);
+  const { page, context } = await stage.open({ ...PHONE, height: 640 }, 'lena');
+  await page.goto(`/cubes/${fitted}?shell=${shellId}`);
+  await page.getByRole('tab', { name: 'Fit' }).click();
+  const panel = page.getByRole('tabpanel').locator('> div');
+  const scrolled = await until(
+    () =>
+      panel.evaluate((scroller) => {
+        scroller.scrollTop = 10_000;
+        return scroller.scrollTop;
+      }),
+    (top) => top > 0,
+  );
+  expect(scrolled).toBeGreaterThan(0);
+  await page.getByRole('tab', { name: 'Results' }).click();
+  await page.getByRole('heading', { name: 'Fit of record' }).waitFor();
+  expect(await panel.evaluate((scroller) => scroller.scrollTop)).toBe(0);
+  await context.close();
+});
+
+test('another image of the file is read when it is chosen', async () => {
+  const bytes = readFileSync(join(__dirname, '..', 'reference', 'fits-corpus', 'two-cubes.fits'));
+  const sent = await upload(lead, stage.product.url, regionId, bytes, { filename: 'two-cubes.fits' });
+  const cube = async () => (await lead.get(`/cubes/${sent.cubeId}`)).body;
+  const first = await until(cube, ({ status }) => status === 'ready');
+  const { page, context } = await stage.open(PHONE, 'lena');
+  await page.goto(`/cubes/${sent.cubeId}/about`);
+  const choice = page.getByLabel('Image', { exact: true });
+  expect(await choice.inputValue()).toBe('1');
+  await choice.selectOption('2');
+  const strip = page.waitForRequest((r) => r.url().includes(`/cubes/${sent.cubeId}/strip`));
+  await page.getByRole('button', { name: 'Read it from there' }).click();
+  const second = await until(cube, ({ status, source }) => status === 'ready' && source.hdu === 2);
+  expect((await strip).url()).toContain(`v=${Date.parse(second.readyAt)}`);
+  expect(second.readyAt).not.toBe(first.readyAt);
+  await page.getByRole('button', { name: 'Read it from there', disabled: true }).waitFor();
+  expect(await choice.inputValue()).toBe('2');
+  expect(await violations(page)).toEqual([]);
+  await context.close();
+});
 
 test('who only reads sees what is said and cannot change it', async () => {
   await stage.product.signIn('ruben');
