@@ -14,7 +14,7 @@ export function ViewNote() {
   if (view === 'channel') return null;
   // which values weigh in matters where they are averaged; its reason, after the colon, is too long for a corner
   const mask = view === 'velocity' || view === 'dispersion' ? planes.plane?.mask?.split(':')[0] : null;
-  const masked = mask?.replace(/\d+\.\d+/, (number) => brightness(Number(number)));
+  const masked = mask?.replace(/\d+(\.\d+)?(e[+-]?\d+)?/i, (number) => brightness(Number(number)));
   return (
     <View
       style={{
