@@ -4,7 +4,7 @@ export function chooseFiles({ several = true } = {}): Promise<File[]> {
     const input = document.createElement('input');
     input.type = 'file';
     input.multiple = several;
-    input.accept = '.fits,.fit,.fts,image/fits,application/fits';
+    input.accept = '.fits,.fit,.fts,.gz,.fz,image/fits,application/fits,application/gzip';
     input.setAttribute('aria-label', 'FITS files');
     input.style.display = 'none';
     const finish = () => {

@@ -163,7 +163,7 @@ export async function finishUpload(parts: Parts, uploadId: string): Promise<stri
 
 /** The file's name without its endings: `field.fits.gz` is a cube called `field`. */
 function cubeName(fileName: string): string {
-  const bare = fileName.replace(/\.gz$/i, '');
+  const bare = fileName.replace(/\.(gz|fz)$/i, '');
   return basename(bare, extname(bare)) || fileName;
 }
 

@@ -55,6 +55,15 @@ describe('planes of a cube in any axis order', () => {
     );
   });
 
+  it('gives no places in a compressed file', () => {
+    const layout = { naxis: [4, 4, 4], longitude: 0, latitude: 1, spectral: 2 };
+    for (const container of ['gzip', 'tiled'] as const) {
+      const head: CubeLayout = { bitpix: 16, dataOffset: 2880, layout, container };
+      expect(() => [...planeSlices(head, 0, 1)]).toThrow(RangeError);
+      expect(() => pixelOffset(head, 0, 0, 0)).toThrow(RangeError);
+    }
+  });
+
   it('takes the chosen plane of a fourth axis, wherever it lies', () => {
     fc.assert(
       fc.property(cubes, ({ nx, ny, channels, head }) => {

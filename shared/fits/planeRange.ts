@@ -1,7 +1,7 @@
 import type { CubeHead } from './cubeHead';
 
 /** What of a cube's head the geometry of its bytes needs. */
-export type CubeLayout = Pick<CubeHead, 'bitpix' | 'dataOffset' | 'layout'>;
+export type CubeLayout = Pick<CubeHead, 'bitpix' | 'dataOffset' | 'layout' | 'container'>;
 
 /** Bytes to read in one go. `element` is the number of its first pixel in the file's order. */
 export interface ByteSlice {
@@ -29,6 +29,7 @@ interface Loop {
  * chosen plane is taken (layout.stokes), else the first.
  *
  * @param maxBytes upper limit of a slice; at least one pixel
+ * @throws RangeError for a cube that is not plain
  */
 export function* planeSlices(
   head: CubeLayout,
@@ -38,6 +39,7 @@ export function* planeSlices(
 ): Generator<ByteSlice> {
   const size = Math.abs(head.bitpix) / 8;
   const most = Math.max(1, Math.floor(maxBytes / size));
+  requirePlain(head);
   const base = planeBase(head);
   for (const [start, end] of spans(loopsOf(head, from, to), MAX_GAP / size)) {
     for (let element = base + start; element < base + end; element += most) {
@@ -84,6 +86,7 @@ export function placeSlice(
 
 /** Byte offset of one pixel. */
 export function pixelOffset(head: CubeLayout, x: number, y: number, channel: number): number {
+  requirePlain(head);
   const { naxis, longitude, latitude, spectral } = head.layout;
   const element =
     planeBase(head) +
@@ -97,6 +100,12 @@ export function pixelOffset(head: CubeLayout, x: number, y: number, channel: num
 export function isChannelContiguous(head: CubeLayout): boolean {
   const { longitude, latitude, spectral } = head.layout;
   return spectral > longitude && spectral > latitude;
+}
+
+/** Pixels of a compressed cube have no place in its file: that is a mistake in the code, not of a person. */
+function requirePlain({ container = 'plain' }: CubeLayout): void {
+  if (container !== 'plain')
+    throw new RangeError(`The pixels of a ${container} cube are read from its plain copy.`);
 }
 
 /** Number of the first pixel of the plane that is read along the Stokes axis. */
