@@ -34,6 +34,7 @@ describe('the defaults', () => {
       objectStore: null,
       mail: null,
       maxUploadBytes: 20 * 1024 ** 3,
+      maxExpandedBytes: 64 * 1024 ** 3,
       workerThreads: 2,
       logLevel: 'info',
       demo: false,
