@@ -7,11 +7,30 @@ import { planeStatistics, type PlaneStatistics } from '@/shared/fits/statistics'
 import { separation } from '@/shared/sky/greatCircle';
 import { buildWcs } from '@/shared/sky/wcs';
 import manifest from '@/tests/reference/fits-corpus/manifest.json';
+import kinds from '@/tests/reference/fits-kinds/manifest.json';
 import { openDiskSource, type ByteSource } from './byteSource';
 import { openPlain, type PlainSource } from './plainSource';
 import { readPixel, readPlanes } from './planes';
 
-const folder = join(__dirname, '../../tests/reference/fits-corpus');
+const reference = join(__dirname, '../../tests/reference');
+const folder = join(reference, 'fits-corpus');
+const kindsFolder = join(reference, 'fits-kinds');
+
+type Entry = (typeof manifest.files)[number] & { path: string; isPacked: boolean };
+
+/** Every file with where it lies; `isPacked`: gzipped once more for keeping, which is undone before it is read. */
+const entries: Entry[] = [
+  ...manifest.files.map((f) => ({
+    ...f,
+    path: join(folder, f.file),
+    isPacked: f.file.endsWith('.gz.gz'),
+  })),
+  ...(kinds.files as unknown as (Entry & { stored: string })[]).map((f) => ({
+    ...f,
+    path: join(kindsFolder, f.stored),
+    isPacked: true,
+  })),
+];
 
 /** What the refusal of a file must name: the card, or a word of the cause. */
 const NAMED: Record<string, string | RegExp> = {
@@ -53,10 +72,10 @@ interface Reading {
 
 /** Everything the product reads of a file, or why it refuses it. */
 async function readAll(
-  name: string,
+  entry: Entry,
   at: { x: number; y: number; channel: number }[],
 ): Promise<Reading | Problem> {
-  const source = await upload(name);
+  const source = await upload(entry);
   let plain: PlainSource | null = null;
   try {
     plain = await openPlain(source);
@@ -79,10 +98,10 @@ async function readAll(
   }
 }
 
-/** The file as it would be sent: what ends in .gz.gz lies in the corpus compressed once more. */
-async function upload(name: string): Promise<ByteSource> {
-  if (!name.endsWith('.gz.gz')) return openDiskSource(join(folder, name));
-  const bytes = gunzipSync(readFileSync(join(folder, name)));
+/** The file as it would be sent. */
+async function upload({ path, isPacked }: Entry): Promise<ByteSource> {
+  if (!isPacked) return openDiskSource(path);
+  const bytes = gunzipSync(readFileSync(path));
   return {
     size: bytes.length,
     read: async (offset, length) => bytes.subarray(offset, offset + length),
@@ -95,12 +114,13 @@ const near = (value: number | null | undefined, wanted: number | null, relative:
   else expect(Math.abs(value - wanted)).toBeLessThanOrEqual(relative * Math.abs(wanted));
 };
 
-it('has every file of the manifest', () => {
-  const files = readdirSync(folder).filter((name) => name !== 'manifest.json');
-  expect(files.sort()).toEqual(manifest.files.map((f) => f.file).sort());
+it('has every file of the manifests', () => {
+  const files = [folder, kindsFolder].flatMap((f) => readdirSync(f).map((name) => join(f, name)));
+  const wanted = entries.map((e) => e.path);
+  expect(files.filter((name) => !name.endsWith('manifest.json')).sort()).toEqual(wanted.sort());
 });
 
-describe.each(manifest.files)('$file: $kind', (file) => {
+describe.each(entries)('$file: $kind', (file) => {
   const at = file.at ?? [];
   let reading: Reading | Problem;
   let tookMs = 0;
@@ -108,7 +128,7 @@ describe.each(manifest.files)('$file: $kind', (file) => {
   beforeAll(async () => {
     const before = process.memoryUsage.rss();
     const start = performance.now();
-    reading = await readAll(file.file, at);
+    reading = await readAll(file, at);
     tookMs = performance.now() - start;
     tookBytes = process.memoryUsage.rss() - before;
   });
