@@ -13,6 +13,7 @@ import { apiRoutes } from './routes/api';
 import { clientRoutes } from './routes/client';
 import { eventsRoute } from './routes/events';
 import { nothingHere, problemHandler } from './routes/problems';
+import { timing } from './routes/timing';
 import { uploadHandler, UPLOADS_PATH } from './routes/uploads';
 import type { Parts } from './services/context';
 import { health } from './services/health';
@@ -36,6 +37,7 @@ export async function makeApp(parts: Parts, dist = join(__dirname, '..', 'dist')
 
   app.disable('x-powered-by');
   app.set('trust proxy', 'loopback');
+  app.use('/api/v1/cubes', timing);
   app.use(
     pinoHttp({
       logger: log,

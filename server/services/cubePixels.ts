@@ -14,7 +14,9 @@ export async function withPlanes<T>(
 ): Promise<T> {
   const copied = row.planesKey !== null && row.layout?.planes;
   const source = await parts.cubeFiles.open(copied ? row.planesKey! : row.fileKey);
-  return work(source, copied ? { ...row.head, ...copied } : row.head).finally(() => source.close());
+  return work(source, copied ? { ...row.head, ...copied, container: 'plain' } : row.head).finally(() =>
+    source.close(),
+  );
 }
 
 /** The spectra of some pixels (y · nx + x, each once), from the copy in tiles where there is one. */

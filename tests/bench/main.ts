@@ -2,6 +2,8 @@
  * npm run bench: measured speeds, on this machine, now. `npm run bench -- ingest` runs one part.
  *
  * ingest  a 512 x 512 x 128 float32 cube through the real server and worker, beside numpy doing the same reductions
+ * survey  cubes of 512 x 512 x 512 pixels in three orders and formats, beside numpy on one thread (2.5 GB of files)
+ * planes  random channels, cuts and spectra of those cubes, as the server times them
  * fit     the fit and its bootstrap, beside scipy
  * screen  the first look at that cube and stepping through its channels, in Chromium
  *
@@ -13,14 +15,18 @@ import { Stop, explain } from '../../scripts/machine/stop.mjs';
 import { benchFit } from './fit';
 import { benchIngest } from './ingest';
 import { describeMachine, load } from './machine';
+import { benchPlanes } from './planes';
 import { stopAll } from './product';
 import { benchScreen } from './screen';
+import { benchSurvey } from './survey';
 
 const say = (line: string) => console.log(line);
 
 const parts: Record<string, { programs: Parameters<typeof ensurePrograms>[0]; run: () => Promise<unknown> }> =
   {
     ingest: { programs: ['postgresql', 'numpy'], run: benchIngest },
+    survey: { programs: ['postgresql', 'numpy'], run: benchSurvey },
+    planes: { programs: ['postgresql'], run: benchPlanes },
     fit: { programs: [], run: benchFit },
     screen: { programs: ['postgresql', 'chromium'], run: benchScreen },
   };

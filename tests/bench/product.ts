@@ -1,9 +1,12 @@
-import { chmodSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { randomUUID } from 'node:crypto';
+import { chmodSync, mkdirSync, mkdtempSync, readFileSync, renameSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { Client } from 'pg';
 import knexFactory from 'knex';
+import { openDiskSource } from '@/server/files/byteSource';
+import { readCubeHead } from '@/server/files/cubeHead';
 import { root } from '../../scripts/machine/place.mjs';
 import { freePort } from '../../scripts/machine/ports.mjs';
 import { startCluster } from '../../scripts/machine/postgres.mjs';
@@ -20,6 +23,8 @@ export interface BenchProduct {
   /** Most memory the worker's process has held so far, all its threads together, bytes. */
   workerPeakBytes(): number;
   ingest(bytes: Buffer): Promise<Ingested>;
+  /** The same without the upload: the file is given to the store as it is, and is gone from its place. */
+  ingestFile(path: string): Promise<Ingested>;
   stop(): Promise<void>;
 }
 
@@ -77,6 +82,7 @@ export async function startBenchProduct(): Promise<BenchProduct> {
       stop,
       workerPeakBytes: () => peakBytes(worker.pid),
       ingest: (bytes) => ingest({ url, lead, db }, bytes),
+      ingestFile: (path) => ingestFile({ lead, db }, path, join(scratch, 'files')),
     };
   } catch (error) {
     await stop();
@@ -124,14 +130,40 @@ async function ingest(
   const { cubeId, problem } = await upload(lead, url, region.body.id, bytes, { chunkSize: CHUNK_BYTES });
   const uploadSeconds = (performance.now() - began) / 1000;
   if (!cubeId) throw new Error(`The upload was refused: ${JSON.stringify(problem)}`);
+  return { cubeId, uploadSeconds, readySeconds: await untilReady(db, cubeId) };
+}
+
+async function ingestFile(
+  { lead, db }: { lead: SignedIn; db: Client },
+  path: string,
+  dataDir: string,
+): Promise<Ingested> {
+  const region = await lead.post('/regions', { name: `Bench ${Date.now()}` }).expect(201);
+  const cubeId = randomUUID();
+  const fileKey = `cubes/${cubeId}.fits`;
+  const source = await openDiskSource(path);
+  const head = await readCubeHead(source).finally(() => source.close());
+  mkdirSync(join(dataDir, 'cubes'), { recursive: true });
+  renameSync(path, join(dataDir, fileKey));
+  await db.query(
+    `insert into cubes (id, region_id, name, file_name, file_key, size_bytes, checksum, head, created_by)
+     values ($1, $2, 'bench', 'bench.fits', $3, $4, $5, $6, $7)`,
+    [cubeId, region.body.id, fileKey, source.size, '0'.repeat(64), JSON.stringify(head), lead.id],
+  );
+  await db.query(`select graphile_worker.add_job('ingest', $1::json, job_key => $2, max_attempts => 1)`, [
+    JSON.stringify({ cubeId }),
+    `ingest:${cubeId}`,
+  ]);
+  return { cubeId, uploadSeconds: 0, readySeconds: await untilReady(db, cubeId) };
+}
+
+/** Seconds from queued until ready. */
+async function untilReady(db: Client, cubeId: string): Promise<number> {
   for (;;) {
     const { rows } = await db.query('select status, problem, created_at from cubes where id = $1', [cubeId]);
-    const { status, problem: cause, created_at: queuedAt } = rows[0];
-    if (status === 'failed') throw new Error(`Ingest failed: ${JSON.stringify(cause)}`);
-    if (status === 'ready') {
-      const readySeconds = (Date.now() - (queuedAt as Date).getTime()) / 1000;
-      return { cubeId, uploadSeconds, readySeconds };
-    }
+    const { status, problem, created_at: queuedAt } = rows[0];
+    if (status === 'failed') throw new Error(`Ingest failed: ${JSON.stringify(problem)}`);
+    if (status === 'ready') return (Date.now() - (queuedAt as Date).getTime()) / 1000;
     await sleep(LOOK_MS);
   }
 }
