@@ -100,6 +100,7 @@ describe('describeCube', () => {
     ['CDELT1', { CDELT1: '1E307' }],
     ['CDELT2', { CDELT2: '-500.0' }],
     ['CRPIX2', { CRPIX2: '1E300' }],
+    ['CRVAL1', { CRVAL1: '1E300' }],
     ['BSCALE', { BITPIX: '16', BSCALE: '1E308' }],
     ['BZERO', { BITPIX: '16', BZERO: '1E300' }],
     ['ZCMPTYPE', { SIMPLE: null, XTENSION: "'BINTABLE'", ZIMAGE: 'T' }],
@@ -135,6 +136,7 @@ describe('describeCube', () => {
     ['no SPECSYS', { SPECSYS: null }, /no SPECSYS/],
     ['TOPOCENT', { SPECSYS: "'TOPOCENT'" }, /telescope/],
     ['RESTFRQ of zero', { RESTFRQ: '0.0' }, /no rest frequency and is ignored/],
+    ['RESTFRQ beyond sense', { RESTFRQ: '5E-324' }, /no rest frequency and is ignored/],
     ['BLANK on floats', { BLANK: '-1' }, /floating-point/],
     ['no BUNIT', { BUNIT: null }, /BUNIT is missing/],
     ['BUNIT that is none', { BUNIT: "'COUNTS'" }, /not understood/],
@@ -185,6 +187,20 @@ describe('describeCube', () => {
       source: 'history',
     });
   });
+
+  it.each([{ CROTA2: '5E-324' }, { CDELT1: '-5E-324' }, { CRVAL3: '-5E-324' }, { CRVAL2: '-0.0' }])(
+    'survives JSON with %j, which comes near zero from below',
+    (changes) => {
+      let head;
+      try {
+        head = describeWith(changes);
+      } catch (error) {
+        expect(isProblem(error)).toBe(true);
+        return;
+      }
+      expect(JSON.parse(JSON.stringify(head))).toEqual(head);
+    },
+  );
 
   it('names the planes of a Stokes axis and reads the chosen one', () => {
     const cards = Object.entries({

@@ -129,6 +129,10 @@ export function describeCube(
   const { spectral } = wcs;
   const { velocityOf } = usable(() => buildWcs(wcs), axes, header);
   const velocities: [number, number] = [velocityOf(0) + 0, velocityOf(spectral.channels - 1) + 0];
+  if (!velocities.every(Number.isFinite)) {
+    const card = `CRVAL${axes.spectral + 1}`;
+    throw new Problem('fits-card', `${card} and the rest frequency give channels no velocity.`, { card });
+  }
   const { plane, choices } = stokesOf(header, axes, stokes, cautions);
   return {
     shape: { nx: naxis[axes.longitude]!, ny: naxis[axes.latitude]!, channels: naxis[axes.spectral]! },

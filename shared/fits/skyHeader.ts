@@ -40,17 +40,37 @@ export function skyOfHeader(header: Header, axes: CubeAxes, step: LinearStep, ca
       );
   }
   requireSense(spec, axes);
-  return axes.projection === null ? unprojected(spec, cautions) : spec;
+  return withoutMinusZero(axes.projection === null ? unprojected(spec, cautions) : spec);
+}
+
+/** JSON does not keep the sign of zero, so none is given. */
+function withoutMinusZero(spec: SkySpec): SkySpec {
+  const [a, b, c, d] = spec.matrix;
+  const [x, y] = spec.referencePixel;
+  const [lon, lat] = spec.reference;
+  return {
+    ...spec,
+    matrix: [a + 0, b + 0, c + 0, d + 0],
+    referencePixel: [x + 0, y + 0],
+    reference: [lon + 0, lat + 0],
+  };
 }
 
 /** No pixel spans more than the whole sky, and no image is so many pixels from its reference. */
-function requireSense({ matrix, referencePixel }: SkySpec, { longitude, latitude }: CubeAxes): void {
+function requireSense(
+  { matrix, reference, referencePixel }: SkySpec,
+  { longitude, latitude }: CubeAxes,
+): void {
   const [a, b, c, d] = matrix.map(Math.abs) as SkySpec['matrix'];
   if (!(Math.max(a, b, c, d) <= 360)) {
     const card = `CDELT${(Math.max(a, b) <= 360 ? latitude : longitude) + 1}`;
     throw new Problem('fits-card', `${card} (or the matrix beside it) makes a pixel larger than the sky.`, {
       card,
     });
+  }
+  if (!(Math.abs(reference[0]) <= 1e6)) {
+    const card = `CRVAL${longitude + 1}`;
+    throw new Problem('fits-card', `${card} is no longitude: it is more than a million degrees.`, { card });
   }
   if (!(Math.max(...referencePixel.map(Math.abs)) <= 1e9)) {
     const card = `CRPIX${(Math.abs(referencePixel[0]) <= 1e9 ? latitude : longitude) + 1}`;

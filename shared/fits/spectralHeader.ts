@@ -71,8 +71,8 @@ export function spectralOfHeader(
     type,
     linearIn,
     referenceChannel: step.spectral.referenceChannel,
-    reference: (header.number(`CRVAL${n}`) ?? 0) * unit,
-    step: step.spectral.step * unit,
+    reference: (header.number(`CRVAL${n}`) ?? 0) * unit + 0, // never -0, which JSON loses
+    step: step.spectral.step * unit + 0,
     channels: axes.naxis[axes.spectral]!,
     ...restOf(header, type, linearIn, cautions),
     convention,
@@ -137,12 +137,8 @@ function restOf(
   for (const keyword of ['RESTFRQ', 'RESTFREQ', 'RESTWAV']) {
     const value = header.number(keyword);
     if (value === null) continue;
-    if (value > 0) {
-      return {
-        restFrequencyHz: keyword === 'RESTWAV' ? frequencyOfWavelength(value) : value,
-        restAssumed: false,
-      };
-    }
+    const restFrequencyHz = keyword === 'RESTWAV' ? frequencyOfWavelength(value) : value;
+    if (restFrequencyHz >= 1 && restFrequencyHz <= 1e25) return { restFrequencyHz, restAssumed: false };
     cautions.push(`${keyword} = ${value} is no rest frequency and is ignored.`);
   }
   if (SPECTRAL_QUANTITIES[type].needsRest && (linearIn === null || linearIn === 'LOG')) {
