@@ -83,7 +83,9 @@ function scatter(
   const rowCount = axis === 'row' ? count : rows;
   const channelCount = axis === 'row' ? channels : count;
   const run = rowCount * across;
-  const gathered = new Uint8Array(Math.min(TOGETHER, channelCount) * run * size);
+  // one line of the cache apart, channels do not push each other out of it when a run is a power of two long
+  const apart = run + 64 / size;
+  const gathered = new Uint8Array(Math.min(TOGETHER, channelCount) * apart * size);
   const from = wordsOf(raw, head.bitpix) as Uint32Array;
   const to = wordsOf(gathered, head.bitpix) as Uint32Array;
   for (let first = 0; first < channelCount; first += TOGETHER) {
@@ -92,13 +94,13 @@ function scatter(
       for (let i = 0; i < across; i++) {
         let source = row * slow + i * fast + first * s.channel;
         let target = row * across + i;
-        for (let k = 0; k < together; k++, source += s.channel, target += run) to[target] = from[source]!;
+        for (let k = 0; k < together; k++, source += s.channel, target += apart) to[target] = from[source]!;
       }
     for (let k = 0; k < together; k++) {
       const channel = (axis === 'row' ? 0 : at) + first + k;
       const row = axis === 'row' ? at : 0;
       write(
-        gathered.subarray(k * run * size, (k + 1) * run * size),
+        gathered.subarray(k * apart * size, (k * apart + run) * size),
         (channel * nx * ny + row * across) * size,
       );
     }

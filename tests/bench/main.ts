@@ -4,6 +4,7 @@
  * ingest  a 512 x 512 x 128 float32 cube through the real server and worker, beside numpy doing the same reductions
  * survey  cubes of 512 x 512 x 512 pixels in three orders and formats, beside numpy on one thread (2.5 GB of files)
  * planes  random channels, cuts and spectra of those cubes, as the server times them
+ * size    cubes of 2 GiB and of 2e9 pixels, and the memory they take (16 GB of disk)
  * fit     the fit and its bootstrap, beside scipy
  * screen  the first look at that cube and stepping through its channels, in Chromium
  *
@@ -18,6 +19,7 @@ import { describeMachine, load } from './machine';
 import { benchPlanes } from './planes';
 import { stopAll } from './product';
 import { benchScreen } from './screen';
+import { benchSize } from './size';
 import { benchSurvey } from './survey';
 
 const say = (line: string) => console.log(line);
@@ -27,6 +29,7 @@ const parts: Record<string, { programs: Parameters<typeof ensurePrograms>[0]; ru
     ingest: { programs: ['postgresql', 'numpy'], run: benchIngest },
     survey: { programs: ['postgresql', 'numpy'], run: benchSurvey },
     planes: { programs: ['postgresql'], run: benchPlanes },
+    size: { programs: ['postgresql'], run: benchSize },
     fit: { programs: [], run: benchFit },
     screen: { programs: ['postgresql', 'chromium'], run: benchScreen },
   };
