@@ -22,6 +22,8 @@ export interface Pixels {
 
 /** Deepest slab of the copy of spectra. */
 const MOST_SLAB = 32;
+/** Most bytes of one: more is no quicker, and and Node itself needs room for each thread. */
+const MOST_SLAB_BYTES = 48 * 2 ** 20;
 /** Cubes with fewer bytes than this are read as a whole for a spectrum or a cut. */
 const SPECTRA_FROM_BYTES = 2 ** 20;
 /** Reduced planes have at most this many pixels a side, and are kept where they are a sixteenth of the cube or less. */
@@ -140,7 +142,7 @@ function sizing(parts: Parts, head: PixelSource): { slab: number; shares: number
   const fixed = nx * ny * PIXEL_BYTES;
   const fits = Math.floor(workerMemoryBytes / (fixed + planeBytes));
   const shares = Math.max(1, Math.min(workerThreads, channels, fits));
-  const room = Math.floor((workerMemoryBytes / workerThreads - fixed) / planeBytes);
+  const room = Math.floor(Math.min(MOST_SLAB_BYTES, workerMemoryBytes / workerThreads - fixed) / planeBytes);
   const even = Math.ceil(channels / shares);
   return { slab: Math.max(1, Math.min(MOST_SLAB, room, even)), shares };
 }

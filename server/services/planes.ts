@@ -1,11 +1,12 @@
 import type { MapKind } from '@/shared/contract/cubes';
 import type { CubeHead } from '@/shared/fits/cubeHead';
 import { blockAverage, blockFor, type Plane } from '@/shared/image/blockAverage';
-import { quantise, type Quantised } from '@/shared/image/quantise';
+import { dequantise, quantise, type Quantised } from '@/shared/image/quantise';
+import { buildWcs, type Wcs } from '@/shared/sky/wcs';
 import { fillFrom } from '../files/pixelFile';
 import { readPlane } from '../files/planes';
 import { findImage, findThumbnail } from '../store/channels';
-import type { CubeRow } from '../store/cubes';
+import { findCube, type CubeRow } from '../store/cubes';
 import { notFound } from './access';
 import type { Context } from './context';
 import { withPlanes } from './cubePixels';
@@ -69,17 +70,41 @@ async function readReduced(
 
 /** A map over all channels, stored by ingest. */
 export async function mapOf(ctx: Context, cubeId: string, kind: MapKind): Promise<PlaneAnswer> {
-  await readyCube(ctx, cubeId);
+  const row = await readyCube(ctx, cubeId);
   const image = await findImage(ctx.db, cubeId, kind);
   if (!image) throw notFound('map');
-  const { nx, ny, unit, scale, offset, blank, mask } = image.meta as unknown as Omit<
+  const { nx, ny, scale, offset, blank, mask } = image.meta as unknown as Omit<
     PlaneAnswer,
     'values' | 'block'
   >;
   const values = new Uint16Array(
     image.bytes.buffer.slice(image.bytes.byteOffset, image.bytes.byteOffset + image.bytes.byteLength),
   );
-  return { values, nx, ny, unit, scale, offset, blank, block: 1, ...(mask !== undefined && { mask }) };
+  const brightness = row.head.unit ?? row.head.bunit ?? '';
+  const unit = { peak: brightness, total: `${brightness} km/s`.trim(), velocity: 'km/s', dispersion: 'km/s' }[
+    kind
+  ];
+  const stored = {
+    values,
+    nx,
+    ny,
+    unit,
+    scale,
+    offset,
+    blank,
+    block: 1,
+    ...(mask !== undefined && { mask }),
+  };
+  if (!row.overrides || kind === 'peak') return stored;
+  const asRead = (await findCube(ctx.db, cubeId))!.head!; // without what was said since
+  return { ...stored, ...onOtherAxis(stored, kind, buildWcs(asRead.wcs), buildWcs(row.head.wcs)) };
+}
+
+/** A map on the velocity axis as it is understood now: channels stay, their velocities and widths do not. */
+function onOtherAxis(stored: Quantised, kind: MapKind, before: Wcs, now: Wcs): Quantised {
+  const ratio = now.velocityStep / before.velocityStep;
+  if (kind !== 'velocity') return { ...stored, scale: stored.scale * ratio, offset: stored.offset * ratio };
+  return quantise(dequantise(stored).map((v) => now.velocityOf(before.channelOf(v))));
 }
 
 export async function thumbnailOf(ctx: Context, cubeId: string, channel: number): Promise<Buffer> {

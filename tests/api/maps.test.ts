@@ -260,6 +260,27 @@ describe('one cube', () => {
     }
   });
 
+  test('the velocity map follows the velocity axis when that is corrected', async () => {
+    const axis = { CTYPE3: 'FREQ', CRVAL3: 1420.6e6, CRPIX3: 1, CDELT3: -5000, CUNIT3: 'Hz', OBJECT: 'axis' };
+    const line = (x: number, _y: number, k: number) => 10 * Math.exp(-0.5 * ((k - 8 - x / 4) / 2) ** 2);
+    const other = await ingested(cubeFile({ nx: 8, ny: 8, channels: 20, cards: axis, value: line }));
+    const velocities = async (): Promise<number[]> =>
+      (await lead.get(`/cubes/${other}/channels`)).body.items.map((c: { velocity: number }) => c.velocity);
+    const first = await velocities();
+    const before = await plane(`/cubes/${other}/maps/velocity`);
+    const total = await plane(`/cubes/${other}/maps/total`);
+    await lead.patch(`/cubes/${other}/overrides`, { restFrequencyHz: 1420e6 }).expect(200);
+    const second = await velocities();
+    expect(Math.abs(second[0]! - first[0]!)).toBeGreaterThan(50);
+    const after = await plane(`/cubes/${other}/maps/velocity`);
+    // radio velocities are even along frequency: the place between channels stays
+    const channel = (v: number, all: number[]) => (v - all[0]!) / (all[1]! - all[0]!);
+    expect(channel(after.at(5, 3), second)).toBeCloseTo(channel(before.at(5, 3), first), 3);
+    const wider = Math.abs((second[1]! - second[0]!) / (first[1]! - first[0]!));
+    const totalAfter = await plane(`/cubes/${other}/maps/total`);
+    expect(totalAfter.at(5, 3) / total.at(5, 3)).toBeCloseTo(wider, 9);
+  });
+
   test('what a browser has already is not sent again, until something is said of the cube', async () => {
     const path = `/cubes/${id}/channels/3/plane`;
     const first = await lead.get(path).expect(200);

@@ -6,7 +6,14 @@ import { startBenchProduct } from './product';
 import { seconds, table, verdict } from './table';
 
 const LIMIT = 500e6;
-const CUBES = [
+const CUBES: {
+  name: string;
+  nx: number;
+  ny: number;
+  channels: number;
+  size: number;
+  cards: Record<string, number>;
+}[] = [
   { name: '1024 x 1024 x 512 float32, 2 GiB', nx: 1024, ny: 1024, channels: 512, cards: {}, size: 4 },
   {
     name: '2000 x 1000 x 1000 int16, 2e9 pixels',
