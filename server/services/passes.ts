@@ -22,7 +22,7 @@ export interface Pixels {
 
 /** Deepest slab of the copy of spectra. */
 const MOST_SLAB = 32;
-/** Most bytes of one: more is no quicker, and and Node itself needs room for each thread. */
+/** Most bytes of one: more is no quicker, and Node itself needs room for each thread. */
 const MOST_SLAB_BYTES = 48 * 2 ** 20;
 /** Cubes with fewer bytes than this are read as a whole for a spectrum or a cut. */
 const SPECTRA_FROM_BYTES = 2 ** 20;
