@@ -3,9 +3,14 @@ import type { Cube } from '@/shared/contract/cubes';
 
 /**
  * Address of one of a cube's pictures or planes. Browsers keep what they have of it for good; what is read again from
- * another part of the file has another address.
+ * another part of the file, has another address.
+ * Give `overrides` for what depends on how the cube is understood: a map of velocities does, the pixels do not.
  */
-export const cubeImage = (cube: Pick<Cube, 'id' | 'readyAt'>, path: string): string => {
-  const reading = cube.readyAt ? `${path.includes('?') ? '&' : '?'}v=${Date.parse(cube.readyAt)}` : '';
-  return `${API}/cubes/${cube.id}/${path}${reading}`;
+export const cubeImage = (
+  cube: Pick<Cube, 'id' | 'readyAt'> & Partial<Pick<Cube, 'overrides'>>,
+  path: string,
+): string => {
+  const times = [cube.readyAt, cube.overrides?.at].flatMap((time) => (time ? [Date.parse(time)] : []));
+  const version = times.length > 0 ? `${path.includes('?') ? '&' : '?'}v=${Math.max(...times)}` : '';
+  return `${API}/cubes/${cube.id}/${path}${version}`;
 };

@@ -7,7 +7,7 @@ import type { Planes } from '@/hooks/planes/usePlanes';
 import type { Cube, MapKind } from '@/shared/contract/cubes';
 
 /** A map that ingest made of all channels; null reads none. */
-export function useMapPlane(cube: Pick<Cube, 'id' | 'readyAt'>, kind: MapKind | null): Planes {
+export function useMapPlane(cube: Pick<Cube, 'id' | 'readyAt' | 'overrides'>, kind: MapKind | null): Planes {
   const { data, error, mutate } = useSWR<ChannelPlane>(kind && cubeImage(cube, `maps/${kind}`), readMap, {
     revalidateOnFocus: false,
     revalidateIfStale: false,

@@ -188,7 +188,7 @@ describe('describeCube', () => {
     });
   });
 
-  it.each([{ CROTA2: '5E-324' }, { CDELT1: '-5E-324' }, { CRVAL3: '-5E-324' }, { CRVAL2: '-0.0' }])(
+  it.each<Changes>([{ CROTA2: '5E-324' }, { CDELT1: '-5E-324' }, { CRVAL3: '-5E-324' }, { CRVAL2: '-0.0' }])(
     'survives JSON with %j, which comes near zero from below',
     (changes) => {
       let head;
