@@ -3,7 +3,7 @@ import type { Cube } from '@/shared/contract/cubes';
 
 /**
  * Address of one of a cube's pictures or planes. Browsers keep what they have of it for good; what is read again from
- * another part of the file, has another address.
+ * another part of the file has another address.
  * Give `overrides` for what depends on how the cube is understood: a map of velocities does, the pixels do not.
  */
 export const cubeImage = (

@@ -15,9 +15,9 @@ export function brightness(value: number): string {
   return labelOf(value, digits);
 }
 
-/** The window's ends on one chip: “2.5–27 K”. */
+/** The window's ends on one chip: “2.5–27 K”; with a minus sign beside it a dash could be taken for one. */
 export const windowWords = ([low, high]: readonly [number, number], unit: string | null): string =>
-  `${trimmed(low)}–${trimmed(high)}${unit ? ` ${unit}` : ''}`;
+  `${trimmed(low)}${low < 0 || high < 0 ? ' to ' : '–'}${trimmed(high)}${unit ? ` ${unit}` : ''}`;
 
 const trimmed = (value: number): string => {
   const text =
