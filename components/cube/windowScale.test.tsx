@@ -45,7 +45,8 @@ test('numbers in words', () => {
   ]);
   expect(brightness(1.5e-6)).toBe('1.50e−6');
   expect(windowWords([2.5, 27], 'K')).toBe('2.5–27 K');
-  expect(windowWords([-0.0968, 2.83], null)).toBe('−0.097–2.8');
+  expect(windowWords([-0.0968, 2.83], null)).toBe('−0.097 to 2.8');
+  expect(windowWords([-48, -17], 'km/s')).toBe('−48 to −17 km/s');
   expect(windowWords([0, 1350], 'mJy')).toBe('0–1400 mJy');
   expect([coordinateDigits(0.025), coordinateDigits(1e-4), coordinateDigits(2)]).toEqual([3, 5, 1]);
 });
