@@ -12,6 +12,7 @@ const node = {
   cacheDirectory,
   transform: { '\\.[cm]?[jt]sx?$': ['babel-jest', { configFile: false, presets: ['babel-preset-expo'] }] },
   transformIgnorePatterns: [`/node_modules/(?!(${esm.join('|')})/)`],
+  setupFiles: ['<rootDir>/tests/fastCheck.ts'],
   globalSetup: '<rootDir>/tests/setup.ts',
   globalTeardown: '<rootDir>/tests/teardown.ts',
 };
@@ -34,6 +35,7 @@ module.exports = {
     {
       preset: 'jest-expo/ios',
       displayName: 'ui',
+      setupFilesAfterEnv: ['<rootDir>/tests/fastCheck.ts'],
       cacheDirectory,
       moduleNameMapper,
       roots: roots('components', 'hooks'),
@@ -43,6 +45,7 @@ module.exports = {
     {
       preset: 'jest-expo/web',
       displayName: 'web',
+      setupFilesAfterEnv: ['<rootDir>/tests/fastCheck.ts'],
       cacheDirectory,
       moduleNameMapper,
       roots: roots('components', 'hooks'),

@@ -120,3 +120,12 @@ it('refuses a gzip file cut off anywhere, and never refuses its beginning', asyn
     { ...RUNS, numRuns: 200 },
   );
 });
+
+it('reads an image one of whose compression parameters has no name, with the usual value', async () => {
+  const name = [...good.keys()].find((n) => n.startsWith('rice-int32'))!;
+  const bytes = Buffer.from(good.get(name)!);
+  const at = bytes.indexOf('ZNAME1', 2880, 'latin1');
+  expect(at % 80).toBe(0);
+  bytes.write("ZNAME1  = ''".padEnd(80), at, 'latin1');
+  expect(typeof (await copied(bytes))).toBe('boolean'); // and nothing is thrown that is no problem
+});

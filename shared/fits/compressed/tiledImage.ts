@@ -169,7 +169,7 @@ function columnsOf(header: Header, rowBytes: number): TiledImage['columns'] {
 function riceOf(header: Header): TiledImage['rice'] {
   const rice = { blockSize: 32, bytesPerPixel: 4 };
   for (let i = 1; header.has(`ZNAME${i}`); i++) {
-    const name = header.text(`ZNAME${i}`)!.toUpperCase();
+    const name = header.text(`ZNAME${i}`)?.toUpperCase();
     if (name === 'BLOCKSIZE') rice.blockSize = required(header, `ZVAL${i}`);
     if (name === 'BYTEPIX') rice.bytesPerPixel = required(header, `ZVAL${i}`);
   }
