@@ -1,6 +1,7 @@
 import type { FitOptions, FitOutcome, FrozenMark, ModelName } from '@/shared/contract/fits';
 import type { ProblemBody } from '@/shared/contract/problem';
 import { rows, type Db } from './db';
+import { noJobFor } from './queue';
 
 export interface FrozenReading {
   channelWidth: number;
@@ -151,6 +152,5 @@ export const abandonedFits = (db: Db) =>
     db,
     `select fits.id from fits
      where (fits.status = 'running' and fits.lease_until < now())
-        or (fits.status = 'queued' and not exists (
-          select 1 from graphile_worker.jobs as jobs where jobs.key = 'fit:' || fits.id::text))`,
+        or (fits.status = 'queued' and ${noJobFor("'fit:' || fits.id::text")})`,
   );

@@ -4,6 +4,7 @@ import type { ProblemBody } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
 import type { CubeCopies, CubeStatistics } from './cubes';
 import { rows, type Db } from './db';
+import { noJobFor } from './queue';
 
 export const LEASE_SECONDS = 10;
 
@@ -157,6 +158,5 @@ export const abandonedCubes = (db: Db) =>
     `select cubes.id from cubes
      where cubes.removed_at is null and (
        (cubes.status = 'ingesting' and cubes.lease_until < now())
-       or (cubes.status = 'uploaded' and not exists (
-         select 1 from graphile_worker.jobs as jobs where jobs.key = 'ingest:' || cubes.id::text)))`,
+       or (cubes.status = 'uploaded' and ${noJobFor("'ingest:' || cubes.id::text")}))`,
   );

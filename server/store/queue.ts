@@ -30,3 +30,12 @@ export async function queueCounts(db: Db): Promise<QueueCounts> {
   );
   return row!;
 }
+
+/** A worker claims the record of a job within moments of taking the job; one that has not by then is dead. */
+const CLAIM_SECONDS = 10;
+
+/** SQL: no job of this key is going to run. One that a killed worker holds stays locked for hours and does not count. */
+export const noJobFor = (key: string): string => `not exists (
+  select 1 from graphile_worker.jobs as jobs
+  where jobs.key = ${key} and jobs.attempts < jobs.max_attempts
+    and (jobs.locked_at is null or jobs.locked_at > now() - interval '${CLAIM_SECONDS} seconds'))`;
