@@ -73,24 +73,13 @@ async function judged(bytes: Uint8Array) {
   expect(again).toEqual(first);
   expect(JSON.parse(JSON.stringify(first.head))).toEqual(first.head);
   for (const { velocity, frequencyHz, sky, value } of first.places) {
-    expect(velocity).toSatisfyFinite();
-    for (const n of [frequencyHz, sky?.lon ?? null, sky?.lat ?? null, value])
-      if (n !== null) expect(n).toSatisfyFinite();
+    expectFinite(velocity);
+    for (const n of [frequencyHz, sky?.lon ?? null, sky?.lat ?? null, value]) if (n !== null) expectFinite(n);
   }
   return first;
 }
 
-expect.extend({
-  toSatisfyFinite: (n: number) => ({ pass: Number.isFinite(n), message: () => `${n} is not finite` }),
-});
-declare global {
-  // eslint-disable-next-line @typescript-eslint/no-namespace
-  namespace jest {
-    interface Matchers<R> {
-      toSatisfyFinite(): R;
-    }
-  }
-}
+const expectFinite = (n: number) => expect({ n, finite: Number.isFinite(n) }).toEqual({ n, finite: true });
 
 const byName = new Map(good.map((f) => [f.file, f]));
 const file = fc.constantFrom(...byName.keys());

@@ -159,12 +159,7 @@ export function describeCube(
     projection: wcs.sky.projection,
     spectral: {
       ctype: axes.spectralType,
-      type: spectral.type,
-      convention: spectral.convention,
-      frame: spectral.frame,
-      restFrequencyHz: spectral.restAssumed ? null : spectral.restFrequencyHz,
-      assumedRestFrequencyHz: spectral.restAssumed ? spectral.restFrequencyHz : null,
-      velocities,
+      ...spectralSummary(spectral, velocities),
     },
     wcs,
     cautions: [...cautions, ...header.cautions],
@@ -203,3 +198,16 @@ function usable<T>(step: () => T, axes: CubeAxes, header: Header): T {
     throw new Problem('fits-card', error.message, { card: names[error.card] ?? error.card });
   }
 }
+
+/** What a head says of its spectral axis: all but the name the file gives it. */
+export const spectralSummary = (
+  spectral: WcsSpec['spectral'],
+  velocities: [first: number, last: number],
+): Omit<CubeHead['spectral'], 'ctype'> => ({
+  type: spectral.type,
+  convention: spectral.convention,
+  frame: spectral.frame,
+  restFrequencyHz: spectral.restAssumed ? null : spectral.restFrequencyHz,
+  assumedRestFrequencyHz: spectral.restAssumed ? spectral.restFrequencyHz : null,
+  velocities,
+});

@@ -8,7 +8,7 @@ import {
 } from '@/shared/sky/wcsSpec';
 import { SPEED_OF_LIGHT } from '@/shared/sky/doppler';
 import type { Beam } from './brightness';
-import type { CubeHead } from './cubeHead';
+import { spectralSummary, type CubeHead } from './cubeHead';
 import { brightnessUnit } from './units';
 
 /** What a person says of a cube where its header does not, or says it wrong; null and absent mean the same. */
@@ -83,13 +83,8 @@ export function applyOverrides(head: CubeHead, overrides: Overrides): CubeHead {
     unit: given.unit ?? head.unit,
     beam,
     spectral: {
-      ...head.spectral,
-      type: spectral.type,
-      convention: spectral.convention,
-      frame: spectral.frame,
-      restFrequencyHz: spectral.restAssumed ? null : spectral.restFrequencyHz,
-      assumedRestFrequencyHz: spectral.restAssumed ? spectral.restFrequencyHz : null,
-      velocities,
+      ctype: head.spectral.ctype,
+      ...spectralSummary(spectral, velocities),
     },
     wcs,
     cautions: [

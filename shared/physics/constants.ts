@@ -3,6 +3,3 @@ export const PARSEC_KM = 3.0856775814913673e13;
 
 /** Seconds in 10⁶ Julian years of 365.25 days. */
 export const MEGAYEAR_S = 3.15576e13;
-
-/** Rest frequency of the neutral-hydrogen line, Hz (Hellwig et al. 1970; common practice). */
-export const HI_REST_HZ = 1420405751.768;
