@@ -19,6 +19,9 @@ export const keys = {
   fits: (shellId: string) => `/shells/${shellId}/fits`,
   fit: (id: string) => `/fits/${id}`,
   fitMarks: (id: string) => `/fits/${id}/marks`,
+  fitDraws: (id: string) => `/fits/${id}/draws`,
+  traces: (shellId: string) => `/shells/${shellId}/traces`,
+  trace: (id: string) => `/traces/${id}`,
   distances: (shellId: string) => `/shells/${shellId}/distances`,
 } as const;
 

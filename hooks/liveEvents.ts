@@ -28,6 +28,8 @@ export function staleAfter(event: LiveEvent): Matcher {
     }
     case 'reading':
       return exactly(...regionKeys, ...shellKeys);
+    case 'trace':
+      return exactly(...shellKeys, shellId && keys.traces(shellId), keys.trace(event.id));
     case 'fit': {
       const own = exactly(...regionKeys, ...shellKeys, keys.fit(event.id), shellId && keys.fits(shellId));
       return (key) => own(key) || isCatalogue(key);

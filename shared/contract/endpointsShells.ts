@@ -1,7 +1,8 @@
 import { listOf } from './common';
-import { Fit, FitDraft, FrozenMarks } from './fits';
+import { Fit, FitDraft, FitDraws, FrozenMarks } from './fits';
 import { Reading, ReadingDraft } from './readings';
 import { CatalogueQuery, Distance, DistanceDraft, Shell, ShellChange, ShellDraft } from './shells';
+import { Trace, TraceDraft } from './traces';
 import type { Endpoint } from './endpoint';
 
 export const SHELL_ENDPOINTS: readonly Endpoint[] = [
@@ -88,6 +89,12 @@ export const SHELL_ENDPOINTS: readonly Endpoint[] = [
     answer: { status: 200, schema: FrozenMarks },
   },
   {
+    method: 'get',
+    path: '/fits/:fitId/draws',
+    summary: 'The draws of the bootstrap',
+    answer: { status: 200, schema: FitDraws },
+  },
+  {
     method: 'post',
     path: '/fits/:fitId/cancel',
     summary: 'Stop a fit',
@@ -98,6 +105,32 @@ export const SHELL_ENDPOINTS: readonly Endpoint[] = [
     path: '/fits/:fitId/retry',
     summary: 'Run a failed or cancelled fit again',
     answer: { status: 202, schema: Fit },
+  },
+
+  {
+    method: 'get',
+    path: '/shells/:shellId/traces',
+    summary: 'Rims traced from the brightness, newest first',
+    answer: { status: 200, schema: listOf(Trace) },
+  },
+  {
+    method: 'post',
+    path: '/shells/:shellId/traces',
+    summary: 'Trace the rim around a fit',
+    body: TraceDraft,
+    answer: { status: 202, schema: Trace },
+  },
+  {
+    method: 'get',
+    path: '/traces/:traceId',
+    summary: 'A traced rim',
+    answer: { status: 200, schema: Trace },
+  },
+  {
+    method: 'post',
+    path: '/traces/:traceId/cancel',
+    summary: 'Stop tracing',
+    answer: { status: 202, schema: Trace },
   },
 
   {

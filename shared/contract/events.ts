@@ -4,7 +4,7 @@ import { Id } from './common';
 /** What GET /events sends: that something changed, never its content; a screen asks again for what it shows. */
 export const LiveEvent = z
   .object({
-    subject: z.enum(['region', 'upload', 'cube', 'shell', 'reading', 'fit']),
+    subject: z.enum(['region', 'upload', 'cube', 'shell', 'reading', 'fit', 'trace']),
     id: z.string(),
     regionId: Id.nullable(),
     shellId: Id.nullable().optional(),

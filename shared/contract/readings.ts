@@ -13,6 +13,12 @@ export const Mark = z
     x: z.number().describe('pixel, 0 at the centre of the first'),
     y: z.number(),
     sigma: z.number().positive().max(90).optional().describe('position error in degrees'),
+    unsure: z.literal(true).optional().describe('the person is not sure of it'),
+    note: z.string().max(500).optional(),
+    placed: z
+      .enum(['hand', 'suggested', 'ring'])
+      .optional()
+      .describe('by hand (also where absent), a suggestion that was taken, or from a drawn ring'),
   })
   .meta({ id: 'Mark' });
 

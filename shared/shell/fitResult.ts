@@ -7,7 +7,20 @@ export interface Parameter {
   lo: number | null;
   hi: number | null;
   unit: string;
+  /** What was said of it before the fit; absent where it was free. */
+  constraint?: Constraint;
+  /** The fit ended at this bound. */
+  atBound?: 'low' | 'high';
 }
+
+/** What is said of a parameter before a fit, in its own unit: held, or bounded and under a Gaussian prior. */
+export interface Constraint {
+  fixed?: number;
+  prior?: { mean: number; sd: number };
+  low?: number;
+  high?: number;
+}
+export type Constraints = Record<string, Constraint>;
 
 export type WarningCode =
   | 'few-channels'
@@ -16,7 +29,11 @@ export type WarningCode =
   | 'arc-too-short'
   | 'outliers'
   | 'poor-fit'
-  | 'start-failed';
+  | 'start-failed'
+  | 'not-converged'
+  | 'at-bound'
+  | 'prior-dominated'
+  | 'coarse-channels';
 
 export interface FitWarning {
   code: WarningCode;
@@ -80,6 +97,14 @@ export interface FitExtra {
   /** Median sigma used; estimated from the scatter when marks carry none. */
   sigmaUsedDeg: number;
   settled: boolean;
+  /** Why the fit stopped. */
+  convergence?: { reason: 'settled' | 'at-bound' | 'iterations' | 'no-progress'; sentence: string };
+  /** For the fit of record: chi2 along theta and v_exp, the others refitted, over the scale of the marks. */
+  profiles?: { parameter: 'theta' | 'vExp'; values: number[]; deltaChi2: number[] }[];
+  /** For the fit of record: the fit without each channel in turn. */
+  leaveOneOut?: LeftOut[];
+  /** For the fit of record: the same marks under other models. */
+  comparison?: { models: ComparedModel[] };
   /** The models' two extra parameters over their errors: F statistic and its probability on a plain sphere. */
   extraParameters?: { f: number; probability: number; dof: number };
   bootstrap?: {
@@ -90,4 +115,31 @@ export interface FitExtra {
     /** Draws in which the expansion velocity ran to its bound. */
     vExpUnbounded: number;
   };
+}
+
+/** A fit without one channel: how far each parameter moves, and how well the others foretell the channel. */
+export interface LeftOut {
+  velocity: number;
+  marks: number;
+  /** Value without the channel less the value with it; degrees and km/s. */
+  shift: Record<string, number>;
+  shiftInSe: Record<string, number | null>;
+  /** Mean squared scaled residual of the channel's marks under the fit without it. */
+  score: number | null;
+  problem?: string;
+}
+
+/** One model on the marks of a fit. */
+export interface ComparedModel {
+  model: ModelName;
+  chi2: number | null;
+  dof: number | null;
+  aicc: number | null;
+  bic: number | null;
+  leaveOneOut: number | null;
+  wald: { f: number; dof: number; probability: number } | null;
+  parameters: Record<string, Parameter> | null;
+  problem?: string;
+  /** What the marks say of it, in words. */
+  sentence: string;
 }
