@@ -1,7 +1,8 @@
 import type { Cube } from '@/shared/contract/cubes';
 import type { LiveEvent } from '@/shared/contract/events';
+import type { Fit } from '@/shared/contract/fits';
 import { keys } from './keys';
-import { isProgressOnly, staleAfter, withProgress } from './liveEvents';
+import { isProgressOnly, listWithProgress, placesOf, staleAfter, withProgress } from './liveEvents';
 
 const event = (part: Partial<LiveEvent> & Pick<LiveEvent, 'subject' | 'id'>): LiveEvent => ({
   regionId: 'r',
@@ -43,4 +44,29 @@ test('progress alone is written into a cube; a change of status is asked for', (
   expect(isProgressOnly({ ...progress, status: 'ready' }, cube)).toBe(false);
   expect(isProgressOnly(progress, undefined)).toBe(false);
   expect(withProgress({ ...cube, id: 'd' }, progress)).toMatchObject({ progress: 0.2 });
+});
+
+test('the progress of a fit is written into the fit and its list; a finished one is asked for', () => {
+  const fit = { id: 'f', shellId: 's', status: 'running', progress: 0.1, activity: 'fitting' } as Fit;
+  const progress = event({
+    subject: 'fit',
+    id: 'f',
+    shellId: 's',
+    status: 'running',
+    progress: 0.6,
+    activity: 'draw 300 of 500',
+  });
+  expect(isProgressOnly(progress, fit)).toBe(true);
+  expect(placesOf(progress)).toEqual({ record: keys.fit('f'), list: keys.fits('s') });
+  const list = listWithProgress({ items: [fit, { ...fit, id: 'g' }], total: 2, next: null }, progress);
+  expect(list.items.map((f) => f.progress)).toEqual([0.6, 0.1]);
+  expect(list.items[0]!.activity).toBe('draw 300 of 500');
+  expect(isProgressOnly({ ...progress, status: 'done' }, fit)).toBe(false);
+  expect(isProgressOnly({ ...progress, subject: 'trace' }, fit)).toBe(false);
+});
+
+test('a traced rim makes the list of traces stale', () => {
+  const stale = staleAfter(event({ subject: 'trace', id: 't', shellId: 's' }));
+  for (const key of [keys.trace('t'), keys.traces('s'), keys.shell('s')]) expect(stale(key)).toBe(true);
+  expect(stale(keys.traces('other'))).toBe(false);
 });

@@ -1,5 +1,6 @@
 import type { Cube } from '@/shared/contract/cubes';
 import type { LiveEvent } from '@/shared/contract/events';
+import type { Fit } from '@/shared/contract/fits';
 import { isCatalogue, keys } from './keys';
 import type { List } from './useRead';
 
@@ -37,24 +38,37 @@ export function staleAfter(event: LiveEvent): Matcher {
   }
 }
 
-/** True for an event that says only how far a cube is: it can be written into what is shown, without asking again. */
-export const isProgressOnly = (event: LiveEvent, shown: Cube | undefined): boolean =>
-  event.subject === 'cube' &&
+/** What says of itself how far it is: a cube that is read, a fit that runs. */
+export type Running = Pick<Cube | Fit, 'id' | 'status' | 'progress' | 'activity'>;
+
+/**
+ * True for an event that says only how far a cube or a fit is: it can be written into what is shown, without asking
+ * again.
+ */
+export const isProgressOnly = (event: LiveEvent, shown: Running | undefined): boolean =>
+  (event.subject === 'cube' || event.subject === 'fit') &&
   event.progress !== undefined &&
   shown !== undefined &&
   shown.status === (event.status ?? shown.status);
 
-/** The cube with an event's progress and words in it. */
-export const withProgress = (cube: Cube, event: LiveEvent): Cube =>
-  cube.id !== event.id
-    ? cube
+/** The record with an event's progress and words in it. */
+export const withProgress = <T extends Running>(record: T, event: LiveEvent): T =>
+  record.id !== event.id
+    ? record
     : {
-        ...cube,
-        progress: event.progress ?? cube.progress,
-        activity: event.activity === undefined ? cube.activity : event.activity,
+        ...record,
+        progress: event.progress ?? record.progress,
+        activity: event.activity === undefined ? record.activity : event.activity,
       };
 
-export const listWithProgress = (list: List<Cube>, event: LiveEvent): List<Cube> => ({
+export const listWithProgress = <T extends Running>(list: List<T>, event: LiveEvent): List<T> => ({
   ...list,
-  items: list.items.map((cube) => withProgress(cube, event)),
+  items: list.items.map((record) => withProgress(record, event)),
 });
+
+/** Where an event's record and the list that holds it lie in the cache. */
+export function placesOf(event: LiveEvent): { record: string; list: string | null } {
+  if (event.subject === 'fit')
+    return { record: keys.fit(event.id), list: event.shellId ? keys.fits(event.shellId) : null };
+  return { record: keys.cube(event.id), list: event.regionId && keys.cubes(event.regionId) };
+}

@@ -1,5 +1,5 @@
 import { useSWRConfig } from 'swr';
-import type { Fit, FitDraft, FrozenMarks } from '@/shared/contract/fits';
+import type { Fit, FitDraft, FitDraws, FrozenMarks } from '@/shared/contract/fits';
 import { api } from './api';
 import { keys } from './keys';
 import { useRead, type List } from './useRead';
@@ -9,6 +9,9 @@ export const useFits = (shellId: string | null) => useRead<List<Fit>>(shellId &&
 export const useFit = (id: string | null) => useRead<Fit>(id && keys.fit(id));
 export const useFitMarks = (id: string | null) =>
   useRead<FrozenMarks>(id && keys.fitMarks(id), { revalidateOnFocus: false, revalidateIfStale: false });
+/** The bootstrap's draws of a finished fit: some hundred kilobytes, asked for where they are drawn. */
+export const useFitDraws = (id: string | null) =>
+  useRead<FitDraws>(id && keys.fitDraws(id), { revalidateOnFocus: false, revalidateIfStale: false });
 
 export function useFitActions() {
   const { mutate } = useSWRConfig();

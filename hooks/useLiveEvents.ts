@@ -1,10 +1,15 @@
 import { useEffect, useSyncExternalStore } from 'react';
 import { useSWRConfig } from 'swr';
-import type { Cube } from '@/shared/contract/cubes';
 import type { LiveEvent } from '@/shared/contract/events';
 import { API } from './api';
-import { keys } from './keys';
-import { isProgressOnly, listWithProgress, staleAfter, withProgress } from './liveEvents';
+import {
+  isProgressOnly,
+  listWithProgress,
+  placesOf,
+  staleAfter,
+  withProgress,
+  type Running,
+} from './liveEvents';
 import type { List } from './useRead';
 
 const listeners = new Set<(event: LiveEvent) => void>();
@@ -41,17 +46,17 @@ export function useLiveEvents(active: boolean) {
 
     const take = (event: LiveEvent) => {
       for (const listener of listeners) listener(event);
-      const cubesKey = event.regionId && keys.cubes(event.regionId);
+      const { record, list } = placesOf(event);
       const shown =
-        cached<Cube>(keys.cube(event.id)) ??
-        (cubesKey ? cached<List<Cube>>(cubesKey)?.items.find((c) => c.id === event.id) : undefined);
+        cached<Running>(record) ??
+        (list ? cached<List<Running>>(list)?.items.find((c) => c.id === event.id) : undefined);
       if (!isProgressOnly(event, shown)) {
         void mutate(staleAfter(event));
         return;
       }
-      void mutate<Cube>(keys.cube(event.id), (c) => c && withProgress(c, event), { revalidate: false });
-      if (cubesKey)
-        void mutate<List<Cube>>(cubesKey, (l) => l && listWithProgress(l, event), { revalidate: false });
+      void mutate<Running>(record, (c) => c && withProgress(c, event), { revalidate: false });
+      if (list)
+        void mutate<List<Running>>(list, (l) => l && listWithProgress(l, event), { revalidate: false });
     };
 
     let source: EventSource | null = null;
