@@ -1,4 +1,4 @@
-import { channelProducts } from '@/shared/shell/channelDirections';
+import { blockProducts } from '@/shared/shell/channelDirections';
 import { channelDof, FLOOR, unsharedNoise, type ErrorModel } from '@/shared/shell/errorModel';
 import { centreAt, projectMarks, type Frame } from '@/shared/shell/frame';
 import { solve, workspace, type ShellProblem, type ShellState } from '@/shared/shell/gaussNewton';
@@ -6,6 +6,7 @@ import type { MarkSet } from '@/shared/shell/markSet';
 import { naturalValues } from '@/shared/shell/naturalParameters';
 import { seededRandom, type Random } from '@/shared/random';
 import { EXTRA_1, EXTRA_2, LN_W, V0, X, Y } from '@/shared/shell/shellModel';
+import { drawUnseen } from '@/shared/shell/trace/tracedErrors';
 
 export interface BootstrapOptions {
   draws: number;
@@ -67,6 +68,7 @@ export function bootstrap(
     const fit = solve({ model, marks: drawn, vSys: known }, { frame, p }, { tolerance: TOLERANCE }, ws);
     const origin = centreAt(frame, p[X]!, p[Y]!);
     const values = naturalValues(model, { frame: { ...frame, origin }, p });
+    drawUnseen(marks, values, (a) => !(vSys?.sigma === 0 && a === V0), random);
     if (fit.atBound === 'high' && p[LN_W]! > state.p[LN_W]!) {
       values[LN_W] = Infinity;
       out.unbounded++;
@@ -84,15 +86,15 @@ function errorDrawer({ marks, vSys }: ShellProblem, errors: ErrorModel, random: 
   const { directions: d, scales } = errors;
   const noise = unsharedNoise(d, scales);
   const root = noise.map(Math.sqrt);
-  const dof = channelDof(marks.channels, vSys !== null);
-  const unsharedDof = Math.max(marks.count - marks.channels - 2, 2);
+  const dof = channelDof(marks.blocks, vSys !== null);
+  const unsharedDof = Math.max(marks.count - marks.blocks - 2, 2);
   const shared = [
     { unit: d.unitA, full: d.a, scale: scales.shift, dof: dof.shift, source: 0 },
     { unit: d.unitB, full: d.b, scale: scales.shift, dof: dof.shift, source: 0 },
     { unit: d.unitU, full: d.u, scale: scales.ring, dof: dof.ring, source: 1 },
   ].map(({ unit, full, ...rest }) => {
-    const square = channelProducts(marks, full, full);
-    const own = channelProducts(
+    const square = blockProducts(marks, full, full);
+    const own = blockProducts(
       marks,
       unit.map((q, i) => q * noise[i]!),
       unit,
@@ -110,14 +112,14 @@ function errorDrawer({ marks, vSys }: ShellProblem, errors: ErrorModel, random: 
       if (direction.source !== source) redrawn = direction.dof / random.chiSquare(direction.dof); // one a source
       source = direction.source;
       // Along each channel's direction: shrink the component, or add to it, until it has the variance wanted.
-      const component = channelProducts(marks, direction.unit, e);
+      const component = blockProducts(marks, direction.unit, e);
       const change = component.map((value, k) => {
         const want = direction.total[k]! * redrawn;
         const have = direction.own[k]! * inflation;
         const keep = Math.sqrt(Math.min(want / Math.max(have, 1e-300), 1));
         return (keep - 1) * value + Math.sqrt(Math.max(want - have, 0)) * random.normal();
       });
-      for (let i = 0; i < e.length; i++) e[i] = e[i]! + change[marks.channel[i]!]! * direction.unit[i]!;
+      for (let i = 0; i < e.length; i++) e[i] = e[i]! + change[marks.block[i]!]! * direction.unit[i]!;
     }
   };
 }

@@ -5,17 +5,18 @@ import { X, Y } from '@/shared/shell/shellModel';
 /**
  * What a channel's marks share, as directions in the space of scaled residuals z = r/s: a common radius offset moves
  * them along u, a shift of the ring's centre along a and b. Every mark belongs to one channel, so a direction of
- * channel k is non-zero on k's marks only and one number a mark stores it.
+ * channel k is non-zero on k's marks only and one number a mark stores it. Where blocks of channels share errors (a
+ * traced rim), a block stands for the channel here.
  */
 export interface ChannelDirections {
   /** z, residuals over their errors. */
   z: Float64Array;
-  /** Derivatives over the errors, row by row; the column of a held parameter is zero. */
+  /** Derivatives over the errors, row by row. */
   scaled: Float64Array;
   /** Shares of a mark's own error and of the spread within the channel in its variance. */
   own: Float64Array;
   spread: Float64Array;
-  /** u, a, b, and the same orthonormalised within each channel (b made perpendicular to a). */
+  /** u, a, b, and the same orthonormalised within each block (b made perpendicular to a). */
   u: Float64Array;
   a: Float64Array;
   b: Float64Array;
@@ -28,7 +29,6 @@ export function channelDirections(
   marks: MarkSet,
   { residual, jacobian, variance }: Evaluation,
   size: number,
-  held: number | null,
 ): ChannelDirections {
   const n = marks.count;
   const perMark = () => new Float64Array(n);
@@ -48,7 +48,7 @@ export function channelDirections(
     const perError = 1 / Math.sqrt(variance[i]!);
     d.z[i] = residual[i]! * perError;
     for (let j = 0; j < size; j++)
-      d.scaled[i * size + j] = j === held ? 0 : jacobian[i * size + j]! * perError;
+      d.scaled[i * size + j] = jacobian[i * size + j]! * perError;
     d.own[i] = marks.sigma2[i]! * perError * perError;
     d.spread[i] = Math.max(variance[i]! - marks.sigma2[i]!, 0) * perError * perError;
     d.u[i] = perError;
@@ -59,25 +59,25 @@ export function channelDirections(
   return d;
 }
 
-/** Sum over each channel's marks of the product of two directions. */
-export function channelProducts(marks: MarkSet, p: Float64Array, q: Float64Array): Float64Array {
-  const sums = new Float64Array(marks.channels);
-  for (let i = 0; i < marks.count; i++) sums[marks.channel[i]!] = sums[marks.channel[i]!]! + p[i]! * q[i]!;
+/** Sum over the marks of each block of the product of two directions. */
+export function blockProducts(marks: MarkSet, p: Float64Array, q: Float64Array): Float64Array {
+  const sums = new Float64Array(marks.blocks);
+  for (let i = 0; i < marks.count; i++) sums[marks.block[i]!] = sums[marks.block[i]!]! + p[i]! * q[i]!;
   return sums;
 }
 
 function orthonormalise(marks: MarkSet, d: ChannelDirections): void {
-  const { channel } = marks;
+  const { block } = marks;
   const perLength = (v: Float64Array) =>
-    channelProducts(marks, v, v).map((square) => 1 / Math.sqrt(square + 1e-300));
+    blockProducts(marks, v, v).map((square) => 1 / Math.sqrt(square + 1e-300));
   const lengthU = perLength(d.u);
   const lengthA = perLength(d.a);
   for (let i = 0; i < marks.count; i++) {
-    d.unitU[i] = d.u[i]! * lengthU[channel[i]!]!;
-    d.unitA[i] = d.a[i]! * lengthA[channel[i]!]!;
+    d.unitU[i] = d.u[i]! * lengthU[block[i]!]!;
+    d.unitA[i] = d.a[i]! * lengthA[block[i]!]!;
   }
-  const along = channelProducts(marks, d.unitA, d.b);
-  for (let i = 0; i < marks.count; i++) d.unitB[i] = d.b[i]! - along[channel[i]!]! * d.unitA[i]!;
+  const along = blockProducts(marks, d.unitA, d.b);
+  for (let i = 0; i < marks.count; i++) d.unitB[i] = d.b[i]! - along[block[i]!]! * d.unitA[i]!;
   const lengthB = perLength(d.unitB);
-  for (let i = 0; i < marks.count; i++) d.unitB[i] = d.unitB[i]! * lengthB[channel[i]!]!;
+  for (let i = 0; i < marks.count; i++) d.unitB[i] = d.unitB[i]! * lengthB[block[i]!]!;
 }

@@ -3,8 +3,13 @@ import { channelDirections, type ChannelDirections } from '@/shared/shell/channe
 import { evaluation, type Evaluation } from '@/shared/shell/frame';
 import { evaluate } from '@/shared/shell/residuals';
 import type { ShellProblem, ShellState } from '@/shared/shell/gaussNewton';
-import { accumulate, factorise, hold, invert } from '@/shared/shell/normalEquations';
-import { V0 } from '@/shared/shell/shellModel';
+import { expandedMatrix, reducedMatrix, reduction } from '@/shared/shell/constrainedStep';
+import { isFixed, isInformed, type Known } from '@/shared/shell/known';
+import { naturalJacobian, naturalValues } from '@/shared/shell/naturalParameters';
+import { accumulate, factorise, invert } from '@/shared/shell/normalEquations';
+import { LN_W, THETA, V0, X, Y } from '@/shared/shell/shellModel';
+import { addPriors, axisOf, fixedConditions, gradient } from '@/shared/shell/stepWithin';
+import { addUnseen } from '@/shared/shell/trace/tracedErrors';
 import { estimateScales, type Scales } from '@/shared/shell/varianceComponents';
 
 /** Covariance of the internal parameters (row-major) with what it was made of. */
@@ -34,10 +39,8 @@ const MANY = 10000;
  * @returns null when the normal matrix is singular: the marks do not determine the parameters
  */
 export function errorModel(problem: ShellProblem, { frame, p }: ShellState): ErrorModel | null {
-  const { model, marks, vSys } = problem;
+  const { model, marks, known } = problem;
   const size = p.length;
-  const held = vSys !== null && vSys.sigma === 0 ? V0 : null;
-  const priorSigma = vSys !== null && vSys.sigma > 0 ? vSys.sigma : null;
   const at = evaluation(marks, size);
   evaluate(model, marks, frame, p, at);
   const A = new Float64Array(size * size);
@@ -50,47 +53,54 @@ export function errorModel(problem: ShellProblem, { frame, p }: ShellState): Err
     A,
     g,
   );
-  if (priorSigma !== null) A[V0 * size + V0] = A[V0 * size + V0]! + 1 / priorSigma ** 2;
-  if (held !== null) hold(size, held, A, g);
-  const plain = invert(size, A);
-  if (plain === null) return null;
-  if (held !== null) plain[held * size + held] = 0;
+  const state = { frame, p };
+  const natural = { values: naturalValues(model, state), G: naturalJacobian(model, state, axisOf(known)) };
+  addPriors(known, natural, A, g);
+  const scale = g.map((_, a) => 1 / Math.sqrt(A[a * size + a]! + 1e-300));
+  const left = reduction(size, fixedConditions(known, natural), scale);
+  const inverse = invert(left.free.length, reducedMatrix(size, left, A));
+  if (inverse === null) return null;
+  const plain = expandedMatrix(size, left, inverse);
 
-  const directions = channelDirections(marks, at, size, held);
-  const fromPrior = new Float64Array(marks.count);
-  if (priorSigma !== null)
-    for (let i = 0; i < marks.count; i++)
-      for (let b = 0; b < size; b++)
-        fromPrior[i] =
-          fromPrior[i]! + (directions.scaled[i * size + b]! * plain[b * size + V0]!) / priorSigma;
-  const scales = estimateScales(marks, directions, plain, size, fromPrior);
-  const parts = propagate(problem, directions, plain, size, scales, priorSigma);
-  const free = Array.from({ length: size }, (_, a) => a).filter((a) => a !== held);
-  const covariance = floored(size, free, parts.base, parts.shared);
-  if (covariance === null) return null;
+  const directions = channelDirections(marks, at, size);
+  // How an error of each prior's mean moves the parameters, and through them z.
+  const ofPriors = known
+    .filter((k) => k.prior !== null)
+    .map((k) => product(size, plain, gradient(natural, k.index)).map((v) => v / k.prior!.sd));
+  const fromPriors = ofPriors.map((column) => product(size, directions.scaled, column));
+  const scales = estimateScales(marks, directions, plain, size, fromPriors);
+  const parts = propagate(problem, directions, plain, size, scales, ofPriors);
+  const raised = floored(size, left.free, parts.base, parts.shared);
+  if (raised === null) return null;
+  const covariance = expandedMatrix(size, left, raised);
 
-  const dof = channelDof(marks.channels, vSys !== null);
+  const dof = channelDof(marks.blocks, known);
   const tDof = new Float64Array(size).fill(MANY);
+  const free = Array.from({ length: size }, (_, a) => a).filter((a) => !isFixed(known, a));
   for (const a of free) {
     const rest = Math.max(parts.base[a * size + a]! - parts.ownRing[a]! - parts.ownShift[a]!, 0);
     const ring = atLeastOwn(parts.ownRing[a]!, parts.ring[a]!);
     const shift = atLeastOwn(parts.ownShift[a]!, parts.shift[a]!);
-    const spareMarks = Math.max(marks.count - marks.channels, 1);
+    const spareMarks = Math.max(marks.count - marks.blocks, 1);
     const variance = ring ** 2 / dof.ring + shift ** 2 / dof.shift + rest ** 2 / spareMarks;
     const nu = (rest + ring + shift) ** 2 / Math.max(variance, 1e-300);
     tDof[a] = Math.min(Math.max(nu, 1), MANY);
   }
+  addUnseen(marks, covariance, tDof, free);
   return { evaluation: at, plain, covariance, tDof, scales, directions };
 }
 
 /**
  * Degrees of freedom of the ring-radius and ring-centre scatter among K channels. One more than the plain count for
- * the radius, since the floor removes the lower tail of the estimate; knowing v_sys frees another. Three channels
- * leave no spare ring: the scatter is then assumed, not estimated, and carries no t factor.
+ * the radius, since the floor removes the lower tail of the estimate; knowing v_sys frees another, and so does each
+ * parameter of the rings that is held. Three channels leave no spare ring: the scatter is then assumed, not estimated,
+ * and carries no t factor.
  */
-export function channelDof(channels: number, vSysKnown: boolean): { ring: number; shift: number } {
-  const spare = channels - 2 + (vSysKnown ? 1 : 0);
-  return { ring: spare > 1 ? spare : MANY, shift: Math.max(2 * channels - 2, 1) };
+export function channelDof(channels: number, known: readonly Known[]): { ring: number; shift: number } {
+  const held = [THETA, LN_W].filter((a) => isFixed(known, a)).length + (isInformed(known, V0) ? 1 : 0);
+  const spare = Math.min(channels - 2 + held, channels);
+  const centre = [X, Y].filter((a) => isFixed(known, a)).length;
+  return { ring: spare > 1 ? spare : MANY, shift: Math.max(2 * channels - 2 + centre, 1) };
 }
 
 /** Noise variance of each scaled residual from the two unshared sources. */
@@ -115,9 +125,9 @@ function propagate(
   inverse: Float64Array,
   size: number,
   scales: Scales,
-  priorSigma: number | null,
+  ofPriors: readonly Float64Array[],
 ): Propagated {
-  const K = marks.channels;
+  const K = marks.blocks;
   const noise = unsharedNoise(d, scales).map((v) => v + 1e-9);
   const square = () => new Float64Array(size * size);
   const out: Propagated = {
@@ -139,7 +149,7 @@ function propagate(
     for (let a = 0; a < size; a++) {
       for (let b = 0; b < size; b++)
         out.base[a * size + b] = out.base[a * size + b]! + h[a]! * noise[i]! * h[b]!;
-      const at = a * K + marks.channel[i]!;
+      const at = a * K + marks.block[i]!;
       hU[at] = hU[at]! + h[a]! * d.u[i]!;
       hA[at] = hA[at]! + h[a]! * d.a[i]!;
       hB[at] = hB[at]! + h[a]! * d.b[i]!;
@@ -157,9 +167,8 @@ function propagate(
       }
       out.shared[a * size + b] = scales.ring * ring + scales.shift * shift;
       if (a === b) [out.ring[a], out.shift[a]] = [scales.ring * ring, scales.shift * shift];
-      if (priorSigma !== null)
-        out.base[a * size + b] =
-          out.base[a * size + b]! + (inverse[a * size + V0]! * inverse[b * size + V0]!) / priorSigma ** 2;
+      for (const column of ofPriors)
+        out.base[a * size + b] = out.base[a * size + b]! + column[a]! * column[b]!;
     }
     for (let at = a * K; at < (a + 1) * K; at++) {
       out.ownRing[a] = out.ownRing[a]! + hUnitU[at]! ** 2;
@@ -169,10 +178,21 @@ function propagate(
   return out;
 }
 
+/** Matrix times vector; the matrix has as many columns as the vector is long. */
+function product(size: number, M: Float64Array, v: Float64Array): Float64Array {
+  const out = new Float64Array(M.length / size);
+  for (let i = 0; i < out.length; i++)
+    for (let a = 0; a < size; a++) out[i] = out[i]! + M[i * size + a]! * v[a]!;
+  return out;
+}
+
 /** A shared source's share of a variance, never below the marks' own noise along the same directions. */
 const atLeastOwn = (own: number, added: number): number => Math.max(own + added, FLOOR * own, own);
 
-/** base + shared, raised to FLOOR base in every direction, so that it stays positive definite; null if base is not. */
+/**
+ * base + shared of the free parameters, raised to FLOOR base in every direction, so that it stays positive definite;
+ * null if base is not.
+ */
 function floored(
   size: number,
   free: number[],
@@ -198,7 +218,7 @@ function floored(
   const { realEigenvalues, eigenvectorMatrix } = new EigenvalueDecomposition(symmetric, {
     assumeSymmetric: true,
   });
-  const out = new Float64Array(size * size);
+  const out = new Float64Array(n * n);
   for (let c = 0; c < n; c++) {
     const direction = free.map((_, i) => {
       let sum = 0;
@@ -208,7 +228,7 @@ function floored(
     const value = Math.max(1 + realEigenvalues[c]!, FLOOR);
     for (let i = 0; i < n; i++)
       for (let j = 0; j < n; j++) {
-        const at = free[i]! * size + free[j]!;
+        const at = i * n + j;
         out[at] = out[at]! + value * direction[i]! * direction[j]!;
       }
   }

@@ -3,6 +3,7 @@ import { DEGREE, unitVector } from '@/shared/sky/greatCircle';
 import { centroid, type MarkSet } from '@/shared/shell/markSet';
 import { median } from '@/shared/shell/robust';
 import { parameterCount, type ModelName } from '@/shared/shell/shellModel';
+import { errorBlocks, type TracedRim } from '@/shared/shell/trace/tracedErrors';
 
 /** A rim mark on the sky: galactic degrees, velocity of its channel in km/s, positional error in degrees. */
 export interface SkyMark {
@@ -18,6 +19,8 @@ export interface FitInput {
   channelWidth: number;
   /** What is known of v_sys, for the cap model: held at the value when sigma is 0 or absent, else a prior. km/s. */
   vSys?: { value: number; sigma?: number };
+  /** The marks are a rim traced from the brightness; see trace/README.md for what that adds to the errors. */
+  traced?: TracedRim;
 }
 
 export const LEAST_MARKS = 6;
@@ -37,30 +40,36 @@ const ONE_POINT = 1e-9;
  */
 export function readMarks(input: FitInput, model: ModelName): MarkSet {
   checkNumbers(input, model);
-  const { marks, channelWidth } = input;
+  const { marks, channelWidth, traced } = input;
   const velocity: number[] = [];
   for (const v of marks.map((m) => m.velocity).sort((a, b) => a - b)) {
     const last = velocity[velocity.length - 1];
     if (last === undefined || v - last > SAME_CHANNEL * channelWidth) velocity.push(v);
   }
+  const channelOf = marks.map((m) => {
+    const above = velocity.findIndex((v) => v > m.velocity);
+    return (above < 0 ? velocity.length : above) - 1;
+  });
   const set: MarkSet = {
     count: marks.length,
     channels: velocity.length,
     direction: Float64Array.from(marks.flatMap((m) => [...unitVector({ lon: m.l, lat: m.b })])),
     sigma2: Float64Array.from(marks, (m) => ((m.sigma ?? NaN) * DEGREE) ** 2),
-    channel: Int32Array.from(marks, (m) => {
-      const above = velocity.findIndex((v) => v > m.velocity);
-      return (above < 0 ? velocity.length : above) - 1;
-    }),
+    channel: Int32Array.from(channelOf),
     velocity: Float64Array.from(velocity),
     width: channelWidth,
+    ...errorBlocks(
+      marks.map((m) => m.velocity),
+      channelOf,
+      traced,
+    ),
   };
   checkEnough(set, model);
   checkShape(set);
   return set;
 }
 
-function checkNumbers({ marks, channelWidth, vSys }: FitInput, model: ModelName): void {
+function checkNumbers({ marks, channelWidth, vSys, traced }: FitInput, model: ModelName): void {
   const refuse = (field: string, detail: string): never => {
     throw new Problem('invalid-input', detail, { field });
   };
@@ -80,6 +89,8 @@ function checkNumbers({ marks, channelWidth, vSys }: FitInput, model: ModelName)
     if (mark.sigma <= 0)
       refuse(`marks.${i}.sigma`, `The error of a mark must be positive; this one is ${mark.sigma} degrees.`);
   });
+  if (traced !== undefined && !(Number.isFinite(traced.beamDeg) && traced.beamDeg > 0))
+    refuse('traced.beamDeg', 'A traced rim needs the beam it was traced with, in degrees and above 0.');
   finite(channelWidth, 'channelWidth', 'The channel width');
   if (channelWidth <= 0)
     refuse('channelWidth', `The channel width must be positive; this one is ${channelWidth} km/s.`);

@@ -14,6 +14,18 @@ export interface MarkSet {
   velocity: Float64Array;
   /** Full width of a channel, km/s. */
   width: number;
+  /** Which marks share errors, 0 … blocks - 1: those of a channel, or for a traced rim of neighbouring channels. */
+  block: Int32Array;
+  blocks: number;
+  /** What no scatter among the marks of a traced rim shows; null for a person's marks. */
+  unseen: UnseenErrors | null;
+}
+
+/** Standard errors that come on top: of theta (rad), of v_sys (km/s) and of ln v_exp. */
+export interface UnseenErrors {
+  theta: number;
+  v0: number;
+  lnW: number;
 }
 
 /** The marks for which `keep` holds, with the channels that are left counted anew. */
@@ -29,7 +41,16 @@ export function subset(marks: MarkSet, keep: (mark: number) => boolean): MarkSet
     channel: Int32Array.from(kept, (i) => renumbered.get(marks.channel[i]!)!),
     velocity: Float64Array.from(used, (k) => marks.velocity[k]!),
     width: marks.width,
+    ...numbered(kept.map((i) => marks.block[i]!)),
+    unseen: marks.unseen,
   };
+}
+
+/** Blocks counted from 0 without gaps, in their order. */
+export function numbered(blocks: readonly number[]): Pick<MarkSet, 'block' | 'blocks'> {
+  const used = [...new Set(blocks)].sort((a, b) => a - b);
+  const number = new Map(used.map((block, at) => [block, at]));
+  return { block: Int32Array.from(blocks, (block) => number.get(block)!), blocks: used.length };
 }
 
 /** Indices of all marks. */

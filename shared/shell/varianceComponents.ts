@@ -1,12 +1,12 @@
 import { Matrix, SingularValueDecomposition } from 'ml-matrix';
-import { channelProducts, type ChannelDirections } from '@/shared/shell/channelDirections';
+import { blockProducts, type ChannelDirections } from '@/shared/shell/channelDirections';
 import type { MarkSet } from '@/shared/shell/markSet';
 import { transformed } from '@/shared/shell/naturalParameters';
 import { median } from '@/shared/shell/robust';
 
 /**
  * Scales of the four sources of scatter. `mark` and `spread` multiply the stated sigma^2 and the variance within the
- * channel; `ring` and `shift` are variances in rad^2 of the radius and the centre that a channel's marks share, and
+ * channel; `ring` and `shift` are variances in rad^2 of the radius and the centre that a channel's marks (or a block's) share, and
  * may come out negative, as any estimate of a small variance may.
  */
 export interface Scales {
@@ -27,15 +27,15 @@ const LEAST_MARK_SCALE = 0.02;
  * Rao 1971). With M = 1 - X A^-1 X' the matrix that makes residuals of errors, the form with matrix P_j expects
  * sum_i c_i tr(P_j M G_i M): a 4 x 4 linear system.
  *
- * @param inverse A^-1, the held parameter's row and column zero
- * @param fromPrior what the error of a prior on v_sys adds to z; zeros without a prior
+ * @param inverse A^-1, within what held parameters leave free
+ * @param fromPriors what one standard error of each prior adds to z
  */
 export function estimateScales(
   marks: MarkSet,
   d: ChannelDirections,
   inverse: Float64Array,
   size: number,
-  fromPrior: Float64Array,
+  fromPriors: readonly Float64Array[],
 ): Scales {
   const { E, total } = expectations(marks, d, inverse, size);
   const Q = [0, 0, 0, 0];
@@ -43,7 +43,8 @@ export function estimateScales(
   let ownShare = 0;
   let spreadShare = 0;
   for (let i = 0; i < marks.count; i++) {
-    const square = d.z[i]! ** 2 - fromPrior[i]! ** 2;
+    let square = d.z[i]! ** 2;
+    for (const prior of fromPriors) square -= prior[i]! ** 2;
     Q[0]! += d.own[i]! * square;
     Q[1]! += d.spread[i]! * square;
     totalQ += square;
@@ -51,8 +52,9 @@ export function estimateScales(
     spreadShare += d.spread[i]!;
   }
   const excess = (q: Float64Array) => {
-    const [z, prior] = [channelProducts(marks, q, d.z), channelProducts(marks, q, fromPrior)];
-    return z.reduce((sum, value, k) => sum + value * value - prior[k]! ** 2, 0);
+    const squares = (v: Float64Array) =>
+      blockProducts(marks, q, v).reduce((sum, value) => sum + value * value, 0);
+    return fromPriors.reduce((sum, prior) => sum - squares(prior), squares(d.z));
   };
   Q[2] = excess(d.unitU);
   Q[3] = excess(d.unitA) + excess(d.unitB);
@@ -85,7 +87,7 @@ function expectations(
   inverse: Float64Array,
   size: number,
 ): { E: number[][]; total: number[] } {
-  const { count: n, channels: K, channel } = marks;
+  const { count: n, blocks: K, block } = marks;
   const X = d.scaled;
   const B = new Float64Array(n * size);
   for (let i = 0; i < n; i++)
@@ -108,7 +110,7 @@ function expectations(
     const rows = new Float64Array(K * size);
     for (let i = 0; i < n; i++)
       for (let a = 0; a < size; a++) {
-        const at = channel[i]! * size + a;
+        const at = block[i]! * size + a;
         rows[at] = rows[at]! + X[i * size + a]! * u[i]!;
       }
     return { u, rows, sum: outerSum(size, rows) };
@@ -131,7 +133,7 @@ function expectations(
       total += inner(p.B, sum);
       for (let i = 0; i < n; i++) {
         let projected = 0;
-        for (let a = 0; a < size; a++) projected += B[i * size + a]! * rows[channel[i]! * size + a]!;
+        for (let a = 0; a < size; a++) projected += B[i * size + a]! * rows[block[i]! * size + a]!;
         total += p.weight[i]! * u[i]! * (u[i]! - 2 * projected);
       }
       return total;
@@ -142,7 +144,7 @@ function expectations(
     for (const q of units)
       for (const v of directions) {
         total += inner(transformed(size, inverse, q.sum), v.sum);
-        const product = channelProducts(marks, q.u, v.u);
+        const product = blockProducts(marks, q.u, v.u);
         for (let k = 0; k < K; k++)
           total += product[k]! * (product[k]! - 2 * bilinear(size, inverse, q.rows, v.rows, k * size));
       }
