@@ -35,8 +35,14 @@ function linesAt(plane: Float32Array, nx: number, ny: number, level: number): Im
   // A crossing is named by its side of a cell: sides along x have even names, sides along y odd ones.
   const joined = new Map<number, number[]>();
   const join = (a: number, b: number) => {
-    joined.get(a)?.push(b) ?? joined.set(a, [b]);
-    joined.get(b)?.push(a) ?? joined.set(b, [a]);
+    for (const [from, to] of [
+      [a, b],
+      [b, a],
+    ] as const) {
+      const ends = joined.get(from);
+      if (ends) ends.push(to);
+      else joined.set(from, [to]);
+    }
   };
   for (let j = 0; j + 1 < ny; j++)
     for (let i = 0; i + 1 < nx; i++) {

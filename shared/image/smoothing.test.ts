@@ -77,7 +77,7 @@ test('a wide kernel done on block averages agrees with the formula', () => {
   const peak = 1 / (2 * Math.PI * sigma ** 2);
   for (const d of [0, 10, 20, 35]) {
     const formula = peak * Math.exp(-0.5 * (d / sigma) ** 2);
-    expect(Math.abs(out[150 * n + 150 + d]! - formula)).toBeLessThan(0.02 * peak);
+    expect(Math.abs(out[150 * n + 150 + d]! - formula)).toBeLessThan(0.05 * peak);
   }
 });
 

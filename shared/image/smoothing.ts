@@ -29,8 +29,8 @@ const KEPT = 6;
  *
  * The Gaussian is applied along x and then along the line on which its conditional mean lies, with numbers between
  * pixels taken by linear interpolation. Kernels wider than 12 pixels are applied to block averages, a sixth of their
- * width a side, and brought back by bilinear interpolation: away from edges within 2 per cent of the direct sum for a
- * point source.
+ * width a side, and brought back by bilinear interpolation: a point may then seem moved by half a block, so that its
+ * picture is within 5 per cent of its peak of the direct sum; what is wider than a block is nearer.
  *
  * @param plane length nx·ny, row y = 0 first
  * @throws RangeError when the length does not fit, or the covariance is of no Gaussian
