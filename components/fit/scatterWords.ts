@@ -1,0 +1,80 @@
+import { plainNumber } from '@/shared/physics/quantity';
+import type { FitExtra } from './fitExtra';
+
+export interface ScatterSource {
+  key: 'mark' | 'spread' | 'ring' | 'shift';
+  title: string;
+  sentence: string;
+  /** In units of the mark error; null where none is seen, or where it is not of that kind. */
+  ratio: number | null;
+}
+
+/** Below this share of a mark's error a difference is not worth a number. */
+const NOTHING = 0.05;
+
+/**
+ * The four sources of scatter behind the error bars, in words and in units of a mark's error.
+ *
+ * @param scales factors on sigma² and on the variance within a channel; rms offsets of rings, degrees, negative where
+ *               the estimated variance is
+ * @param sigmaDeg the median error of a mark, degrees
+ * @param stated false where the marks carried none, and it was taken from their scatter
+ */
+export function scatterSources(
+  scales: NonNullable<FitExtra['scales']>,
+  sigmaDeg: number,
+  stated: boolean,
+): ScatterSource[] {
+  const error = stated ? 'your stated error' : 'the error of a mark';
+  const size = `${plainNumber(sigmaDeg, 2)}°`;
+  const mark = Math.sqrt(Math.max(scales.mark, 0));
+  const spread = Math.sqrt(Math.max(scales.spread, 0));
+  const ring = scales.ringDeg / sigmaDeg;
+  const shift = scales.shiftDeg / sigmaDeg;
+  return [
+    {
+      key: 'mark',
+      title: 'Single marks',
+      ratio: stated ? mark : 1,
+      sentence: stated
+        ? `Marks scatter about their own ring by ${times(mark)} ${error} of ${size}${judged(mark)}.`
+        : `The marks carry no error of their own. From their scatter about their rings it is ${size}.`,
+    },
+    {
+      key: 'spread',
+      title: 'Within a channel',
+      ratio: null,
+      sentence:
+        spread < NOTHING
+          ? 'The radius is not seen to change within the width of a channel: the rim is smooth there.'
+          : `Across the width of a channel the radius spreads by ${times(spread)} what the model expects of it.`,
+    },
+    {
+      key: 'ring',
+      title: 'Ring to ring',
+      ratio: ring > NOTHING ? ring : null,
+      sentence:
+        ring > NOTHING
+          ? `Your rings differ in radius by ${ratio(ring)} of ${error}. This is part of the error bars.`
+          : `Your rings agree in radius: no more difference is seen than single marks make.`,
+    },
+    {
+      key: 'shift',
+      title: 'Centres of the rings',
+      ratio: shift > NOTHING ? shift : null,
+      sentence:
+        shift > NOTHING
+          ? `The centres of your rings lie off by ${ratio(shift)} of ${error}. This is part of the error bars.`
+          : 'Your rings share one centre: no more shift is seen than single marks make.',
+    },
+  ];
+}
+
+const ratio = (x: number): string => x.toFixed(x < 9.5 ? 1 : 0);
+const times = (x: number): string => `${ratio(x)} times`;
+
+function judged(mark: number): string {
+  if (mark > 1.5) return ', so you were less sure than you said';
+  if (mark < 0.65) return ', so you were surer than you said';
+  return ', as stated';
+}
