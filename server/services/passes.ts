@@ -76,12 +76,18 @@ export interface Reduction {
   made: { planes: boolean; spectra: { slab: number } | null; reduced: { block: number } | null };
 }
 
-/** Read every pixel once: numbers, reduced planes, and the copies that are written on the way. */
+/** Read every pixel once: numbers, thumbnails, and the copies that are written on the way where they are wanted. */
 export async function reduceAll(
   parts: Parts,
   files: WorkingFiles,
   pixels: Pixels,
-  given: { velocities: number[]; threshold: number; sampledNoise: number; thumbnail: number },
+  given: {
+    velocities: number[];
+    threshold: number;
+    sampledNoise: number;
+    thumbnail: number;
+    copies: boolean;
+  },
   threads: CubeThreads,
   onChannel: () => void,
   signal: AbortSignal,
@@ -96,9 +102,9 @@ export async function reduceAll(
   const origin = given.velocities[channels >> 1]!;
   const reducedBlock = blockFor(nx, ny, REDUCED_SIZE);
   const made = {
-    planes: 'key' in place && bytes > parts.config.copyFromBytes,
-    spectra: bytes >= SPECTRA_FROM_BYTES ? { slab } : null,
-    reduced: reducedBlock >= REDUCED_FROM_BLOCK ? { block: reducedBlock } : null,
+    planes: given.copies && 'key' in place && bytes > parts.config.copyFromBytes,
+    spectra: given.copies && bytes >= SPECTRA_FROM_BYTES ? { slab } : null,
+    reduced: given.copies && reducedBlock >= REDUCED_FROM_BLOCK ? { block: reducedBlock } : null,
   };
   const tiles = Math.ceil(nx / 8) * Math.ceil(ny / 8);
   const copies: ReduceTask['copies'] = {

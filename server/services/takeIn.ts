@@ -53,6 +53,7 @@ export async function takeIn(
       threshold: MASK_NOISES * sampledNoise,
       sampledNoise,
       thumbnail: THUMBNAIL_SIZE,
+      copies: true,
     },
     threads,
     () => (state.progress += (0.9 - began) / channels),

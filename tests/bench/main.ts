@@ -1,8 +1,8 @@
 /**
  * npm run bench: measured speeds, on this machine, now. `npm run bench -- ingest` runs one part.
  *
- * ingest  a 512 x 512 x 128 float32 cube through the real server and worker, beside numpy doing the same reductions
- * survey  cubes of 512 x 512 x 512 pixels in three orders and formats, beside numpy on one thread (2.5 GB of files)
+ * upload  a 512 x 512 x 128 float32 cube through the real server and worker, beside numpy doing the same reductions
+ * ingest  cubes of 512 x 512 x 512 pixels in three orders and formats, beside numpy on one thread (2.5 GB of files)
  * planes  random channels, cuts and spectra of those cubes, as the server times them
  * size    cubes of 2 GiB and of 2e9 pixels, and the memory they take (16 GB of disk)
  * fit     the fit and its bootstrap, beside scipy
@@ -20,14 +20,14 @@ import { benchPlanes } from './planes';
 import { stopAll } from './product';
 import { benchScreen } from './screen';
 import { benchSize } from './size';
-import { benchSurvey } from './survey';
+import { benchUpload } from './upload';
 
 const say = (line: string) => console.log(line);
 
 const parts: Record<string, { programs: Parameters<typeof ensurePrograms>[0]; run: () => Promise<unknown> }> =
   {
+    upload: { programs: ['postgresql', 'numpy'], run: benchUpload },
     ingest: { programs: ['postgresql', 'numpy'], run: benchIngest },
-    survey: { programs: ['postgresql', 'numpy'], run: benchSurvey },
     planes: { programs: ['postgresql'], run: benchPlanes },
     size: { programs: ['postgresql'], run: benchSize },
     fit: { programs: [], run: benchFit },

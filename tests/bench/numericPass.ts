@@ -9,9 +9,9 @@ import { makePool } from '@/workers/pool';
 import { cubeThreads } from '@/workers/threads';
 
 /**
- * Seconds that two threads need for the numbers of a cube: everything that ingest takes from its pixels, with the
- * copies that are written on the way, and without thumbnails, database and store. The threads are warm, as those of a
- * worker that has read a cube before.
+ * Seconds that two threads need for the numbers of a cube: everything that ingest takes from its pixels, without the
+ * copies that ingest also writes for quick looking, pictures, database and store. A cube whose channels are scattered
+ * over the file is rewritten first, and that counts. The threads are warm, as those of a worker that has read a cube.
  */
 export async function numericPass(path: string, dataDir: string): Promise<number> {
   const parts = makeParts(
@@ -40,6 +40,7 @@ export async function numericPass(path: string, dataDir: string): Promise<number
         threshold: 3 * noise,
         sampledNoise: noise,
         thumbnail: 96,
+        copies: false,
       },
       threads,
       () => undefined,

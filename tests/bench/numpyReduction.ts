@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { promisify } from 'node:util';
 import { numpyPython } from './machine';
 
-/** What reduce.py found. */
+/** What upload_numpy.py found. */
 export interface NumpyReduction {
   seconds: number;
   peakBytes: number;
@@ -24,7 +24,7 @@ export async function numpyReduction(
   folder: string,
   processes: number,
 ): Promise<NumpyReduction> {
-  const script = join(__dirname, 'reduce.py');
+  const script = join(__dirname, 'upload_numpy.py');
   // one thread for each process: the reductions call no library that would use more
   const env = { ...process.env, OMP_NUM_THREADS: '1', OPENBLAS_NUM_THREADS: '1' };
   const { program } = numpyPython()!;

@@ -3,7 +3,7 @@ import { seededRandom } from '@/shared/random';
 import { cookieOf } from '../api/uploading';
 import { load } from './machine';
 import { startBenchProduct } from './product';
-import { ORDERS, SIDE, writeSurveyCube } from './surveyCubes';
+import { ORDERS, SIDE, writeIngestCube } from './ingestCubes';
 import { median, milliseconds, quantile, table, verdict } from './table';
 
 const TIMES = 200;
@@ -16,7 +16,7 @@ export async function benchPlanes(): Promise<void> {
     const rows = [['server side', 'median', '95th of 200', 'slowest', '', 'limit', 'load']];
     for (const order of ORDERS) {
       const file = join(product.scratch, `${order}.fits`);
-      writeSurveyCube(file, order);
+      writeIngestCube(file, order);
       const { cubeId } = await product.ingestFile(file);
       const headers = { Cookie: cookieOf(product.lead, product.url) };
       const take = async (path: string) => {

@@ -1,6 +1,6 @@
-"""What ingest reduces a cube to, in numpy: the reference of the ingest benchmark.
+"""What ingest reduces a cube to, in numpy: the reference of the upload benchmark.
 
-    reduce.py cube.fits folder processes
+    upload_numpy.py cube.fits folder processes
 
 Statistics of every channel (minimum, maximum, mean, rms about zero, 1.4826 times the median absolute deviation, number
 of blanks), block-averaged thumbnails as 8-bit grey levels through one brightness window, the mean spectrum and the sum
@@ -18,20 +18,9 @@ import time
 
 import numpy as np
 
+from fits_header import read_header
+
 THUMBNAIL = 96
-
-
-def read_header(path):
-    cards, blocks = {}, 0
-    with open(path, "rb") as file:
-        while True:
-            block = file.read(2880).decode("ascii")
-            blocks += 1
-            for at in range(0, 2880, 80):
-                keyword, value = block[at : at + 8].strip(), block[at + 10 : at + 80]
-                if keyword == "END":
-                    return cards, 2880 * blocks
-                cards[keyword] = value.split("/")[0].strip()
 
 
 def reduce_channels(task):

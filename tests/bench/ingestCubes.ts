@@ -42,7 +42,7 @@ function headerOf(order: Order): Buffer {
  * Write one of the cubes of the ingest benchmark: the same sky each time, a line that drifts over it, noise, a blank
  * corner. Normal numbers are drawn once and read from another place for each run.
  */
-export function writeSurveyCube(path: string, order: Order): void {
+export function writeIngestCube(path: string, order: Order): void {
   const random = seededRandom(2026);
   const normals = Float32Array.from({ length: TABLE }, () => NOISE * random.normal());
   const line = (x: number, y: number, k: number) => {

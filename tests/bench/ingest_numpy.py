@@ -1,6 +1,6 @@
-"""What ingest finds in a cube, in numpy on one thread: the reference of the survey benchmark.
+"""What ingest finds in a cube, in numpy on one thread: the reference of the ingest benchmark.
 
-    survey.py cube.fits folder
+    ingest_numpy.py cube.fits folder
 
 For every channel minimum, maximum, mean, median, rms about zero, 1.4826 times the median absolute deviation and number
 of blanks; mean, median and maximum spectrum (those columns); noise of the cube from its quiet channels; total
@@ -19,18 +19,7 @@ import time
 
 import numpy as np
 
-
-def read_header(path):
-    cards, blocks = {}, 0
-    with open(path, "rb") as file:
-        while True:
-            block = file.read(2880).decode("ascii")
-            blocks += 1
-            for at in range(0, 2880, 80):
-                keyword, value = block[at : at + 8].strip(), block[at + 10 : at + 80]
-                if keyword == "END":
-                    return cards, 2880 * blocks
-                cards[keyword] = value.split("/")[0].strip().strip("'").strip()
+from fits_header import read_header
 
 
 def planes(data, cards, first):
