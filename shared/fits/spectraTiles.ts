@@ -27,11 +27,27 @@ export const tileAt = (t: SpectraTiles, x: number, y: number): number =>
 export const slabOffset = (t: SpectraTiles, tile: number, from: number): number =>
   tile * tileBytes(t) + (TILE * TILE * from * Math.abs(t.bitpix)) / 8;
 
-/** Where, in the values of one tile, the spectrum of a position lies: `at(channel)` for each channel. */
-export function placeInTile(t: SpectraTiles, x: number, y: number, channel: number): number {
-  const first = channel - (channel % t.slab);
-  const depth = Math.min(t.slab, t.channels - first);
-  return TILE * TILE * first + ((y % TILE) * TILE + (x % TILE)) * depth + (channel - first);
+/**
+ * Gather the spectrum of one position from the bytes of its tile, as it stands in the file.
+ *
+ * @param tile bytes of one whole tile, from a multiple of 8 on
+ * @param out  bytes of one pixel in each channel, from a multiple of 8 on
+ */
+export function gatherSpectrum(
+  t: SpectraTiles,
+  tile: Uint8Array,
+  x: number,
+  y: number,
+  out: Uint8Array,
+): void {
+  const from = wordsOf(tile, t.bitpix) as Uint32Array;
+  const to = wordsOf(out, t.bitpix) as Uint32Array;
+  const position = (y % TILE) * TILE + (x % TILE);
+  for (let first = 0; first < t.channels; first += t.slab) {
+    const depth = Math.min(t.slab, t.channels - first);
+    const start = TILE * TILE * first + position * depth;
+    for (let k = 0; k < depth; k++) to[first + k] = from[start + k]!;
+  }
 }
 
 /**
