@@ -187,11 +187,11 @@ function curvePaths(model: DiagramModel, l: DiagramLayout): { line: string; band
   const radii = velocities.map((v) => ringRadius(v, model) ?? 0);
   const at = (v: number, r: number) => `${l.x(v).toFixed(1)} ${l.y(Math.max(r, 0)).toFixed(1)}`;
   const line = velocities.map((v, i) => `${i === 0 ? 'M' : 'L'}${at(v, radii[i]!)}`).join('');
-  const { errorAt } = model;
-  if (!errorAt || velocities.length === 0) return { line, band: null };
-  const errors = velocities.map(errorAt);
-  const upper = velocities.map((v, i) => at(v, radii[i]! + errors[i]!));
-  const lower = velocities.map((v, i) => at(v, radii[i]! - errors[i]!)).reverse();
+  const { errorAt, bandAt } = model;
+  if (!(errorAt || bandAt) || velocities.length === 0) return { line, band: null };
+  const ends = velocities.map((v, i) => bandAt?.(v) ?? [radii[i]! - errorAt!(v), radii[i]! + errorAt!(v)]);
+  const upper = velocities.map((v, i) => at(v, ends[i]![1]));
+  const lower = velocities.map((v, i) => at(v, ends[i]![0])).reverse();
   return { line, band: `M${[...upper, ...lower].join('L')}Z` };
 }
 

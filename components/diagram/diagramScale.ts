@@ -17,6 +17,8 @@ export interface DiagramModel {
   vExp: number;
   /** Standard error of the ring radius at a velocity, degrees. */
   errorAt?: (velocity: number) => number;
+  /** Ends of the 68 % band of the ring radius at a velocity, degrees; drawn in place of errorAt where it is given. */
+  bandAt?: (velocity: number) => readonly [number, number];
 }
 
 /** The ends of both axes. Several diagrams with one domain compare. */
