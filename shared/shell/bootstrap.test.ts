@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { percentiles } from '@/shared/shell/bootstrap';
-import { fitShell } from '@/shared/shell/fit';
+import { joined, percentiles } from '@/shared/shell/bootstrap';
+import { bootstrapDraws, finishFit, fitShell, solveFit } from '@/shared/shell/fit';
 
 const folder = join(__dirname, '../../tests/reference/shells/cases');
 const load = (name: string) => JSON.parse(readFileSync(join(folder, name), 'utf8'));
@@ -69,4 +69,20 @@ test('percentiles unwrap angles and keep infinities', () => {
   expect(hi).toBeCloseTo(0.34, 10);
   const unbounded = Float64Array.from({ length: 101 }, (_, i) => (i < 70 ? i : Infinity));
   expect(percentiles(unbounded, 1, 0, 20)).toEqual({ lo: 16, hi: Infinity, sd: Infinity });
+});
+
+test('draws made in parts, by others who got the solution as plain data, are those made in one go', () => {
+  const marks = load('04-cap-near-prior.json');
+  const solved = solveFit(marks, { model: 'cap' });
+  const parts = [
+    [0, 13],
+    [13, 40],
+    [40, 60],
+  ].map(([from, to]) => bootstrapDraws(structuredClone(solved), { seed: 9 }, from!, to!));
+  const whole = bootstrapDraws(solved, { seed: 9 }, 0, 60);
+  expect(joined(parts)).toEqual(whole);
+  const options = { model: 'cap' as const, bootstrap: 60, seed: 9 };
+  expect(JSON.stringify(finishFit(solved, options, joined(parts)))).toBe(
+    JSON.stringify(fitShell(marks, options)),
+  );
 });

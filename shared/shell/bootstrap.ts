@@ -2,15 +2,18 @@ import { blockProducts } from '@/shared/shell/channelDirections';
 import { channelDof, FLOOR, unsharedNoise, type ErrorModel } from '@/shared/shell/errorModel';
 import { centreAt, projectMarks, type Frame } from '@/shared/shell/frame';
 import { solve, workspace, type ShellProblem, type ShellState } from '@/shared/shell/gaussNewton';
+import { isFixed } from '@/shared/shell/known';
 import type { MarkSet } from '@/shared/shell/markSet';
 import { naturalValues } from '@/shared/shell/naturalParameters';
 import { seededRandom, type Random } from '@/shared/random';
-import { EXTRA_1, EXTRA_2, LN_W, V0, X, Y } from '@/shared/shell/shellModel';
+import { EXTRA_1, EXTRA_2, LN_W, V0 } from '@/shared/shell/shellModel';
 import { drawUnseen } from '@/shared/shell/trace/tracedErrors';
 
 export interface BootstrapOptions {
-  draws: number;
   seed: number;
+  /** Draws from .. to - 1 of the sequence that the seed stands for. */
+  from: number;
+  to: number;
   onProgress?: (done: number) => void;
 }
 
@@ -30,8 +33,11 @@ const PROGRESS_EVERY = 25;
  *
  * Each draw makes a new reading: marks on the model rings, moved along their radii by errors with the four sources of
  * the error model, whose variances are themselves redrawn (scaled inverse chi-square), as they are known only from few
- * channels. The draw is refitted from the fitted values; a prior on v_sys is redrawn about the fit. Marks set aside
- * stay out. The same seed gives the same draws.
+ * channels. The draw is refitted from the fitted values; the means of priors are redrawn about the fit. Marks set aside
+ * stay out.
+ *
+ * Every draw has random numbers of its own, made from the seed and its number, so that draws 0 .. n - 1 are the same
+ * bits whether they are made in one go or in parts by several threads.
  */
 export function bootstrap(
   problem: ShellProblem,
@@ -39,9 +45,10 @@ export function bootstrap(
   errors: ErrorModel,
   options: BootstrapOptions,
 ): BootstrapDraws {
-  const { model, marks, vSys } = problem;
+  const { model, marks, known } = problem;
+  const { from, to } = options;
   const size = state.p.length;
-  const random = seededRandom(options.seed);
+  const fitted = naturalValues(model, state);
   const drawn: MarkSet = { ...marks, direction: new Float64Array(marks.direction.length) };
   const frame: Frame = {
     ...state.frame,
@@ -50,43 +57,65 @@ export function bootstrap(
     northward: new Float64Array(marks.count),
   };
   const place = placer(problem, state, errors, drawn);
-  const draw = errorDrawer(problem, errors, random);
+  const draw = errorDrawer(problem, errors);
   const ws = workspace(marks, size);
   const e = new Float64Array(marks.count);
   const p = new Float64Array(size);
-  const out: BootstrapDraws = { values: new Float64Array(options.draws * size), failed: 0, unbounded: 0 };
+  const out: BootstrapDraws = { values: new Float64Array((to - from) * size), failed: 0, unbounded: 0 };
 
-  for (let d = 0; d < options.draws; d++) {
-    draw(e);
+  for (let d = from; d < to; d++) {
+    const random = randomOfDraw(options.seed, d);
+    draw(e, random);
     place(e);
     projectMarks(drawn, frame);
-    const known =
-      vSys === null || vSys.sigma === 0
-        ? vSys
-        : { value: state.p[V0]! + vSys.sigma * random.normal(), sigma: vSys.sigma };
+    const redrawn = known.map((k) => {
+      if (k.prior === null) return k;
+      const { sd } = k.prior;
+      return { ...k, prior: { mean: fitted[k.index]! + sd * random.normal(), sd } };
+    });
     p.set(state.p);
-    const fit = solve({ model, marks: drawn, vSys: known }, { frame, p }, { tolerance: TOLERANCE }, ws);
-    const origin = centreAt(frame, p[X]!, p[Y]!);
-    const values = naturalValues(model, { frame: { ...frame, origin }, p });
-    drawUnseen(marks, values, (a) => !(vSys?.sigma === 0 && a === V0), random);
+    const fit = solve({ model, marks: drawn, known: redrawn }, { frame, p }, { tolerance: TOLERANCE }, ws);
+    const values = naturalValues(model, { frame, p });
+    for (const k of known) if (k.fixed !== null) values[k.index] = k.fixed;
+    drawUnseen(marks, values, (a) => !isFixed(known, a), random);
     if (fit.atBound === 'high' && p[LN_W]! > state.p[LN_W]!) {
       values[LN_W] = Infinity;
       out.unbounded++;
     } else if (!fit.settled || fit.atBound !== null) {
       out.failed++;
     }
-    out.values.set(values, d * size);
-    if (d % PROGRESS_EVERY === PROGRESS_EVERY - 1) options.onProgress?.((d + 1) / options.draws);
+    out.values.set(values, (d - from) * size);
+    const made = d - from + 1;
+    if (made % PROGRESS_EVERY === 0) options.onProgress?.(made / (to - from));
   }
   return out;
 }
 
+/** Draws made in parts, in their order, as one. */
+export function joined(parts: readonly BootstrapDraws[]): BootstrapDraws {
+  const values = new Float64Array(parts.reduce((sum, part) => sum + part.values.length, 0));
+  let at = 0;
+  for (const part of parts) {
+    values.set(part.values, at);
+    at += part.values.length;
+  }
+  return {
+    values,
+    failed: parts.reduce((sum, part) => sum + part.failed, 0),
+    unbounded: parts.reduce((sum, part) => sum + part.unbounded, 0),
+  };
+}
+
+/** The generator of one draw. Seeds of different draws differ: a step by an odd number visits all 32-bit numbers. */
+const randomOfDraw = (seed: number, draw: number): Random =>
+  seededRandom((Math.imul(seed, 0x2c1b3c6d) + Math.imul(draw + 1, 0x85ebca6b)) >>> 0);
+
 /** A function that fills an array with one draw of scaled errors. */
-function errorDrawer({ marks, vSys }: ShellProblem, errors: ErrorModel, random: Random) {
+function errorDrawer({ marks, known }: ShellProblem, errors: ErrorModel) {
   const { directions: d, scales } = errors;
   const noise = unsharedNoise(d, scales);
   const root = noise.map(Math.sqrt);
-  const dof = channelDof(marks.blocks, vSys !== null);
+  const dof = channelDof(marks.blocks, known);
   const unsharedDof = Math.max(marks.count - marks.blocks - 2, 2);
   const shared = [
     { unit: d.unitA, full: d.a, scale: scales.shift, dof: dof.shift, source: 0 },
@@ -103,7 +132,7 @@ function errorDrawer({ marks, vSys }: ShellProblem, errors: ErrorModel, random: 
     return { unit, own, total, ...rest };
   });
 
-  return (e: Float64Array): void => {
+  return (e: Float64Array, random: Random): void => {
     const inflation = unsharedDof / random.chiSquare(unsharedDof);
     for (let i = 0; i < e.length; i++) e[i] = root[i]! * Math.sqrt(inflation) * random.normal();
     let source = -1;

@@ -47,8 +47,7 @@ export function channelDirections(
   for (let i = 0; i < n; i++) {
     const perError = 1 / Math.sqrt(variance[i]!);
     d.z[i] = residual[i]! * perError;
-    for (let j = 0; j < size; j++)
-      d.scaled[i * size + j] = jacobian[i * size + j]! * perError;
+    for (let j = 0; j < size; j++) d.scaled[i * size + j] = jacobian[i * size + j]! * perError;
     d.own[i] = marks.sigma2[i]! * perError * perError;
     d.spread[i] = Math.max(variance[i]! - marks.sigma2[i]!, 0) * perError * perError;
     d.u[i] = perError;

@@ -1,34 +1,35 @@
 import { DEGREE, lonLatOf } from '@/shared/sky/greatCircle';
-import { bootstrap, percentiles } from '@/shared/shell/bootstrap';
+import { percentiles, type BootstrapDraws } from '@/shared/shell/bootstrap';
 import { arcCovered, riseAboveLine } from '@/shared/shell/arc';
 import { channelCurve, curveTable } from '@/shared/shell/channelCurve';
 import type { ErrorModel } from '@/shared/shell/errorModel';
-import type { FitOptions, Solved } from '@/shared/shell/fit';
+import type { FitOptions } from '@/shared/shell/fit';
 import type { FitExtra, FitResult, FitRing } from '@/shared/shell/fitResult';
 import { evaluation, frameAt } from '@/shared/shell/frame';
 import { informationCriteria } from '@/shared/shell/information';
 import { finite, report } from '@/shared/shell/intervals';
+import { priorChi2 } from '@/shared/shell/known';
 import type { MarkSet } from '@/shared/shell/markSet';
+import { naturalValues } from '@/shared/shell/naturalParameters';
 import { evaluate } from '@/shared/shell/residuals';
 import { fitRing } from '@/shared/shell/ring';
 import { median } from '@/shared/shell/robust';
 import { EXTRA_1, EXTRA_2, LN_W, THETA, V0 } from '@/shared/shell/shellModel';
+import type { Solved } from '@/shared/shell/solveShell';
 import { upperF } from '@/shared/shell/studentT';
 import { warningsOf } from '@/shared/shell/warnings';
 
 /** A solved problem as the JSON that is stored and shown. */
 export function describeFit(solved: Solved, options: FitOptions): FitResult {
   const { problem, all, live, outcome, errors, start, iterations } = solved;
-  const { model, marks, vSys } = problem;
+  const { model, marks, known } = problem;
   const { p } = outcome;
-  const held = vSys !== null && vSys.sigma === 0;
-  const prior = vSys !== null && vSys.sigma > 0 ? vSys : null;
-  const reported = report(model, outcome, errors, held);
+  const reported = report(model, outcome, errors, known);
   const { residual, variance } = errors.evaluation;
-  let chi2 = prior ? ((p[V0]! - prior.value) / prior.sigma) ** 2 : 0;
+  let chi2 = priorChi2(known, naturalValues(model, outcome));
   for (let i = 0; i < marks.count; i++) chi2 += residual[i]! ** 2 / variance[i]!;
-  const free = p.length - (held ? 1 : 0);
-  const dof = marks.count - free + (prior ? 1 : 0);
+  const free = p.length - known.filter((k) => k.fixed !== null).length;
+  const dof = marks.count - free + known.filter((k) => k.prior !== null).length;
   const { aicc, bic } = informationCriteria(chi2, variance, free);
 
   const w = Math.exp(p[LN_W]!);
@@ -121,11 +122,7 @@ function extraParameters(p: Float64Array, { covariance, tDof }: ErrorModel): Fit
 }
 
 /** Replace the interval ends by the bootstrap's percentiles, and say how the draws went. */
-export function withBootstrap(fit: FitResult, solved: Solved, options: FitOptions): FitResult {
-  const draws = options.bootstrap ?? 0;
-  const { problem, outcome, errors } = solved;
-  const drawn = bootstrap(problem, outcome, errors, { ...options, draws, seed: options.seed ?? 1 });
-  options.onDraws?.(drawn.values);
+export function withBootstrap(fit: FitResult, drawn: BootstrapDraws): FitResult {
   const { names } = fit.correlation;
   const parameters = { ...fit.parameters };
   const sd: Record<string, number | null> = {};
@@ -137,6 +134,7 @@ export function withBootstrap(fit: FitResult, solved: Solved, options: FitOption
     sd[name] = finite(found.sd);
   });
   const { failed, unbounded } = drawn;
+  const draws = drawn.values.length / names.length;
   const summary = { draws, sd, failed, vExpUnbounded: unbounded };
   return { ...fit, parameters, errorBars: 'bootstrap', extra: { ...fit.extra, bootstrap: summary } };
 }

@@ -1,5 +1,6 @@
 import { Problem } from '@/shared/contract/problem';
 import { DEGREE, unitVector } from '@/shared/sky/greatCircle';
+import type { Constraints } from '@/shared/shell/fitResult';
 import { centroid, type MarkSet } from '@/shared/shell/markSet';
 import { median } from '@/shared/shell/robust';
 import { parameterCount, type ModelName } from '@/shared/shell/shellModel';
@@ -17,8 +18,10 @@ export interface FitInput {
   marks: readonly SkyMark[];
   /** Full width of a channel, km/s, positive. */
   channelWidth: number;
-  /** What is known of v_sys, for the cap model: held at the value when sigma is 0 or absent, else a prior. km/s. */
+  /** A short way to say `constraints.vSys`: held at the value when sigma is 0 or absent, else a prior. km/s. */
   vSys?: { value: number; sigma?: number };
+  /** What is known of parameters beforehand, by name; the cap model needs v_sys held or under a prior. */
+  constraints?: Constraints;
   /** The marks are a rim traced from the brightness; see trace/README.md for what that adds to the errors. */
   traced?: TracedRim;
 }
@@ -39,7 +42,7 @@ const ONE_POINT = 1e-9;
  * @throws Problem invalid-input (field names the value), marks-insufficient, marks-degenerate
  */
 export function readMarks(input: FitInput, model: ModelName): MarkSet {
-  checkNumbers(input, model);
+  checkNumbers(input);
   const { marks, channelWidth, traced } = input;
   const velocity: number[] = [];
   for (const v of marks.map((m) => m.velocity).sort((a, b) => a - b)) {
@@ -69,7 +72,7 @@ export function readMarks(input: FitInput, model: ModelName): MarkSet {
   return set;
 }
 
-function checkNumbers({ marks, channelWidth, vSys, traced }: FitInput, model: ModelName): void {
+function checkNumbers({ marks, channelWidth, traced }: FitInput): void {
   const refuse = (field: string, detail: string): never => {
     throw new Problem('invalid-input', detail, { field });
   };
@@ -94,13 +97,6 @@ function checkNumbers({ marks, channelWidth, vSys, traced }: FitInput, model: Mo
   finite(channelWidth, 'channelWidth', 'The channel width');
   if (channelWidth <= 0)
     refuse('channelWidth', `The channel width must be positive; this one is ${channelWidth} km/s.`);
-  if (vSys !== undefined) {
-    finite(vSys.value, 'vSys.value', 'v_sys');
-    if (vSys.sigma !== undefined) finite(vSys.sigma, 'vSys.sigma', 'The error of v_sys');
-    if ((vSys.sigma ?? 0) < 0) refuse('vSys.sigma', 'The error of v_sys cannot be negative; 0 holds v_sys.');
-  } else if (model === 'cap') {
-    refuse('vSys', 'The cap model needs v_sys: give its value, and its error unless it is to be held.');
-  }
 }
 
 function checkEnough(marks: MarkSet, model: ModelName): void {

@@ -3,15 +3,18 @@ import { evaluation, recentred, type Evaluation, type Frame } from '@/shared/she
 import { boundsOf, intoBounds } from '@/shared/shell/bounds';
 import type { MarkSet } from '@/shared/shell/markSet';
 import { accumulate, factorise, hold, substitute } from '@/shared/shell/normalEquations';
+import { intoKnown, isFixed, priorChi2, type Known } from '@/shared/shell/known';
+import { naturalJacobian, naturalValues } from '@/shared/shell/naturalParameters';
+import { addPriors, axisOf, stepWithin } from '@/shared/shell/stepWithin';
 import { robustWeights } from '@/shared/shell/robust';
-import { LN_W, THETA, V0, X, Y, parameterCount, type ModelName } from '@/shared/shell/shellModel';
+import { LN_W, THETA, X, Y, parameterCount, type ModelName } from '@/shared/shell/shellModel';
 
-/** What is to be minimised: a model on marks, with v_sys free, under a prior, or held. */
+/** What is to be minimised: a model on marks, with what is known of its parameters beforehand. */
 export interface ShellProblem {
   model: ModelName;
   marks: MarkSet;
-  /** sigma 0: v_sys is held at the value. */
-  vSys: { value: number; sigma: number } | null;
+  /** As `readConstraints` gives it; empty where all parameters are free. */
+  known: readonly Known[];
 }
 
 /** A point in parameter space: offsets in p refer to the frame. */
@@ -32,7 +35,9 @@ export interface Outcome extends ShellState {
   iterations: number;
   /** The step fell below the tolerance, or the fit sits on a kink and gains nothing more. */
   settled: boolean;
-  /** The expansion velocity ran into the bound of its range. */
+  /** Why it stopped: the step fell below the tolerance, no step lowered chi2 any more, or the iterations were used up. */
+  reason: 'settled' | 'no-progress' | 'iterations';
+  /** The expansion velocity ran into the bound that the marks' span sets. */
   atBound: 'low' | 'high' | null;
 }
 
@@ -78,6 +83,8 @@ const ROBUST_LAST = 15;
 const ROBUST_SETTLED = 17;
 const KINK_GAIN = 1e-6;
 const FAILURES_ALLOWED = 12;
+/** A refused step that promised to lower chi2/dof by more than this, a tenth of an error, was no kink. */
+const NO_PROGRESS = 0.01;
 
 /**
  * Damped Gauss-Newton (Marquardt 1963) on residuals over their effective standard deviations, the deviations being
@@ -90,19 +97,19 @@ export function solve(
   ws = workspace(problem.marks, parameterCount(problem.model)),
 ): Outcome {
   const { robust = false, tolerance = 1e-6, maxIterations = 80 } = options;
-  const { model, marks, vSys } = problem;
+  const { model, marks, known } = problem;
   const { frame, p } = state;
   const size = p.length;
   const bounds = boundsOf(marks);
-  const held = vSys !== null && vSys.sigma === 0;
-  const priorWeight = vSys !== null && vSys.sigma > 0 ? 1 / vSys.sigma ** 2 : 0;
-  const priorValue = vSys?.value ?? 0;
-  if (held) p[V0] = priorValue;
+  const informed = known.length > 0;
+  const axis = axisOf(known);
+  intoKnown(model, known, frame, p);
 
   ws.robust.fill(1);
   evaluate(model, marks, frame, p, ws.now);
   let damping = 1e-4;
   let failures = 0;
+  let gainRefused = 0; // what the first of a row of refused steps promised
   let settled = false;
   let iteration = 0;
   for (; iteration < maxIterations && !settled; iteration++) {
@@ -115,14 +122,15 @@ export function solve(
     }
 
     let cost = accumulate(size, ws.now.residual, ws.now.jacobian, ws.weight, ws.A, ws.g);
-    const fromPrior = p[V0]! - priorValue;
-    cost += priorWeight * fromPrior * fromPrior;
-    ws.A[V0 * size + V0] = ws.A[V0 * size + V0]! + priorWeight;
-    ws.g[V0] = ws.g[V0]! + priorWeight * fromPrior;
-    if (held) hold(size, V0, ws.A, ws.g);
+    const natural = informed
+      ? { values: naturalValues(model, state), G: naturalJacobian(model, state, axis) }
+      : null;
+    if (natural) cost += addPriors(known, natural, ws.A, ws.g);
     if (p[LN_W]! >= bounds.lnWHigh && ws.g[LN_W]! < 0) hold(size, LN_W, ws.A, ws.g);
 
-    const solved = dampedStep(size, damping, ws);
+    const solved = natural
+      ? stepWithin(known, natural, ws.A, ws.g, damping, ws.step)
+      : dampedStep(size, damping, ws);
     let gain = 0; // expected fall of chi2 along the full step
     for (let a = 0; a < size; a++) gain -= ws.g[a]! * ws.step[a]!;
     let accepted = false;
@@ -130,14 +138,15 @@ export function solve(
       limitStep(p, ws.step);
       for (let a = 0; a < size; a++) ws.next[a] = p[a]! + ws.step[a]!;
       intoBounds(model, ws.next, bounds);
-      if (held) ws.next[V0] = priorValue;
+      intoKnown(model, known, frame, ws.next);
       evaluate(model, marks, frame, ws.next, ws.trial);
-      let trialCost = priorWeight * (ws.next[V0]! - priorValue) ** 2;
+      let trialCost = informed ? priorChi2(known, naturalValues(model, { frame, p: ws.next })) : 0;
       for (let i = 0; i < marks.count; i++) trialCost += ws.weight[i]! * ws.trial.residual[i]! ** 2;
       accepted = trialCost <= cost * (1 + 1e-9) + 1e-12;
     }
     const perDof = Math.max(1, cost / Math.max(marks.count - size, 1));
     failures = accepted ? 0 : failures + 1;
+    if (failures === 1) gainRefused = gain / perDof;
     if (!robust || iteration > ROBUST_SETTLED)
       settled = (accepted && gain < tolerance * tolerance * perDof) || failures > FAILURES_ALLOWED;
     if (iteration === maxIterations - 1) settled ||= gain < KINK_GAIN * perDof;
@@ -147,9 +156,16 @@ export function solve(
       [ws.now, ws.trial] = [ws.trial, ws.now];
     }
   }
-  const atBound =
-    p[LN_W]! >= bounds.lnWHigh - 1e-3 ? 'high' : p[LN_W]! <= bounds.lnWLow + 1e-3 ? 'low' : null;
-  return { frame, p, iterations: iteration, settled, atBound };
+  const atBound = isFixed(known, LN_W)
+    ? null
+    : p[LN_W]! >= bounds.lnWHigh - 1e-3
+      ? 'high'
+      : p[LN_W]! <= bounds.lnWLow + 1e-3
+        ? 'low'
+        : null;
+  const stuck = failures > FAILURES_ALLOWED && gainRefused > NO_PROGRESS;
+  const reason = !settled ? 'iterations' : stuck ? 'no-progress' : 'settled';
+  return { frame, p, iterations: iteration, settled, reason, atBound };
 }
 
 /**
@@ -163,7 +179,7 @@ export function solveAndRecentre(
   ws = workspace(problem.marks, parameterCount(problem.model)),
 ): Outcome {
   const rounds = options.robust ? (problem.model === 'drifting' ? 2 : 1) : 6;
-  let outcome: Outcome = { ...state, iterations: 0, settled: false, atBound: null };
+  let outcome: Outcome = { ...state, iterations: 0, settled: false, reason: 'iterations', atBound: null };
   for (let round = 0; round < rounds; round++) {
     const next = solve(problem, outcome, options, ws);
     const moved = Math.hypot(next.p[X]!, next.p[Y]!);

@@ -1,8 +1,9 @@
 import type { ErrorModel } from '@/shared/shell/errorModel';
+import type { Known } from '@/shared/shell/known';
 import type { ShellState } from '@/shared/shell/gaussNewton';
 import type { Parameter } from '@/shared/shell/fitResult';
 import { naturalJacobian, naturalValues, transformed } from '@/shared/shell/naturalParameters';
-import { LN_W, PARAMETER_NAMES, PARAMETER_UNITS, V0, type ModelName } from '@/shared/shell/shellModel';
+import { LN_W, PARAMETER_NAMES, PARAMETER_UNITS, type ModelName } from '@/shared/shell/shellModel';
 import { tHalfWidth } from '@/shared/shell/studentT';
 
 export interface Reported {
@@ -17,9 +18,14 @@ export interface Reported {
 /**
  * Values, standard errors and central 68 % intervals. An interval is value +- t se, with Student's t; the expansion
  * velocity's is symmetric in 1/v_exp^2, the quantity that rings measure nearly linearly, and open above where zero
- * lies inside it.
+ * lies inside it. A held parameter has no error; an interval ends at a bound it would pass.
  */
-export function report(model: ModelName, state: ShellState, errors: ErrorModel, held: boolean): Reported {
+export function report(
+  model: ModelName,
+  state: ShellState,
+  errors: ErrorModel,
+  known: readonly Known[] = [],
+): Reported {
   const size = state.p.length;
   const names = PARAMETER_NAMES[model];
   const values = naturalValues(model, state);
@@ -31,8 +37,9 @@ export function report(model: ModelName, state: ShellState, errors: ErrorModel, 
   names.forEach((name, a) => {
     const value = values[a]!;
     const unit = PARAMETER_UNITS[name] ?? '';
-    if (held && a === V0) {
-      parameters[name] = { value, se: 0, lo: value, hi: value, unit };
+    const given = known.find((k) => k.index === a);
+    if (given && given.fixed !== null) {
+      parameters[name] = { value: given.fixed, se: 0, lo: given.fixed, hi: given.fixed, unit };
       return;
     }
     const half = tHalfWidth(errors.tDof[a]!) * se[a]!;
@@ -42,6 +49,10 @@ export function report(model: ModelName, state: ShellState, errors: ErrorModel, 
       const inverseSquare = (2 * half) / value; // half-width of 1/v_exp^2 in units of itself
       lo = value / Math.sqrt(1 + inverseSquare);
       hi = inverseSquare < 1 ? value / Math.sqrt(1 - inverseSquare) : null;
+    }
+    if (given && given.period === null) {
+      lo = Math.max(lo, given.low);
+      hi = hi === null || hi > given.high ? finite(given.high) : hi;
     }
     parameters[name] = { value, se: finite(se[a]!), lo: finite(lo), hi: finite(hi), unit };
   });

@@ -3,6 +3,7 @@ import { join } from 'node:path';
 import { readMarks } from '@/shared/shell/fitInput';
 import { evaluation, frameAt } from '@/shared/shell/frame';
 import { solveAndRecentre, type ShellProblem } from '@/shared/shell/gaussNewton';
+import { readConstraints } from '@/shared/shell/constraints';
 import { errorModel } from '@/shared/shell/errorModel';
 import { naturalValues } from '@/shared/shell/naturalParameters';
 import { libraryRound, solveForRecord } from '@/shared/shell/recordFit';
@@ -24,7 +25,11 @@ describe.each<[string, ModelName]>([
 ])('%s', (name, model) => {
   const input = JSON.parse(readFileSync(join(folder, `${name}.json`), 'utf8'));
   const marks = readMarks(input, model);
-  const problem: ShellProblem = { model, marks, vSys: model === 'cap' ? input.vSys : null };
+  const problem: ShellProblem = {
+    model,
+    marks,
+    known: readConstraints(model, {}, model === 'cap' ? input.vSys : undefined),
+  };
   const fresh = () => {
     const start = startValues(marks);
     const p = new Float64Array(parameterCount(model));

@@ -1,5 +1,6 @@
 import { levenbergMarquardt } from 'ml-levenberg-marquardt';
 import { boundsOf, intoBounds } from '@/shared/shell/bounds';
+import { reducedMatrix, reduction } from '@/shared/shell/constrainedStep';
 import { evaluation, type Evaluation } from '@/shared/shell/frame';
 import {
   solveAndRecentre,
@@ -7,9 +8,11 @@ import {
   type ShellProblem,
   type ShellState,
 } from '@/shared/shell/gaussNewton';
+import { difference, intoKnown } from '@/shared/shell/known';
+import { naturalJacobian, naturalValues } from '@/shared/shell/naturalParameters';
 import { accumulate } from '@/shared/shell/normalEquations';
 import { evaluate } from '@/shared/shell/residuals';
-import { V0 } from '@/shared/shell/shellModel';
+import { addPriors, axisOf, fixedConditions, gradient } from '@/shared/shell/stepWithin';
 
 const ROUNDS = 8;
 const STEPS_A_ROUND = 8;
@@ -21,9 +24,9 @@ const SETTLED = 1e-4;
  * a last polish to 1e-6 of a standard error, which also takes over where the library gives up.
  */
 export function solveForRecord(problem: ShellProblem, state: ShellState): Outcome {
-  const { vSys, marks } = problem;
-  const { p } = state;
-  if (vSys !== null && vSys.sigma === 0) p[V0] = vSys.value;
+  const { model, marks, known } = problem;
+  const { frame, p } = state;
+  intoKnown(model, known, frame, p);
   const at = evaluation(marks, p.length);
   let rounds = 0;
   for (let moved = Infinity; rounds < ROUNDS && moved > SETTLED; rounds++)
@@ -42,54 +45,75 @@ export function solveForRecord(problem: ShellProblem, state: ShellState): Outcom
  * @returns the largest move in those units; 0 where the equations are singular and nothing was moved
  */
 export function libraryRound(problem: ShellProblem, { frame, p }: ShellState, at: Evaluation): number {
-  const { model, marks, vSys } = problem;
+  const { model, marks, known } = problem;
   const size = p.length;
-  const held = vSys !== null && vSys.sigma === 0;
-  const prior = vSys !== null && vSys.sigma > 0 ? vSys : null;
-  const free = Array.from({ length: size }, (_, a) => a).filter((a) => !(held && a === V0));
+  const axis = axisOf(known);
   evaluate(model, marks, frame, p, at);
   const weight = at.variance.map((v) => 1 / v);
   const perError = weight.map(Math.sqrt);
   const A = new Float64Array(size * size);
-  accumulate(size, at.residual, at.jacobian, weight, A, new Float64Array(size));
-  if (prior) A[V0 * size + V0] = A[V0 * size + V0]! + 1 / prior.sigma ** 2;
-  const unit = free.map((a) => 1 / Math.sqrt(A[a * size + a]!));
+  const g = new Float64Array(size);
+  accumulate(size, at.residual, at.jacobian, weight, A, g);
+  const natural = () => {
+    const state = { frame, p };
+    return { values: naturalValues(model, state), G: naturalJacobian(model, state, axis) };
+  };
+  const here = natural();
+  addPriors(known, here, A, g);
+  const scale = g.map((_, a) => 1 / Math.sqrt(A[a * size + a]! + 1e-300));
+  const left = reduction(size, fixedConditions(known, here), scale);
+  const n = left.free.length;
+  const M = reducedMatrix(size, left, A);
+  const unit = left.free.map((_, f) => 1 / Math.sqrt(M[f * n + f]!));
   if (!unit.every(Number.isFinite)) return 0;
 
   const origin = Float64Array.from(p);
   const bounds = boundsOf(marks);
   const place = (scaled: number[]) => {
-    free.forEach((a, i) => (p[a] = origin[a]! + unit[i]! * scaled[i]!));
+    for (let a = 0; a < size; a++)
+      p[a] = scaled.reduce((sum, s, f) => sum + left.T[a * n + f]! * unit[f]! * s, origin[a]!);
     intoBounds(model, p, bounds);
-    if (held) p[V0] = vSys.value;
+    intoKnown(model, known, frame, p);
     evaluate(model, marks, frame, p, at);
   };
-  const points = marks.count + (prior === null ? 0 : 1); // a prior is one more residual
+  const priors = known.filter((k) => k.prior !== null); // each is one more residual
+  const points = marks.count + priors.length;
   const data = { x: Array.from({ length: points }, (_, i) => i), y: new Float64Array(points) };
   const residuals = (scaled: number[]) => {
     place(scaled);
     const r = at.residual.map((value, i) => value * perError[i]!);
-    const fromPrior = prior ? (p[V0]! - prior.value) / prior.sigma : 0;
-    return (i: number) => (i < marks.count ? r[i]! : fromPrior);
+    const values = naturalValues(model, { frame, p });
+    const ofPrior = priors.map((k) => difference(k, values[k.index]!, k.prior!.mean) / k.prior!.sd);
+    return (i: number) => (i < marks.count ? r[i]! : ofPrior[i - marks.count]!);
   };
   const derivatives = (scaled: number[]) => {
     place(scaled);
-    const rows = Float64Array.from(at.jacobian);
+    const rows = new Float64Array(points * size);
+    at.jacobian.forEach((value, i) => (rows[i] = value * perError[Math.floor(i / size)]!));
+    const now = natural();
+    priors.forEach((k, i) =>
+      rows.set(
+        gradient(now, k.index).map((v) => v / k.prior!.sd),
+        (marks.count + i) * size,
+      ),
+    );
     return (i: number) =>
-      i < marks.count
-        ? free.map((a, c) => rows[i * size + a]! * unit[c]! * perError[i]!)
-        : free.map((a, c) => (a === V0 ? unit[c]! / prior!.sigma : 0));
+      unit.map((u, f) => {
+        let sum = 0;
+        for (let a = 0; a < size; a++) sum += rows[i * size + a]! * left.T[a * n + f]!;
+        return sum * u;
+      });
   };
   let best: number[];
   try {
     best = levenbergMarquardt(data, residuals, {
-      initialValues: free.map(() => 0),
+      initialValues: unit.map(() => 0),
       maxIterations: STEPS_A_ROUND,
       errorTolerance: 0,
       jacobianFunction: derivatives,
     }).parameterValues;
   } catch {
-    best = free.map(() => 0); // its only complaint here is a singular matrix; the polish damps each parameter apart
+    best = unit.map(() => 0); // its only complaint here is a singular matrix; the polish damps each parameter apart
   }
   place(best);
   return Math.max(...best.map(Math.abs));
