@@ -11,8 +11,14 @@ import {
 } from '@/shared/shell/trace/radialProfile';
 import type { TracePlan } from '@/shared/shell/trace/tracePlan';
 
-/** A sector with how far its rim stands above the noise of its profile, by which the trace is called faint. */
+/** A sector with the contrast of its rim (findRim.ts), by which the trace is called faint. */
 export type SectorTrace = TracedSector & { contrast: number | null };
+
+/** What of a plan one channel needs: a ring to look around, and how sharp and how noisy the picture is. */
+export type ChannelPlan = Pick<
+  TracePlan,
+  'shape' | 'wcs' | 'ring' | 'edge' | 'noise' | 'beamDeg' | 'pixelDeg'
+>;
 
 /** The window on either side of the predicted radius: this share of it, and at least so many beams. */
 const WINDOW = 0.35;
@@ -28,7 +34,7 @@ const FWHM = 2 * Math.sqrt(2 * Math.LN2);
  * @returns one entry a sector, found or rejected with the reason
  */
 export function traceChannel(
-  plan: TracePlan,
+  plan: ChannelPlan,
   channel: number,
   values: Float32Array | Float64Array,
 ): SectorTrace[] {
@@ -50,7 +56,7 @@ export function traceChannel(
 type Finding = Omit<SectorTrace, 'channel' | 'velocity' | 'azimuth' | 'predicted'>;
 
 function traceSector(
-  plan: TracePlan,
+  plan: ChannelPlan,
   plane: Plane,
   centre: LonLat,
   sector: number,
