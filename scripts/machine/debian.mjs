@@ -31,12 +31,10 @@ export const needs = {
   },
   numpy: {
     name: 'numpy for Python 3',
-    present: () =>
-      ['/usr/bin/python3', 'python3'].some(
-        (python) => spawnSync(python, ['-c', 'import numpy'], { stdio: 'ignore' }).status === 0,
-      ),
+    // Debian's own, so that figures compare between machines: another Python may carry a numpy that sorts otherwise
+    present: () => spawnSync('/usr/bin/python3', ['-c', 'import numpy'], { stdio: 'ignore' }).status === 0,
     packages: ['python3-numpy'],
-    otherwise: 'install it for the python3 that is found first',
+    otherwise: 'install it for /usr/bin/python3',
   },
 };
 
