@@ -1,5 +1,5 @@
 import type { FitOutcome } from '@/shared/contract/fits';
-import { byLargest, chi2PerDof, isDone, modelOf, ringsOf } from './fitFacts';
+import { byLargest, chi2PerDof, isDone, markPoints, modelOf, ringsOf, roundRadius } from './fitFacts';
 
 const p = (value: number) => ({ value, se: 0.1, lo: value - 0.1, hi: value + 0.1, unit: 'km/s' });
 const fit = {
@@ -35,4 +35,20 @@ test('a fit without degrees of freedom has no quality', () => {
   expect(chi2PerDof({ chi2: 50, dof: 40 })).toBe(1.25);
   expect(chi2PerDof({ chi2: 0, dof: 0 })).toBeNull();
   expect(isDone(undefined)).toBe(false);
+});
+
+test('the circle that stands for an ellipse lies between its semi-axes, and is the circle itself for a round one', () => {
+  expect(roundRadius(2, 1)).toBeCloseTo(2, 12);
+  expect(roundRadius(2, undefined)).toBe(2);
+  expect(roundRadius(2, 0.8)).toBeLessThan(2);
+  expect(roundRadius(2, 0.8)).toBeGreaterThan(1.6);
+});
+
+test('a mark lies off the model ring of its channel by its residual; one that was set aside is no point', () => {
+  const mark = (velocity: number) => ({ velocity });
+  const frozen = { cubeId: 'c', channelWidth: 1, marks: [mark(-45), mark(-45), mark(-44)] } as never;
+  expect(markPoints(fit, frozen)).toEqual([
+    { velocity: -45, radius: 1.91 },
+    { velocity: -44, radius: 2.1 },
+  ]);
 });

@@ -96,6 +96,10 @@ const symbols: Record<string, { main: string; sub?: string; name: string }> = {
   theta: { main: 'Θ', name: 'Radius Θ' },
   vSys: { main: 'v', sub: 'sys', name: 'v sys' },
   vExp: { main: 'v', sub: 'exp', name: 'v exp' },
+  driftL: { main: 'drift', sub: 'l', name: 'Drift in l' },
+  driftB: { main: 'drift', sub: 'b', name: 'Drift in b' },
+  axisRatio: { main: 'q', name: 'Axis ratio q' },
+  positionAngle: { main: 'PA', name: 'Position angle' },
   radius: { main: 'R', name: 'Radius R' },
   age: { main: 'age', name: 'Kinematic age' },
 };
