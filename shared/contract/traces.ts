@@ -32,6 +32,7 @@ export const TraceOutcome = z.object({
   seenByChannel: z.array(z.object({ channel: z.number().int(), velocity: z.number(), seen: z.number() })),
   noise: z.number().describe("noise of a channel used, in the cube's unit"),
   beamDeg: z.number().describe('beam used, degrees'),
+  beamAssumed: z.literal(true).optional().describe('the header gives no beam: three pixels were taken'),
   faint: z.boolean().describe('the rim stands little above the noise: wider error bars'),
 });
 
@@ -47,6 +48,7 @@ export const Trace = z
     cubeId: Id,
     edge: z.enum(EDGES),
     status: z.enum(FIT_STATUS),
+    progress: z.number().min(0).max(1).nullable().describe('while it runs'),
     problem: ProblemSchema.nullable(),
     readingId: Id.nullable().describe('the reading made of the rim that was found, once done'),
     createdBy: z.object({ id: Id, name: z.string() }).nullable(),

@@ -1,14 +1,25 @@
+import { MAD_TO_SD, median } from '@/shared/shell/robust';
 import { withoutTrend } from '@/shared/shell/trace/radialProfile';
 
-/** The rim in one profile, or why there is none. Radii in samples from the beginning of the profile. */
-export type RimInProfile = { at: number; curvature: number; contrast: number } | 'faint' | 'at-end';
+/** The rim in one profile, or why there is none. Lengths in samples of the profile, from its beginning. */
+export type RimInProfile = FoundRim | 'faint' | 'at-end';
+
+export interface FoundRim {
+  at: number;
+  /** Second difference at the crest of the profile (ridge) or of its slope (inner); 0 where it does not bend. */
+  curvature: number;
+  /** Height of the ridge over the scatter of the profile away from it, or over its noise if that is larger. */
+  contrast: number;
+}
 
 /** A crest stands this many profile noises above the lowest point on each side. */
 const STANDS_OUT = 3;
 /** Samples at either end on which a crest does not count: the window may have cut it off. */
 const END = 2;
+/** What lies further from a crest than this many beams is its surroundings, if so many samples do. */
+const AWAY = 1.5;
+const LEAST_AWAY = 8;
 
-/** Height of the crest of a profile, its place by a parabola through three samples, and its curvature there. */
 export interface ProfileOptions {
   edge: 'ridge' | 'inner';
   /** Noise of the profile. */
@@ -30,11 +41,19 @@ export function findRim(profile: Float64Array, { edge, noise, beam }: ProfileOpt
   if (top < END || top > t.length - 1 - END) return 'at-end';
   const height = t[top]! - Math.max(lowest(t, 0, top), lowest(t, top, t.length - 1));
   if (height < STANDS_OUT * noise) return 'faint';
-  const contrast = height / noise;
+  const contrast = height / Math.max(noise, scatterAway(t, top, beam));
   if (edge === 'ridge') return { ...vertex(t, top), contrast };
   const rise = gradient(profile);
   const steepest = highest(rise, Math.max(top - Math.round(2 * beam), 0), top);
   return { ...vertex(rise, steepest), contrast };
+}
+
+/** Robust scatter of the samples away from the crest; 0 where the window holds too few. */
+function scatterAway(t: Float64Array, top: number, beam: number): number {
+  const away = t.filter((_, i) => Math.abs(i - top) > AWAY * beam);
+  if (away.length < LEAST_AWAY) return 0;
+  const middle = median(away);
+  return MAD_TO_SD * median(away.map((value) => Math.abs(value - middle)));
 }
 
 /** The crest of a parabola through a sample and its neighbours; the sample itself where they do not bend. */
