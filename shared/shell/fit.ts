@@ -1,5 +1,6 @@
 import { Problem } from '@/shared/contract/problem';
 import { bootstrap, type BootstrapDraws } from '@/shared/shell/bootstrap';
+import type { RingParameters } from '@/shared/shell/channelCurve';
 import { readConstraints } from '@/shared/shell/constraints';
 import { describeFit, withBootstrap } from '@/shared/shell/describeFit';
 import { readMarks, type FitInput } from '@/shared/shell/fitInput';
@@ -19,6 +20,8 @@ export interface FitOptions {
   seed?: number;
   /** Kept in the provenance. */
   codeVersion?: string;
+  /** Begin here, for instance with what a person set by hand, instead of with linear least squares: degrees, km/s. */
+  start?: RingParameters;
   /** Receives the draws, one row of parameters each, in the order of `correlation.names`. */
   onDraws?: (values: Float64Array) => void;
   /** Called with 0 … 1 while the bootstrap runs; what it throws ends the fit. */
@@ -87,7 +90,7 @@ export function finishFit(solved: Solved, options: FitOptions, draws: BootstrapD
 
 const MOST_DRAWS = 100_000;
 
-function checkOptions({ model, bootstrap: draws, seed }: FitOptions): void {
+function checkOptions({ model, bootstrap: draws, seed, start }: FitOptions): void {
   const refuse = (field: string, detail: string): never => {
     throw new Problem('invalid-input', detail, { field });
   };
@@ -97,4 +100,12 @@ function checkOptions({ model, bootstrap: draws, seed }: FitOptions): void {
     refuse('bootstrap', `The number of bootstrap draws is a whole number from 0 to ${MOST_DRAWS}.`);
   if (seed !== undefined && !(Number.isInteger(seed) && seed >= 0 && seed <= 0xffffffff))
     refuse('seed', 'The seed is a whole number from 0 to 4294967295.');
+  if (
+    start &&
+    !(start.theta > 0 && start.theta < 90 && start.vExp > 0 && Number.isFinite(start.vSys + start.vExp))
+  )
+    refuse(
+      'start',
+      'A start needs a radius between 0 and 90 degrees, a velocity, and an expansion above 0 km/s.',
+    );
 }

@@ -28,7 +28,7 @@ import {
   parameterCount,
   type ModelName,
 } from '@/shared/shell/shellModel';
-import { startValues, type StartValues } from '@/shared/shell/start';
+import { startedFrom, startValues, type StartValues } from '@/shared/shell/start';
 import { axisOf } from '@/shared/shell/stepWithin';
 
 /** A solved problem with its errors: plain data, which a thread can be given. */
@@ -55,13 +55,14 @@ export function solveShell(
   marks: MarkSet,
   model: ModelName,
   known: readonly Known[],
-  options: Pick<FitOptions, 'setAside' | 'optimiser'>,
+  options: Pick<FitOptions, 'setAside' | 'optimiser' | 'start'>,
 ): Solved {
-  const start = startValues(marks);
+  const linear = startValues(marks);
+  const start = options.start ? startedFrom(linear, options.start) : linear;
   const stated = marks.sigma2.every((s) => s > 0);
   let all = stated
     ? marks
-    : { ...marks, sigma2: marks.sigma2.map(() => (START_SIGMA * start.p[THETA]!) ** 2) };
+    : { ...marks, sigma2: marks.sigma2.map(() => (START_SIGMA * linear.p[THETA]!) ** 2) };
   let iterations = 0;
   for (let round = 0; ; round++) {
     const first = robustPass({ model, marks: all, known }, start);

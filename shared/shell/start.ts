@@ -1,4 +1,5 @@
-import { eastNorth, type Vector } from '@/shared/sky/greatCircle';
+import { DEGREE, eastNorth, type Vector } from '@/shared/sky/greatCircle';
+import type { RingParameters } from '@/shared/shell/channelCurve';
 import { centroid, normalised, type MarkSet } from '@/shared/shell/markSet';
 import { accumulate, factorise, substitute } from '@/shared/shell/normalEquations';
 import { LN_W, THETA, V0 } from '@/shared/shell/shellModel';
@@ -63,6 +64,13 @@ export function startValues(marks: MarkSet): StartValues {
   p[V0] = mean + half * z0;
   p[LN_W] = Math.log(half * Math.sqrt(Math.max(-sine2 / c, 0.05)));
   return { centre, p, wrongCurvature };
+}
+
+/** The same centre with radius and velocities that were given: degrees, km/s. */
+export function startedFrom(start: StartValues, given: RingParameters): StartValues {
+  const p = Float64Array.from(start.p);
+  p.set([given.theta * DEGREE, given.vSys, Math.log(given.vExp)], THETA);
+  return { ...start, p, wrongCurvature: false };
 }
 
 /** Columns are scaled to unit mean square and a trace of ridge keeps degenerate sets solvable. */
