@@ -76,6 +76,7 @@ const unbounded = (index: number, period: number | null): Known => ({
   low: -Infinity,
   high: Infinity,
   period,
+  given: {},
 });
 
 function readOne(name: string, index: number, constraint: Constraint): Known | null {
@@ -89,6 +90,7 @@ function readOne(name: string, index: number, constraint: Constraint): Known | n
   if (hasFixed && (hasPrior || hasLow || hasHigh))
     refuse(path, `${capital(word)} cannot be fixed and free within limits at once. Keep one of the two.`);
   const known = unbounded(index, PERIOD[name] ?? null);
+  known.given = constraint;
   if (hasFixed) known.fixed = possible(name, fixed, `${path}.fixed`);
   if (hasPrior) {
     const mean = finite(prior!.mean, `${path}.prior.mean`, `The mean of the prior on ${word}`);

@@ -5,10 +5,18 @@ import { channelCurve, curveTable } from '@/shared/shell/channelCurve';
 import type { ErrorModel } from '@/shared/shell/errorModel';
 import type { FitOptions } from '@/shared/shell/fit';
 import type { FitExtra, FitResult, FitRing } from '@/shared/shell/fitResult';
+import {
+  boundsInWords,
+  convergenceOf,
+  priorShare,
+  PRIOR_LEADS,
+  withConstraints,
+} from '@/shared/shell/findings';
+import { PARAMETER_WORDS } from '@/shared/shell/constraints';
 import { evaluation, frameAt } from '@/shared/shell/frame';
 import { informationCriteria } from '@/shared/shell/information';
 import { finite, report } from '@/shared/shell/intervals';
-import { priorChi2 } from '@/shared/shell/known';
+import { isInformed, priorChi2, reached } from '@/shared/shell/known';
 import type { MarkSet } from '@/shared/shell/markSet';
 import { naturalValues } from '@/shared/shell/naturalParameters';
 import { evaluate } from '@/shared/shell/residuals';
@@ -26,19 +34,29 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
   const { p } = outcome;
   const reported = report(model, outcome, errors, known);
   const { residual, variance } = errors.evaluation;
-  let chi2 = priorChi2(known, naturalValues(model, outcome));
+  const values = naturalValues(model, outcome);
+  let chi2 = priorChi2(known, values);
   for (let i = 0; i < marks.count; i++) chi2 += residual[i]! ** 2 / variance[i]!;
   const free = p.length - known.filter((k) => k.fixed !== null).length;
   const dof = marks.count - free + known.filter((k) => k.prior !== null).length;
   const { aicc, bic } = informationCriteria(chi2, variance, free);
 
+  const names = [...reported.names];
   const w = Math.exp(p[LN_W]!);
   const seLnVExp = Math.sqrt(errors.covariance[LN_W * p.length + LN_W]!);
   const setAside = live.flatMap((isLive, i) => (isLive ? [] : [i]));
   const arcDeg = arcCovered(marks, outcome.frame.origin);
   const riseSigma = riseAboveLine(marks);
+  const atBounds = reached(known, values);
   const warnings = warningsOf({
-    model,
+    startSettled: solved.startSettled,
+    stuck: outcome.reason === 'no-progress',
+    atBounds: boundsInWords(model, outcome, atBounds),
+    ledByPrior: known
+      .filter((k) => priorShare(k, reported.plain, p.length) > PRIOR_LEADS)
+      .map((k) => PARAMETER_WORDS[names[k.index]!]!),
+    vSysKnown: isInformed(known, V0),
+    channelInVExp: all.width / w,
     settled: outcome.settled,
     unconstrained: outcome.atBound === 'high',
     channels: marks.channels,
@@ -51,7 +69,6 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
     chi2PerDof: chi2 / Math.max(dof, 1),
   });
   const { lon, lat } = lonLatOf(start.centre);
-  const names = [...reported.names];
   const size = names.length;
   const named = (value: (a: number) => number) =>
     Object.fromEntries(names.map((name, a) => [name, value(a)]));
@@ -74,11 +91,12 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
     channels: marks.channels,
     sigmaUsedDeg: Math.sqrt(median(all.sigma2)) / DEGREE,
     settled: outcome.settled,
+    convergence: convergenceOf(outcome, atBounds.length > 0),
     ...(size > EXTRA_1 ? { extraParameters: extraParameters(p, errors) } : {}),
   };
   return {
     model,
-    parameters: reported.parameters,
+    parameters: withConstraints(reported.parameters, names, known, atBounds),
     correlation: { names, matrix: reported.correlation.map((row) => row.map(finite)) },
     chi2,
     dof,

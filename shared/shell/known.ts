@@ -1,4 +1,5 @@
 import { EXTRA_1, EXTRA_2, type ModelName } from '@/shared/shell/shellModel';
+import type { Constraint } from '@/shared/shell/fitResult';
 import type { Frame } from '@/shared/shell/frame';
 import { internalValues, naturalValues } from '@/shared/shell/naturalParameters';
 
@@ -13,6 +14,8 @@ export interface Known {
   high: number;
   /** 360 for a longitude, 180 for the direction of an axis: values a period apart are the same. */
   period: number | null;
+  /** As it was said. */
+  given: Constraint;
 }
 
 export const isFixed = (known: readonly Known[], index: number): boolean =>
@@ -75,4 +78,21 @@ function projectedRatio(ratio: number, turn: number): number {
   const e = (1 - ratio * ratio) / (1 + ratio * ratio);
   const left = Math.max(e * Math.cos((2 * turn * Math.PI) / 180), 0);
   return Math.sqrt((1 - left) / (1 + left));
+}
+
+/** Bounds reached by a fit, by parameter: a value within rounding of a bound that was set. */
+export function reached(
+  known: readonly Known[],
+  values: Float64Array,
+): { known: Known; side: 'low' | 'high' }[] {
+  const out: { known: Known; side: 'low' | 'high' }[] = [];
+  for (const k of known) {
+    if (k.fixed !== null) continue;
+    const value = unwrapped(k, values[k.index]!);
+    const close = (bound: number) =>
+      Number.isFinite(bound) && Math.abs(value - bound) <= 1e-9 * Math.max(1, Math.abs(bound));
+    if (close(k.low)) out.push({ known: k, side: 'low' });
+    else if (close(k.high)) out.push({ known: k, side: 'high' });
+  }
+  return out;
 }

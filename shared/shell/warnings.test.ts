@@ -1,8 +1,13 @@
 import { warningsOf, type Findings } from '@/shared/shell/warnings';
 
 const fine: Findings = {
-  model: 'sphere',
   settled: true,
+  startSettled: true,
+  stuck: false,
+  atBounds: [],
+  ledByPrior: [],
+  vSysKnown: false,
+  channelInVExp: 0.1,
   unconstrained: false,
   channels: 8,
   marks: 80,
@@ -25,14 +30,35 @@ test.each<[string, Partial<Findings>, string[], RegExp]>([
   ['v_exp at its bound', { unconstrained: true, settled: false }, ['vexp-unconstrained'], /lower end/],
   ['marks on one side', { reach: { low: 0.3, high: 0.9 } }, ['one-sided'], /only 0 % as far/],
   ['marks mostly on one side', { reach: { low: -0.1, high: 0.9 } }, ['one-sided'], /only 11 % as far/],
-  ['a cap is one-sided by nature', { reach: { low: -0.9, high: -0.1 }, model: 'cap' }, [], /^$/],
+  [
+    'one side is enough where v_sys is known',
+    { reach: { low: -0.9, high: -0.1 }, vSysKnown: true },
+    [],
+    /^$/,
+  ],
   ['a short arc', { riseSigma: 2, arcDeg: 62 }, ['arc-too-short'], /62 degrees.*weakly measured/],
   ['an arc that is a line', { riseSigma: -0.5 }, ['arc-too-short'], /0\.0 times.*not measured: do not adopt/],
   ['one mark set aside', { setAside: 1 }, ['outliers'], /^1 of 80 marks lies/],
   ['marks set aside', { setAside: 3 }, ['outliers'], /^3 of 80 marks lie /],
   ['a fifth set aside', { setAside: 17 }, ['outliers', 'poor-fit'], /marks lie/],
   ['scatter over twice the stated', { chi2PerDof: 4.41 }, ['poor-fit'], /2\.1 times/],
-  ['no start settled', { settled: false }, ['start-failed'], /did not settle/],
+  ['no start settled', { settled: false, startSettled: false }, ['start-failed'], /did not settle/],
+  ['steps used up', { settled: false }, ['not-converged'], /used up its steps/],
+  ['a dead end', { stuck: true }, ['not-converged'], /no step brings it closer/],
+  [
+    'a bound reached',
+    { atBounds: [{ what: 'v_exp', side: 'upper', bound: '12 km/s' }] },
+    ['at-bound'],
+    /v_exp at its upper bound, 12 km\/s/,
+  ],
+  [
+    'a prior that says it all',
+    { ledByPrior: ['v_sys', 'the radius'] },
+    ['prior-dominated'],
+    /v_sys and the radius/,
+  ],
+  ['channels over half of v_exp', { channelInVExp: 0.6 }, ['coarse-channels'], /0\.6 times as wide/],
+  ['channels of half v_exp', { channelInVExp: 0.5 }, [], /^$/],
 ])('%s', (_what, change, codes, said) => {
   const warnings = warningsOf({ ...fine, ...change });
   expect(warnings.map((w) => w.code)).toEqual(codes);
