@@ -184,11 +184,14 @@ function placer({ model, marks }: ShellProblem, { frame, p }: ShellState, errors
   };
 }
 
+const ONE_SIGMA_TAIL = 0.1587;
+
 /**
  * The 16th and 84th percentiles of one parameter over the draws (the nearest draw), angles unwrapped about the fitted
  * value first; half their distance is the standard deviation. Infinite where that share of the draws is unbounded.
  *
  * @param period 360 for a longitude, 180 for the direction of an axis
+ * @param tail share of the draws below lo and above hi, if others than those percentiles are wanted
  */
 export function percentiles(
   values: Float64Array,
@@ -196,6 +199,7 @@ export function percentiles(
   column: number,
   about: number,
   period?: number,
+  tail = ONE_SIGMA_TAIL,
 ): { lo: number; hi: number; sd: number } {
   const draws = values.length / size;
   const sorted = Float64Array.from({ length: draws }, (_, d) => {
@@ -203,6 +207,6 @@ export function percentiles(
     return period === undefined ? value : value - period * Math.round((value - about) / period);
   }).sort();
   const at = (share: number) => sorted[Math.round(share * (draws - 1))]!;
-  const [lo, hi] = [at(0.1587), at(0.8413)];
+  const [lo, hi] = [at(tail), at(1 - tail)];
   return { lo, hi, sd: 0.5 * (hi - lo) };
 }

@@ -43,13 +43,7 @@ export function report(
       return;
     }
     const half = tHalfWidth(errors.tDof[a]!) * se[a]!;
-    let lo = value - half;
-    let hi: number | null = value + half;
-    if (a === LN_W) {
-      const inverseSquare = (2 * half) / value; // half-width of 1/v_exp^2 in units of itself
-      lo = value / Math.sqrt(1 + inverseSquare);
-      hi = inverseSquare < 1 ? value / Math.sqrt(1 - inverseSquare) : null;
-    }
+    let { lo, hi } = intervalOf(a, value, half);
     if (given && given.period === null) {
       lo = Math.max(lo, given.low);
       hi = hi === null || hi > given.high ? finite(given.high) : hi;
@@ -64,6 +58,16 @@ export function report(
     }),
   );
   return { names, parameters, covariance, plain, correlation };
+}
+
+/** The interval of parameter `a` whose half-width, were it symmetric, is `half`; hi is null where there is no upper end. */
+export function intervalOf(a: number, value: number, half: number): { lo: number; hi: number | null } {
+  if (a !== LN_W) return { lo: value - half, hi: value + half };
+  const inverseSquare = (2 * half) / value; // half-width of 1/v_exp^2 in units of itself
+  return {
+    lo: value / Math.sqrt(1 + inverseSquare),
+    hi: inverseSquare < 1 ? value / Math.sqrt(1 - inverseSquare) : null,
+  };
 }
 
 /** The number where JSON can carry it, else null. */
