@@ -1,15 +1,16 @@
-import { useRef } from 'react';
 import { View } from 'react-native';
 import { coordinateDigits, degrees } from '@/components/cube/words';
 import { degreesPerPixel } from '@/components/cube/Readout';
 import { useSession } from '@/components/cube/session';
 import { IconButton } from '@/components/ui/Button';
+import { CheckBox } from '@/components/ui/CheckBox';
 import { count } from '@/components/ui/format';
 import { SectionTitle } from '@/components/ui/Panel';
 import { Press, type PressState } from '@/components/ui/Press';
 import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { hairline, space, touch } from '@/components/ui/tokens';
+import type { PlacedMark } from '@/hooks/reading/placedMark';
 import { velocityLabel } from '@/shared/image/velocityDigits';
 
 const ARROWS: Record<string, readonly [number, number]> = {
@@ -18,41 +19,38 @@ const ARROWS: Record<string, readonly [number, number]> = {
   ArrowUp: [0, 1],
   ArrowDown: [0, -1],
 };
-/** Nudges this close together are one step of undo. */
-const ONE_STEP_MS = 800;
+
+const PLACED = { hand: 'by hand', suggested: 'suggested', ring: 'from a ring' } as const;
+
+/** What is said of a mark besides its place: sure or not, its error, how it came to be, its note. */
+function aboutMark(mark: PlacedMark, digits: number): string[] {
+  return [
+    mark.unsure ? 'unsure' : 'sure',
+    ...(mark.sigma === undefined ? [] : [`± ${degrees(mark.sigma, digits + 1)}`]),
+    PLACED[mark.placed ?? 'hand'],
+    ...(mark.note ? [mark.note] : []),
+  ];
+}
 
 /** The marks of the channel shown as a list: the map's marks for the keyboard and for the ear. */
 export function MarkList() {
-  const { marks, channel, velocity, selected, select, moveMark, removeMarks, marking, wcs, axes } =
-    useSession();
+  const { marks, channel, velocity, chosen, select, nudge, removeMarks, canMark, wcs, axes } = useSession();
   const { color } = useTheme();
-  const burst = useRef({ name: '', time: 0 });
   const own = marks.filter((m) => m.channel === channel);
   const perPixel = degreesPerPixel(axes, wcs);
   const digits = coordinateDigits(perPixel);
-  // A tenth of the beam, or half a pixel where the file does not say how wide it is.
-  const step = axes.beam ? Math.max(axes.beam.major / 10 / perPixel, 0.05) : 0.5;
   const title = `Marks at ${velocityLabel(velocity, axes.spectral.channelWidth)} km/s`;
   if (own.length === 0) return null;
 
   const onKeyDown =
-    (id: string, x: number, y: number) =>
-    (e: {
-      key: string;
-      shiftKey: boolean;
-      timeStamp: number;
-      preventDefault(): void;
-      stopPropagation(): void;
-    }) => {
+    (id: string) =>
+    (e: { key: string; shiftKey: boolean; preventDefault(): void; stopPropagation(): void }) => {
       const arrow = ARROWS[e.key];
-      if (!marking || (!arrow && e.key !== 'Delete' && e.key !== 'Backspace')) return;
+      if (!canMark || (!arrow && e.key !== 'Delete' && e.key !== 'Backspace')) return;
       e.preventDefault();
       e.stopPropagation();
-      if (!arrow) return removeMarks([id]);
-      const again = burst.current.name.startsWith(id) && e.timeStamp - burst.current.time < ONE_STEP_MS;
-      burst.current = { name: again ? burst.current.name : `${id} ${e.timeStamp}`, time: e.timeStamp };
-      const by = step * (e.shiftKey ? 10 : 1);
-      moveMark(id, { x: x + arrow[0] * by, y: y + arrow[1] * by }, `nudge ${burst.current.name}`);
+      if (arrow) nudge(arrow[0], arrow[1], e.shiftKey);
+      else removeMarks([id]);
     };
 
   return (
@@ -69,7 +67,8 @@ export function MarkList() {
           const place = at
             ? `l ${degrees(at.l, digits)} b ${degrees(at.b, digits)}`
             : 'outside the projection';
-          const current = mark.id === selected?.id;
+          const current = chosen.includes(mark);
+          const about = aboutMark(mark, digits);
           return (
             <View
               key={mark.id}
@@ -82,12 +81,19 @@ export function MarkList() {
                 backgroundColor: current ? color.selected : 'transparent',
               }}
             >
+              {canMark && own.length > 1 && (
+                <CheckBox
+                  label={`Select mark ${i + 1} with others`}
+                  checked={current}
+                  onChange={() => select(mark.id, true)}
+                />
+              )}
               <Press
                 onPress={() => select(mark.id)}
-                onFocus={() => select(mark.id)}
-                aria-label={`Mark ${i + 1}, ${place}${marking ? '. Arrow keys nudge it, Delete removes it' : ''}`}
+                onFocus={() => !current && select(mark.id)}
+                aria-label={`Mark ${i + 1}, ${place}, ${about.join(', ')}${canMark ? '. Arrow keys nudge it, Delete removes it' : ''}`}
                 aria-pressed={current}
-                {...({ onKeyDown: onKeyDown(mark.id, mark.x, mark.y) } as object)}
+                {...({ onKeyDown: onKeyDown(mark.id) } as object)}
                 style={({ hovered }: PressState) => ({
                   flex: 1,
                   minHeight: touch,
@@ -104,8 +110,11 @@ export function MarkList() {
                 ) : (
                   <Text size="small">{place}</Text>
                 )}
+                <Text size="small" tone={mark.unsure ? 'person' : 'quiet'}>
+                  {about.join(' · ')}
+                </Text>
               </Press>
-              {marking && (
+              {canMark && (
                 <IconButton
                   icon="trash"
                   label={`Delete mark ${i + 1}`}

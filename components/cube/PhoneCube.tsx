@@ -5,6 +5,7 @@ import { Headline } from '@/components/cube/Headline';
 import { LivePanel } from '@/components/cube/LivePanel';
 import { LookPanel } from '@/components/cube/LookPanel';
 import { MapPanel } from '@/components/cube/MapPanel';
+import { MarkDetails } from '@/components/cube/MarkDetails';
 import { MarkHint } from '@/components/cube/MarkHint';
 import { MarkList } from '@/components/cube/MarkList';
 import { ReadingTable } from '@/components/cube/ReadingTable';
@@ -81,6 +82,7 @@ export function PhoneCube({
             <>
               {notices}
               {hasReading && <ReadingTable />}
+              {hasReading && <MarkDetails />}
               {hasReading && <MarkList />}
               <ShellChooser />
             </>

@@ -1,32 +1,48 @@
 import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
-import { brightness, coordinateDigits, degrees, frameWords } from '@/components/cube/words';
+import { brightness, frameWords } from '@/components/cube/words';
+import { coordinateWords } from '@/components/seeing/coordinateWords';
+import { skyMapping } from '@/components/seeing/skyMapping';
 import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { radius, space } from '@/components/ui/tokens';
-import { ALL_CHANNELS, brightnessAt } from '@/hooks/planes/decodePlane';
+import { brightnessAt } from '@/hooks/planes/decodePlane';
 import { useValue } from '@/hooks/valueStore';
 import { pixelAt, type ImagePoint } from '@/shared/image/viewport';
 import { velocityLabel } from '@/shared/image/velocityDigits';
-import { separation } from '@/shared/sky/greatCircle';
+import { positionAngle, separation } from '@/shared/sky/greatCircle';
 
 const itself = (at: ImagePoint | null) => at;
 
 /** Longitude, latitude, velocity and brightness under the pointer. Renders with the pointer, and nothing else does. */
 export function Readout() {
-  const { wcs, axes, store, velocity, channel, planes, view, unit } = useSession();
+  const { wcs, axes, store, velocity, planes, view, unit, seen, seeing, coordinates } = useSession();
   const { color } = useTheme();
   const at = useValue(store.hover, itself);
-  const pixel = at && pixelAt(axes, at);
+  const pixel = at && pixelAt(seen, at);
   if (!at || !pixel) return null;
-  const digits = coordinateDigits(degreesPerPixel(axes, wcs));
-  const galactic = wcs.pixelToGalactic(at.x, at.y);
-  const sky = axes.frame === 'galactic' ? null : wcs.pixelToSky(at.x, at.y);
-  const own = frameWords(axes.frame);
-  const plane = planes.plane?.channel === (view === 'channel' ? channel : ALL_CHANNELS) ? planes.plane : null;
-  const value = plane ? brightnessAt(plane, pixel.i, pixel.j) : NaN;
+  const perPixel = degreesPerPixel(axes, wcs);
+  const galactic = skyMapping(seen.sky, axes.frame, 'galactic').unproject(at.x, at.y);
+  const equatorial =
+    axes.frame === 'galactic' && coordinates.grid !== 'equatorial'
+      ? null
+      : skyMapping(seen.sky, axes.frame, 'equatorial').unproject(at.x, at.y);
+  const own = frameWords(axes.frame === 'galactic' ? 'icrs' : axes.frame);
+  const words = (of: { lon: number; lat: number }, grid: 'galactic' | 'equatorial') =>
+    coordinateWords(of, grid, coordinates.notation, perPixel);
+  const g = galactic && words(galactic, 'galactic');
+  const e = equatorial && words(equatorial, 'equatorial');
+  const { plane } = planes;
+  const value = plane && !plane.standIn ? brightnessAt(plane, pixel.i, pixel.j) : NaN;
   const channelWords =
-    view === 'channel' ? `${velocityLabel(velocity, axes.spectral.channelWidth)} km/s  ` : '';
+    view === 'channel' && seen.lie !== 'stacked'
+      ? `${velocityLabel(velocity, axes.spectral.channelWidth)} km/s  `
+      : '';
+  const { about } = seeing;
+  const fromCentre =
+    about && galactic && seen.lie !== 'image'
+      ? `${Math.round(positionAngle(about, galactic))}° azimuth, ${separation(about, galactic).toFixed(2)}° out`
+      : null;
   return (
     <View
       pointerEvents="none"
@@ -44,17 +60,20 @@ export function Readout() {
       }}
     >
       <Text mono size="small" tone="onImage" align="right">
-        {galactic
-          ? `l ${degrees(galactic.l, digits)}  b ${degrees(galactic.b, digits)}`
-          : 'outside the projection'}
+        {g ? `l ${g.lon}  b ${g.lat}` : 'outside the projection'}
       </Text>
-      {sky && (
+      {e && (
         <Text mono size="small" tone="onImage" align="right">
-          {`${own.lon} ${degrees(sky.lon, digits)}  ${own.lat} ${degrees(sky.lat, digits)}  ${own.name}`}
+          {`${own.lon} ${e.lon}  ${own.lat} ${e.lat}  ${own.name}`}
+        </Text>
+      )}
+      {fromCentre && (
+        <Text mono size="small" tone="onImage" align="right">
+          {fromCentre}
         </Text>
       )}
       <Text mono size="small" tone="onImage" align="right">
-        {`${channelWords}${plane ? brightness(value) : '…'}${plane && Number.isFinite(value) && unit ? ` ${unit}` : ''}`}
+        {`${channelWords}${plane && !plane.standIn ? brightness(value) : '…'}${Number.isFinite(value) && unit ? ` ${unit}` : ''}`}
       </Text>
     </View>
   );

@@ -7,13 +7,17 @@ import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { radius, space } from '@/components/ui/tokens';
 
-/** What can be done with the mark that is selected, within a thumb's reach on the map. */
+/** What can be done with the marks that are selected, within a thumb's reach on the map. */
 export function SelectedMark() {
-  const { selected, marks, channel, wcs, axes, removeMarks, select, marking } = useSession();
+  const { chosen, selected, marks, channel, wcs, axes, removeMarks, select, canMark, describeMarks } =
+    useSession();
   const { color } = useTheme();
-  if (!selected) return null;
+  const [first] = chosen;
+  if (!first) return null;
+  const ids = chosen.map((mark) => mark.id);
+  const unsure = chosen.every((mark) => mark.unsure);
   const own = marks.filter((m) => m.channel === channel);
-  const at = wcs.pixelToGalactic(selected.x, selected.y);
+  const at = selected && wcs.pixelToGalactic(selected.x, selected.y);
   const digits = coordinateDigits(degreesPerPixel(axes, wcs));
   return (
     <View
@@ -30,7 +34,9 @@ export function SelectedMark() {
     >
       <View>
         <Text size="small" tone="onImage" weight="semibold">
-          {`Mark ${own.findIndex((m) => m.id === selected.id) + 1} of ${own.length}`}
+          {selected
+            ? `Mark ${own.indexOf(selected) + 1} of ${own.length}`
+            : `${chosen.length} marks selected`}
         </Text>
         {at && (
           <Text mono size="small" tone="onImage">
@@ -38,15 +44,23 @@ export function SelectedMark() {
           </Text>
         )}
       </View>
-      {marking && (
-        <IconButton
-          icon="trash"
-          label="Delete this mark"
-          tone="onImage"
-          onPress={() => removeMarks([selected.id])}
-        />
+      {canMark && (
+        <>
+          <IconButton
+            icon={unsure ? 'doubt' : 'check'}
+            label={unsure ? 'Unsure: say sure' : 'Sure: say unsure'}
+            tone="onImage"
+            onPress={() => describeMarks(ids, { unsure: !unsure })}
+          />
+          <IconButton
+            icon="trash"
+            label={selected ? 'Delete this mark' : 'Delete these marks'}
+            tone="onImage"
+            onPress={() => removeMarks(ids)}
+          />
+        </>
       )}
-      <IconButton icon="close" label="Deselect the mark" tone="onImage" onPress={() => select(null)} />
+      <IconButton icon="close" label="Deselect" tone="onImage" onPress={() => select(null)} />
     </View>
   );
 }

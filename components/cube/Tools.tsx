@@ -1,11 +1,17 @@
 import { View } from 'react-native';
+import { MAP_TOOLS, TOOL_ORDER } from '@/components/cube/mapTools';
 import { useSession } from '@/components/cube/session';
 import { zoomMap } from '@/components/cube/zoomMap';
 import { windowWords } from '@/components/cube/words';
+import type { MapTool } from '@/components/map/gestures';
 import { IconButton } from '@/components/ui/Button';
 import { ToggleChip } from '@/components/ui/Chip';
+import type { IconName } from '@/components/ui/Icon';
+import { Menu, type MenuItem } from '@/components/ui/Menu';
 import { useShowKeys } from '@/components/ui/commands/CommandsProvider';
 import { space } from '@/components/ui/tokens';
+
+const ICONS: Record<MapTool, IconName> = { move: 'hand', mark: 'target', lasso: 'lasso', ring: 'ring' };
 
 /** Marking, undo, zoom and look, above the map. */
 export function Tools({
@@ -21,11 +27,28 @@ export function Tools({
   /** Room for palette and tone beside the window. */
   roomy?: boolean;
 }) {
-  const { markMode, setMarkMode, shell, mayMark, reading, look, unit, store, view } = useSession();
+  const { tool, setTool, suggesting, setSuggesting, shell, mayMark, reading, look, unit, store, view } =
+    useSession();
   const showKeys = useShowKeys();
   const { undo, redo, ready } = reading.state;
   const canMark = shell !== null && mayMark;
   const window = windowWords(look.window, unit);
+  const off = view === 'channel' ? undefined : true;
+  const toolItems: MenuItem[] = [
+    ...TOOL_ORDER.map((t) => ({
+      label: MAP_TOOLS[t].label,
+      icon: ICONS[t],
+      selected: tool === t,
+      disabled: off,
+      perform: () => setTool(t),
+    })),
+    {
+      label: suggesting ? 'Suggest no marks' : 'Suggest marks',
+      icon: 'shells',
+      disabled: off,
+      perform: () => setSuggesting(!suggesting),
+    },
+  ];
   return (
     <View
       role="toolbar"
@@ -43,10 +66,32 @@ export function Tools({
         <>
           <ToggleChip
             label="Mark"
-            selected={markMode && view === 'channel'}
-            disabled={view !== 'channel'}
-            onPress={() => setMarkMode(!markMode)}
+            selected={tool === 'mark' && off === undefined}
+            disabled={off}
+            onPress={() => setTool(tool === 'mark' ? 'move' : 'mark')}
           />
+          {roomy ? (
+            <>
+              {TOOL_ORDER.filter((t) => t !== 'mark').map((t) => (
+                <IconButton
+                  key={t}
+                  icon={ICONS[t]}
+                  label={MAP_TOOLS[t].label}
+                  selected={tool === t && off === undefined}
+                  disabled={off}
+                  onPress={() => setTool(t)}
+                />
+              ))}
+              <ToggleChip
+                label="Suggest"
+                selected={suggesting && off === undefined}
+                disabled={off}
+                onPress={() => setSuggesting(!suggesting)}
+              />
+            </>
+          ) : (
+            <Menu label="Tools" items={toolItems} />
+          )}
           <IconButton
             icon="undo"
             label="Undo"

@@ -4,6 +4,7 @@ import { Headline } from '@/components/cube/Headline';
 import { LivePanel } from '@/components/cube/LivePanel';
 import { LookPanel } from '@/components/cube/LookPanel';
 import { MapPanel } from '@/components/cube/MapPanel';
+import { MarkDetails } from '@/components/cube/MarkDetails';
 import { MarkHint } from '@/components/cube/MarkHint';
 import { MarkList } from '@/components/cube/MarkList';
 import { ReadingTable } from '@/components/cube/ReadingTable';
@@ -46,6 +47,7 @@ export function WideCube({
           <MarkHint />
           <ShellChooser />
           {hasReading && <ReadingTable />}
+          {hasReading && <MarkDetails />}
           {hasReading && <MarkList />}
         </ScrollView>
       </View>

@@ -6,8 +6,12 @@ const session = (more: object = {}) =>
   ({
     shell: { id: 's' },
     mayMark: true,
-    markMode: true,
-    selected: { id: 'm' },
+    tool: 'mark',
+    chosen: [{ id: 'm' }],
+    marks: [],
+    ghosts: [],
+    next: [],
+    channel: 0,
     order: { channels: [0, 1, 2] },
     velocity: 1,
     live: {
@@ -22,7 +26,11 @@ const session = (more: object = {}) =>
     stepChannel: jest.fn(),
     showChannel: jest.fn(),
     removeMarks: jest.fn(),
-    setMarkMode: jest.fn(),
+    setTool: jest.fn(),
+    selectMany: jest.fn(),
+    describeMarks: jest.fn(),
+    setSuggesting: jest.fn(),
+    takeGhosts: jest.fn(),
     select: jest.fn(),
     ...more,
   }) as unknown as CubeSession;

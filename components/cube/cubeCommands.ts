@@ -1,5 +1,6 @@
 import type { CubeSession } from '@/components/cube/cubeSession';
 import { VIEW_ORDER } from '@/components/cube/views';
+import { markCommands } from '@/components/cube/markCommands';
 import { zoomMap } from '@/components/cube/zoomMap';
 import type { Command } from '@/components/ui/commands/command';
 import { PALETTES } from '@/shared/image/palettes';
@@ -16,7 +17,8 @@ export interface CommandView {
 /** The cube screen's keys; the list under ? is made from these. */
 export function cubeCommands(s: CubeSession, view: CommandView): Command[] {
   const canMark = s.shell !== null && s.mayMark && s.reading.state.ready;
-  const { selected, look, store } = s;
+  const { look, store } = s;
+  const chosen = s.chosen.map((mark) => mark.id);
   const last = s.order.channels.length - 1;
   const marked = s.live.readings;
   const markedBeside = (way: 1 | -1) => {
@@ -122,30 +124,7 @@ export function cubeCommands(s: CubeSession, view: CommandView): Command[] {
       perform: () => look.setTone(after(TONES, look.tone)),
     },
 
-    {
-      name: 'mark.mode',
-      label: s.markMode ? 'Marking off' : 'Marking on',
-      keys: ['m'],
-      group: 'Marks',
-      enabled: canMark,
-      perform: () => s.setMarkMode(!s.markMode),
-    },
-    {
-      name: 'mark.remove',
-      label: 'Delete the selected mark',
-      keys: ['Delete', 'Backspace'],
-      group: 'Marks',
-      enabled: canMark && selected !== null,
-      perform: () => selected && s.removeMarks([selected.id]),
-    },
-    {
-      name: 'mark.none',
-      label: 'Deselect the mark',
-      keys: ['Escape'],
-      group: 'Marks',
-      enabled: selected !== null,
-      perform: () => s.select(null),
-    },
+    ...markCommands(s, canMark, chosen),
     {
       name: 'mark.undo',
       label: 'Undo',

@@ -1,4 +1,5 @@
 import { paramsOf, placeOf, type CubePlace } from '@/components/cube/place';
+import { AS_IS } from '@/components/seeing/seeing';
 
 const nothing: CubePlace = {
   channel: null,
@@ -9,6 +10,7 @@ const nothing: CubePlace = {
   palette: null,
   tone: null,
   window: null,
+  seeing: AS_IS,
 };
 
 test('a place goes into the address and comes back', () => {
@@ -21,6 +23,7 @@ test('a place goes into the address and comes back', () => {
     palette: 'Tide',
     tone: 'arcsinh',
     window: [-2.5, 27],
+    seeing: { ...AS_IS, mean: 3, less: 20 },
   };
   const params = paramsOf(place);
   expect(params).toMatchObject({

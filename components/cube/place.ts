@@ -1,5 +1,6 @@
 import type { MapKind } from '@/shared/contract/cubes';
 import { VIEW_ORDER } from '@/components/cube/views';
+import { paramsOfSeeing, seeingOf, type Seeing } from '@/components/seeing/seeing';
 import { PALETTES, type Palette } from '@/shared/image/palettes';
 import { TONES, type Tone } from '@/shared/image/tone';
 
@@ -16,6 +17,8 @@ export interface CubePlace {
   palette: Palette | null;
   tone: Tone | null;
   window: readonly [number, number] | null;
+  /** What is seen besides the channel as it is. */
+  seeing: Seeing;
 }
 
 export type AddressParams = Record<string, string | undefined>;
@@ -46,6 +49,7 @@ export function placeOf(params: Record<string, string | string[] | undefined>): 
     palette: palette ?? null,
     tone: TONES.find((t) => t === text('tone')) ?? null,
     window: low !== null && high !== null && low < high ? [low, high] : null,
+    seeing: seeingOf(params),
   };
 }
 
@@ -67,5 +71,6 @@ export function paramsOf(place: CubePlace): AddressParams {
     tone: place.tone ?? undefined,
     low: window ? short(window[0], 5) : undefined,
     high: window ? short(window[1], 5) : undefined,
+    ...paramsOfSeeing(place.seeing),
   };
 }

@@ -1,28 +1,34 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import type { CubeSession, Grid } from '@/components/cube/cubeSession';
+import type { CubeSession } from '@/components/cube/cubeSession';
 import type { CubePlace } from '@/components/cube/place';
 import { useLook } from '@/components/cube/useLook';
 import { useAddress } from '@/components/cube/usePlace';
+import { firstGuess } from '@/components/cube/firstGuess';
+import { useMarking } from '@/components/cube/useMarking';
 import { useModel } from '@/components/cube/useModel';
-import { useScene } from '@/components/cube/useScene';
+import { useRingTool } from '@/components/cube/useRingTool';
+import { useSuggestions } from '@/components/cube/useSuggestions';
+import { useTrial } from '@/components/cube/useTrial';
+import { useWhereNext } from '@/components/cube/useWhereNext';
+import { useScene, type SceneModel } from '@/components/cube/useScene';
 import { useView } from '@/components/cube/useView';
+import { useContours } from '@/components/seeing/useContours';
+import { useFilm } from '@/components/seeing/useFilm';
+import { useCoordinates } from '@/components/seeing/useCoordinates';
+import { useSeenPicture } from '@/components/seeing/useSeenPicture';
 import { unitOf } from '@/components/cube/views';
+import type { MapTool } from '@/components/map/gestures';
 import { mapStore } from '@/components/map/mapStore';
+import type { ToolScene } from '@/components/map/toolScene';
 import { stepped, stripOrder } from '@/components/strip/stripOrder';
-import { newMarkId } from '@/hooks/reading/placedMark';
 import { useLiveFit } from '@/hooks/reading/useLiveFit';
 import { useReading } from '@/hooks/reading/useReading';
-import { usePlanes } from '@/hooks/planes/usePlanes';
 import { useMay, useMe } from '@/hooks/useMe';
 import { useShells } from '@/hooks/useShells';
-import { useValue } from '@/hooks/valueStore';
 import type { Cube, CubeAxes } from '@/shared/contract/cubes';
-import { clamped, within, type ImagePoint, type Viewport } from '@/shared/image/viewport';
+import { clamped, type ImagePoint, type Viewport } from '@/shared/image/viewport';
+import { modelRadius } from '@/shared/shell/channelCurve';
 import type { Wcs } from '@/shared/sky/wcs';
-
-/** How sharp a plane is wanted, in steps of two so that zooming asks rarely. */
-const sharpness = (v: Viewport | null): number =>
-  v ? 2 ** Math.ceil(Math.log2(Math.max(v.nx, v.ny) * v.scale * (globalThis.devicePixelRatio || 1))) : 512;
 
 export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: CubePlace): CubeSession {
   const { data: me } = useMe();
@@ -37,14 +43,11 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const [asked, setChannel] = useState<number | null>(start.channel);
   const channel = Math.min(asked ?? order.channels[axes.channels >> 1] ?? 0, axes.channels - 1);
   const [shellId, setShellId] = useState<string | null>(start.shell);
-  const [selectedId, setSelected] = useState<string | null>(null);
-  const [markMode, setMarkMode] = useState(true);
-  const [grid, setGrid] = useState<Grid>('galactic');
+  const coordinates = useCoordinates();
   const channelLook = useLook(start, cube.window ?? [0, 1]);
-  const shownView = useView(cube, start.map, channelLook);
+  const shownView = useView(cube, start.map);
   const { view, setView } = shownView;
   const onMap = view !== 'channel';
-  const look = shownView.look ?? channelLook;
 
   const shell = shells.data?.items.find((s) => s.id === shellId) ?? null;
   const mayMark = may('reading.write');
@@ -53,32 +56,99 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const elsewhere =
     state.cubeId !== null && state.cubeId !== cube.id && state.marks.length > 0 ? state.cubeId : null;
   const marks = useMemo(() => (elsewhere ? [] : state.marks), [elsewhere, state.marks]);
-  const marking =
-    shell !== null && mayMark && state.ready && !elsewhere && !state.conflict && markMode && !onMap;
+  const marking = useMarking({ axes, wcs, channel: onMap ? null : channel, marks, dispatch });
+  const { chosen, selected, select, tool, usualSigma, addMarks } = marking;
+  const canMark = shell !== null && mayMark && state.ready && !elsewhere && !state.conflict && !onMap;
+  const mapTool: MapTool = canMark ? tool : 'move';
 
   const velocities = axes.spectral.velocities;
   const range = useMemo(() => [velocities[0], velocities[1]] as const, [velocities]);
-  const live = useLiveFit(marks, wcs, axes.spectral.channelWidth, range);
-  const shown = useModel(shell, live, mayMark, state.readingId);
+  const guess = useRef<() => SceneModel>(() => firstGuess(axes, wcs, [], null));
+  const trialModel = useTrial(useCallback(() => guess.current(), []));
+  const live = useLiveFit(marks, wcs, axes.spectral.channelWidth, range, trialModel.fitStart);
+  const shown = useModel(shell, live, mayMark, state.readingId, trialModel.trial);
   const { model } = shown;
+  useEffect(() => {
+    guess.current = () => firstGuess(axes, wcs, live.readings, model);
+  });
+  const next = useWhereNext(live, axes, wcs, usualSigma);
 
   const image = useMemo(() => ({ nx: axes.nx, ny: axes.ny, channels: axes.channels }), [axes]);
-  const channelPlanes = usePlanes(cube, image, channel, useValue(store.viewport, sharpness));
-  const planes = onMap ? shownView.planes : channelPlanes;
-  const selected = (!onMap && marks.find((m) => m.id === selectedId && m.channel === channel)) || null;
-  const scene = useScene({
+  const seenPicture = useSeenPicture({
+    cube,
+    axes,
     wcs,
-    image,
+    order,
+    channel,
+    shownView,
+    channelLook,
+    model,
+    start: start.seeing,
+    store,
+  });
+  const { seeing, seen, channelPlanes } = seenPicture;
+  const contours = useContours(seeing.contours, seen);
+  const own = live.readings.find((r) => r.channel === channel)?.ring ?? null;
+  const suggestions = useSuggestions({
+    plane:
+      canMark && channelPlanes.plane?.channel === channel && !channelPlanes.plane.standIn
+        ? channelPlanes.plane
+        : null,
+    axes,
+    wcs,
+    marks,
+    readings: live.readings,
+  });
+  const { ghosts } = suggestions;
+  const ring = useRingTool({
+    active: mapTool === 'ring',
+    store,
+    axes,
+    wcs,
+    seen,
+    expected:
+      own?.theta ?? (model && modelRadius(wcs.velocityOf(channel), axes.spectral.channelWidth, model)),
+    addMarks,
+    say: marking.said.set,
+  });
+  const { onMap: ringOnMap } = ring;
+  const stored = state.conflict?.marks;
+  const tools = useMemo<ToolScene>(
+    () => ({
+      ghosts: ghosts.flatMap((ghost) => {
+        const at = seen.fromImage(ghost);
+        return at ? [{ ...at, id: ghost.id }] : [];
+      }),
+      others: stored?.flatMap((m) => (m.channel === channel ? (seen.fromImage(m) ?? []) : [])) ?? [],
+      ring: ringOnMap,
+    }),
+    [ghosts, stored, channel, ringOnMap, seen],
+  );
+  const takeGhosts = useCallback(
+    (ids: readonly string[]) =>
+      addMarks(
+        ghosts.filter((ghost) => ids.includes(ghost.id)),
+        'suggested',
+      ),
+    [ghosts, addMarks],
+  );
+  const scene = useScene({
+    seen,
+    frame: axes.frame,
+    velocityOf: wcs.velocityOf,
     order,
     channel,
     channelWidth: axes.spectral.channelWidth,
     allChannels: onMap,
     marks,
-    selected: selected?.id ?? null,
+    selected: chosen,
     readings: live.readings,
     model,
     beam: axes.beam,
-    grid,
+    grid: coordinates.grid,
+    notation: coordinates.notation,
+    distancePc: shell?.adopted?.distance?.pc ?? null,
+    contours: contours.lines,
   });
   const marksByChannel = useMemo(() => {
     const counts = new Map<number, number>();
@@ -94,6 +164,7 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     },
     [setView],
   );
+  const film = useFilm(order, channel, showChannel, model);
   const here = useRef({ channel, marks, order, image, store });
   useEffect(() => {
     here.current = { channel, marks, order, image, store };
@@ -102,39 +173,26 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     (steps: number) => showChannel(stepped(here.current.order, here.current.channel, steps)),
     [showChannel],
   );
-  const placeMark = useCallback(
-    (at: ImagePoint) => {
-      const mark = { id: newMarkId(), channel: here.current.channel, x: round(at.x), y: round(at.y) };
-      dispatch({ type: 'add', mark });
-      setSelected(mark.id);
-    },
-    [dispatch],
-  );
-  const moveMark = useCallback(
-    (id: string, at: ImagePoint, gesture: string) => {
-      const inside = within(here.current.image, at);
-      dispatch({ type: 'move', id, x: round(inside.x), y: round(inside.y), gesture });
-    },
-    [dispatch],
-  );
-  const removeMarks = useCallback((ids: readonly string[]) => dispatch({ type: 'remove', ids }), [dispatch]);
   const showPlace = useCallback(
     (at: { channel: number; x: number; y: number }) => {
       showChannel(at.channel);
       const found = here.current.marks.find(
         (m) => m.channel === at.channel && Math.hypot(m.x - at.x, m.y - at.y) < 1e-6,
       );
-      setSelected(found?.id ?? null);
+      select(found?.id ?? null);
       const v = here.current.store.viewport.get();
       if (v && !found) here.current.store.hover.set(at);
       if (v && !isSeen(v, at)) here.current.store.viewport.set(clamped({ ...v, x: at.x, y: at.y }));
     },
-    [showChannel],
+    [showChannel, select],
   );
-  const chooseShell = useCallback((id: string | null) => {
-    setShellId(id);
-    setSelected(null);
-  }, []);
+  const chooseShell = useCallback(
+    (id: string | null) => {
+      setShellId(id);
+      select(null);
+    },
+    [select],
+  );
 
   // A link to a mark: once the marks are here, go to it.
   const pending = useRef(start.mark);
@@ -155,8 +213,9 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
       palette: channelLook.palette === 'Ink' ? null : channelLook.palette,
       tone: channelLook.tone === 'arcsinh' ? null : channelLook.tone,
       window: channelLook.usual ? null : channelLook.window,
+      seeing,
     }),
-    [channel, shellId, markNumber, view, channelLook],
+    [channel, shellId, markNumber, view, channelLook, seeing],
   );
   useAddress(place, store);
 
@@ -169,12 +228,12 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     velocity: wcs.velocityOf(channel),
     view,
     setView,
-    look,
     channelLook,
     unit: unitOf(view, axes.unit),
-    grid,
-    setGrid,
-    planes,
+    coordinates,
+    contours,
+    film,
+    ...seenPicture,
     store,
     scene,
     start,
@@ -182,9 +241,12 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     shell,
     chooseShell,
     mayMark,
-    marking,
-    markMode,
-    setMarkMode,
+    canMark,
+    mapTool,
+    tools,
+    ring,
+    takeGhosts,
+    next,
     reading,
     elsewhere,
     marks,
@@ -192,19 +254,14 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     live,
     hasReading: shell !== null && mayMark && !elsewhere,
     ...shown,
-    selected,
-    select: setSelected,
+    ...marking,
+    ...suggestions,
+    ...trialModel,
     showChannel,
     stepChannel,
-    placeMark,
-    moveMark,
-    removeMarks,
     showPlace,
   };
 }
-
-/** A thousandth of a pixel is finer than any hand. */
-const round = (pixel: number) => Math.round(pixel * 1000) / 1000;
 
 const isSeen = (v: Viewport, { x, y }: ImagePoint): boolean =>
   Math.abs(x - v.x) * v.scale < v.width / 2 - 20 && Math.abs(y - v.y) * v.scale < v.height / 2 - 20;

@@ -8,7 +8,7 @@ import type { Shell } from '@/shared/contract/shells';
 export interface ShownModel {
   /** What the map and the diagram show as the model, and where it is from. */
   model: SceneModel | null;
-  modelSource: 'live' | 'record' | null;
+  modelSource: 'trial' | 'live' | 'record' | null;
   /** The fit of record that is shown because there is no live one. */
   shownRecord: DoneFit | null;
 }
@@ -22,15 +22,17 @@ export function useModel(
   live: LiveFit,
   mayMark: boolean,
   readingId: string | null,
+  trial: SceneModel | null,
 ): ShownModel {
   const { data } = useFits(shell?.id ?? null);
   const { fit } = live;
   return useMemo(() => {
     const own = data?.items.filter(isDone).filter((f) => !mayMark || f.readingId === readingId) ?? [];
     const record = fit ? null : (own.find((f) => f.adopted) ?? own[0] ?? null);
-    const model = sceneModel(fit?.parameters ?? record?.parameters);
-    return { model, modelSource: !model ? null : fit ? 'live' : 'record', shownRecord: record };
-  }, [data, fit, mayMark, readingId]);
+    const model = trial ?? sceneModel(fit?.parameters ?? record?.parameters);
+    const modelSource = !model ? null : trial ? 'trial' : fit ? 'live' : 'record';
+    return { model, modelSource, shownRecord: record };
+  }, [data, fit, mayMark, readingId, trial]);
 }
 
 /** The numbers that place a model's rings; null where a fit lacks one. */

@@ -2,13 +2,17 @@ import { useMemo } from 'react';
 import { beamOutline, type Beam } from '@/components/map/beamOutline';
 import type { Scene, SceneMark } from '@/components/map/scene';
 import type { StripOrder } from '@/components/strip/stripOrder';
+import { furnitureOf } from '@/components/map/furniture';
+import type { Grid, Notation } from '@/components/seeing/coordinateWords';
+import { polarLines } from '@/components/seeing/polarLines';
+import { skyMapping } from '@/components/seeing/skyMapping';
+import type { SeenSky } from '@/components/seeing/useSeenSky';
 import type { PlacedMark } from '@/hooks/reading/placedMark';
 import type { ChannelReading } from '@/hooks/reading/skyMarks';
 import { graticule } from '@/shared/image/graticule';
 import { ringPath, type Project } from '@/shared/image/skyPath';
 import type { Viewport } from '@/shared/image/viewport';
 import { modelRadius } from '@/shared/shell/channelCurve';
-import type { Wcs } from '@/shared/sky/wcs';
 
 /** Channels to each side whose marks are seen faintly. */
 const NEIGHBOURS = 2;
@@ -22,49 +26,64 @@ export interface SceneModel {
 }
 
 export interface SceneInput {
-  wcs: Wcs;
-  image: { nx: number; ny: number };
+  /** How the picture lies on the sky. */
+  seen: SeenSky;
+  frame: string;
+  velocityOf: (channel: number) => number;
   order: StripOrder;
   channel: number;
   channelWidth: number;
   /** The picture is a map of all channels: no marks lie on it, and the model shows its widest ring. */
   allChannels: boolean;
   marks: readonly PlacedMark[];
-  selected: string | null;
+  selected: readonly PlacedMark[];
   readings: readonly ChannelReading[];
   model: SceneModel | null;
   beam: Beam | null;
-  grid: 'galactic' | 'own' | 'off';
+  grid: Grid;
+  notation: Notation;
+  /** Of the shell, for the scale bar; null: not known. */
+  distancePc: number | null;
+  contours?: Scene['contours'];
 }
 
 /** What lies over the map, in image pixels; every ring is a circle on the sky, drawn where the projection puts it. */
 export function useScene(input: SceneInput): Scene {
-  const { wcs, image, order, channel, channelWidth, marks, selected, readings, model, beam, grid } = input;
-  const { allChannels } = input;
-  const { nx, ny } = image;
+  const { seen, order, channel, channelWidth, marks, selected, readings, model, beam, grid, notation } =
+    input;
+  const { allChannels, frame, distancePc, contours, velocityOf } = input;
+  const { sky, nx, ny, lie, reach, fromImage } = seen;
   const jump = Math.max(nx, ny) / 2;
   const galactic = useMemo<Project>(
     () =>
       ({ lon, lat }) =>
-        wcs.galacticToPixel(lon, lat),
-    [wcs],
+        sky.galacticToPixel(lon, lat),
+    [sky],
   );
+  const isPolar = lie === 'polar' || lie === 'stacked';
 
   const lines = useMemo(() => {
     if (grid === 'off') return null;
-    const project: Project = grid === 'galactic' ? galactic : ({ lon, lat }) => wcs.skyToPixel(lon, lat);
-    const unproject = (x: number, y: number) => {
-      if (grid === 'own') return wcs.pixelToSky(x, y);
-      const at = wcs.pixelToGalactic(x, y);
-      return at && { lon: at.l, lat: at.b };
-    };
-    return (v: Viewport) => graticule(v, { project, unproject });
-  }, [wcs, grid, galactic]);
+    if (isPolar)
+      return (v: Viewport) =>
+        lie === 'stacked' && model
+          ? polarLines(v, reach / model.theta, ' ring radii')
+          : polarLines(v, reach, '°');
+    const mapping = skyMapping(sky, frame, grid);
+    const style = notation === 'decimal' ? 'decimal' : grid === 'equatorial' ? 'hours' : 'sexagesimal';
+    return (v: Viewport) => graticule(v, mapping, style);
+  }, [sky, frame, grid, notation, isPolar, lie, reach, model]);
+
+  const furniture = useMemo(() => {
+    if (isPolar) return null;
+    const mapping = skyMapping(sky, frame, grid === 'off' ? 'galactic' : grid);
+    return (v: Viewport) => furnitureOf(v, mapping, distancePc);
+  }, [sky, frame, grid, isPolar, distancePc]);
 
   const outline = useMemo(() => {
-    const at = wcs.pixelToSky((nx - 1) / 2, (ny - 1) / 2);
-    return beam && at ? beamOutline(beam, at, ({ lon, lat }) => wcs.skyToPixel(lon, lat)) : null;
-  }, [wcs, beam, nx, ny]);
+    const at = isPolar ? null : sky.pixelToSky((nx - 1) / 2, (ny - 1) / 2);
+    return beam && at ? beamOutline(beam, at, ({ lon, lat }) => sky.skyToPixel(lon, lat)) : null;
+  }, [sky, beam, nx, ny, isPolar]);
 
   const sceneMarks = useMemo<SceneMark[]>(() => {
     if (allChannels) return [];
@@ -72,11 +91,12 @@ export function useScene(input: SceneInput): Scene {
     return marks.flatMap((mark) => {
       const away = (order.positions[mark.channel] ?? Infinity) - here;
       if (Math.abs(away) > NEIGHBOURS) return [];
-      return [{ id: mark.id, x: mark.x, y: mark.y, away, selected: mark.id === selected }];
+      const at = fromImage(mark);
+      return at ? [{ id: mark.id, ...at, away, selected: selected.includes(mark), unsure: mark.unsure }] : [];
     });
-  }, [marks, order, channel, selected, allChannels]);
+  }, [marks, order, channel, selected, allChannels, fromImage]);
 
-  const velocity = wcs.velocityOf(channel);
+  const velocity = velocityOf(channel);
   const modelRing = useMemo(() => {
     if (!model) return null;
     const radius = allChannels ? model.theta : modelRadius(velocity, channelWidth, model);
@@ -97,7 +117,16 @@ export function useScene(input: SceneInput): Scene {
   );
 
   return useMemo<Scene>(
-    () => ({ graticule: lines, marks: sceneMarks, modelRing, ownRing, centre, beam: outline }),
-    [lines, sceneMarks, modelRing, ownRing, centre, outline],
+    () => ({
+      graticule: lines,
+      marks: sceneMarks,
+      modelRing,
+      ownRing,
+      centre,
+      beam: outline,
+      furniture,
+      contours,
+    }),
+    [lines, sceneMarks, modelRing, ownRing, centre, outline, furniture, contours],
   );
 }

@@ -50,7 +50,7 @@ function show(marking = true) {
         look={{ window: [0, 1], tone: 'even', ramp: rampOf('Ink'), blank: 0 }}
         scene={scene}
         label="Channel map at −42.2 kilometres per second"
-        marking={marking}
+        tool={marking ? 'mark' : 'move'}
         start={null}
         {...calls}
       />
@@ -89,7 +89,7 @@ test('a tap on a mark selects it; the faint ones of other channels cannot be hit
   const { map, onSelect, onPlace } = show();
   pointer(map, 'pointerdown', 203, 197);
   pointer(map, 'pointerup', 203, 197);
-  expect(onSelect).toHaveBeenCalledWith('here');
+  expect(onSelect).toHaveBeenCalledWith('here', false);
   pointer(map, 'pointerdown', 322, 78);
   pointer(map, 'pointerup', 322, 78);
   expect(onPlace).toHaveBeenCalledTimes(1);
@@ -104,7 +104,7 @@ test('the keyboard alone marks: arrows move the crosshair, Enter places, Escape 
   expect(store.crosshair.get()).toEqual({ x: 49.5 + 30 / 4, y: 49.5 + 6 / 4 });
   expect(store.hover.get()).toEqual(store.crosshair.get());
   fireEvent.keyDown(map, { key: 'Enter' });
-  expect(onPlace).toHaveBeenCalledWith({ x: 57, y: 51 });
+  expect(onPlace).toHaveBeenCalledWith({ x: 57, y: 51 }, 'keys');
   fireEvent.keyDown(map, { key: 'Escape' });
   expect(store.crosshair.get()).toBeNull();
 });

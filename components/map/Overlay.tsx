@@ -2,10 +2,12 @@
 import { View } from 'react-native';
 import type { MapStore } from '@/components/map/mapStore';
 import type { Scene } from '@/components/map/scene';
+import type { ToolScene } from '@/components/map/toolScene';
 
 export interface OverlayProps {
   store: MapStore;
   scene: Scene;
+  tools?: ToolScene;
 }
 
 export function Overlay({ scene }: OverlayProps) {

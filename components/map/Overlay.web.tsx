@@ -1,5 +1,6 @@
 import { useCallback, useEffect, useMemo } from 'react';
 import { drawOverlay } from '@/components/map/drawOverlay';
+import { drawTools } from '@/components/map/drawTools';
 import type { OverlayProps } from '@/components/map/Overlay';
 import type { SceneColours } from '@/components/map/scene';
 import { useCanvasLayer } from '@/components/map/useCanvasLayer';
@@ -8,7 +9,7 @@ import { fonts, typeScale } from '@/components/ui/tokens';
 import type { Viewport } from '@/shared/image/viewport';
 
 /** Marks, rings and coordinates over the picture, on a canvas of their own: moving them never repaints the picture. */
-export function Overlay({ store, scene }: OverlayProps) {
+export function Overlay({ store, scene, tools }: OverlayProps) {
   const { color } = useTheme();
   const colours = useMemo<SceneColours>(
     () => ({
@@ -22,12 +23,20 @@ export function Overlay({ store, scene }: OverlayProps) {
     [color],
   );
   const draw = useCallback(
-    (ctx: CanvasRenderingContext2D, v: Viewport, ratio: number) =>
-      drawOverlay(ctx, scene, v, colours, ratio, store.crosshair.get()),
-    [scene, colours, store],
+    (ctx: CanvasRenderingContext2D, v: Viewport, ratio: number) => {
+      drawOverlay(ctx, scene, v, colours, ratio, store.crosshair.get());
+      if (!tools) return;
+      const draft = store.ring.get();
+      const ring = draft && tools.ring(draft);
+      drawTools(ctx, tools, { ring, lasso: store.lasso.get() }, v, colours);
+    },
+    [scene, tools, colours, store],
   );
   const { canvas, schedule } = useCanvasLayer(store.viewport, draw);
-  useEffect(() => store.crosshair.subscribe(schedule), [store, schedule]);
+  useEffect(() => {
+    const stops = [store.crosshair, store.lasso, store.ring].map((value) => value.subscribe(schedule));
+    return () => stops.forEach((stop) => stop());
+  }, [store, schedule]);
   return (
     <canvas
       ref={canvas}

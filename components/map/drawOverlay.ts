@@ -1,4 +1,6 @@
 import type { Scene, SceneColours, SceneMark } from '@/components/map/scene';
+import { drawFurniture } from '@/components/map/drawFurniture';
+import { disc, stroke, twice } from '@/components/map/strokes';
 import type { GraticuleLine } from '@/shared/image/graticule';
 import type { Path } from '@/shared/image/skyPath';
 import { imageRect, toScreen, type ImagePoint, type Viewport } from '@/shared/image/viewport';
@@ -23,6 +25,8 @@ export function drawOverlay(
   ctx.clip();
   for (const line of lines) stroke(ctx, line.path, v, colours.text, 1, 0.16);
   ctx.restore();
+  for (const line of scene.contours ?? [])
+    stroke(ctx, line.path, v, colours.text, line.strong ? 1.6 : 1, 0.75);
   if (scene.ownRing) {
     ctx.setLineDash([5, 4]);
     edged(ctx, scene.ownRing, v, colours.person, 1.5, colours.edge);
@@ -33,34 +37,10 @@ export function drawOverlay(
   for (const mark of scene.marks) if (mark.away !== 0) drawFaint(ctx, mark, v, colours);
   for (const mark of scene.marks) if (mark.away === 0) drawMark(ctx, mark, v, colours);
   drawLabels(ctx, lines, v, colours);
-  if (scene.beam) drawBeam(ctx, scene.beam, v, colours);
+  const beamRoom = scene.beam ? drawBeam(ctx, scene.beam, v, colours) : 0;
+  if (scene.furniture)
+    drawFurniture(ctx, scene.furniture(v), v, colours, { above: LABEL_ROOM, right: beamRoom });
   if (crosshair) drawCrosshair(ctx, toScreen(v, crosshair), colours);
-}
-
-function trace(ctx: CanvasRenderingContext2D, path: Path, v: Viewport): void {
-  ctx.beginPath();
-  for (const piece of path)
-    piece.forEach((point, i) => {
-      const { sx, sy } = toScreen(v, point);
-      if (i === 0) ctx.moveTo(sx, sy);
-      else ctx.lineTo(sx, sy);
-    });
-}
-
-function stroke(
-  ctx: CanvasRenderingContext2D,
-  path: Path,
-  v: Viewport,
-  colour: string,
-  width: number,
-  alpha = 1,
-): void {
-  trace(ctx, path, v);
-  ctx.globalAlpha = alpha;
-  ctx.strokeStyle = colour;
-  ctx.lineWidth = width;
-  ctx.stroke();
-  ctx.globalAlpha = 1;
 }
 
 /** A line with a dark edge, which holds on bright gas. */
@@ -76,19 +56,20 @@ function edged(
   stroke(ctx, path, v, colour, width);
 }
 
-function disc(ctx: CanvasRenderingContext2D, sx: number, sy: number, r: number): void {
-  ctx.beginPath();
-  ctx.arc(sx, sy, r, 0, 2 * Math.PI);
-}
-
 function drawMark(ctx: CanvasRenderingContext2D, mark: SceneMark, v: Viewport, colours: SceneColours): void {
   const { sx, sy } = toScreen(v, mark);
   disc(ctx, sx, sy, 5.5);
-  ctx.fillStyle = colours.person;
+  ctx.fillStyle = mark.unsure ? colours.edge : colours.person;
   ctx.fill();
   ctx.strokeStyle = colours.edge;
-  ctx.lineWidth = 2;
+  ctx.lineWidth = mark.unsure ? 4 : 2;
   ctx.stroke();
+  if (mark.unsure) {
+    ctx.strokeStyle = colours.person;
+    ctx.lineWidth = 2;
+    ctx.stroke();
+    ctx.strokeStyle = colours.edge;
+  }
   if (!mark.selected) return;
   disc(ctx, sx, sy, 10.5);
   ctx.lineWidth = 4;
@@ -124,15 +105,6 @@ function cross(ctx: CanvasRenderingContext2D, sx: number, sy: number, from: numb
   }
 }
 
-function twice(ctx: CanvasRenderingContext2D, colour: string, edge: string, width: number): void {
-  ctx.strokeStyle = edge;
-  ctx.lineWidth = width + 2.5;
-  ctx.stroke();
-  ctx.strokeStyle = colour;
-  ctx.lineWidth = width;
-  ctx.stroke();
-}
-
 function drawCentre(ctx: CanvasRenderingContext2D, at: { sx: number; sy: number }, c: SceneColours): void {
   cross(ctx, at.sx, at.sy, 0, 6);
   twice(ctx, c.model, c.edge, 1.5);
@@ -151,9 +123,8 @@ function drawLabels(
 ): void {
   ctx.font = c.font;
   ctx.textBaseline = 'middle';
-  for (const { axis, label, labelAt } of lines) {
+  for (const { axis, label: text, labelAt } of lines) {
     if (!labelAt) continue;
-    const text = `${label}°`;
     const width = ctx.measureText(text).width;
     const left =
       axis === 'lat' ? labelAt.sx + 6 : Math.min(Math.max(labelAt.sx - width / 2, 4), v.width - width - 4);
@@ -168,14 +139,15 @@ function drawLabels(
 /** Labels of longitudes stand along the lower edge; the beam stays above them. */
 const LABEL_ROOM = 32;
 
+/** Returns the room it takes from the right edge. */
 function drawBeam(
   ctx: CanvasRenderingContext2D,
   outline: readonly ImagePoint[],
   v: Viewport,
   c: SceneColours,
-): void {
+): number {
   const reach = Math.max(...outline.map((p) => Math.max(Math.abs(p.x), Math.abs(p.y)))) * v.scale;
-  if (reach < 1.5 || reach > Math.min(v.width, v.height) / 4) return;
+  if (reach < 1.5 || reach > Math.min(v.width, v.height) / 4) return 0;
   const rect = imageRect(v);
   const right = Math.min(v.width, rect.left + rect.width);
   const below = Math.min(v.height, rect.top + rect.height);
@@ -190,4 +162,5 @@ function drawBeam(
   ctx.fillStyle = c.shade;
   ctx.fill();
   twice(ctx, c.text, c.edge, 1.25);
+  return 2 * reach + 12;
 }

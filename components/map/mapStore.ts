@@ -1,5 +1,6 @@
+import type { RingDraft } from '@/shared/shell/suggest/ringDraft';
 import { valueStore, type ValueStore } from '@/hooks/valueStore';
-import type { ImagePoint, Viewport } from '@/shared/image/viewport';
+import type { ImagePoint, ScreenPoint, Viewport } from '@/shared/image/viewport';
 
 /** What moves with the pointer: kept outside React, one set a map. */
 export interface MapStore {
@@ -8,10 +9,19 @@ export interface MapStore {
   hover: ValueStore<ImagePoint | null>;
   /** Where Enter places a mark; shown while the map has the keyboard. */
   crosshair: ValueStore<ImagePoint | null>;
+  /** What a finger hides: it is shown in the magnifier. */
+  aim: ValueStore<ScreenPoint | null>;
+  /** The line that is being drawn around marks. */
+  lasso: ValueStore<readonly ImagePoint[] | null>;
+  /** The circle that is to become marks. */
+  ring: ValueStore<RingDraft | null>;
 }
 
 export const mapStore = (): MapStore => ({
   viewport: valueStore<Viewport | null>(null),
   hover: valueStore<ImagePoint | null>(null),
   crosshair: valueStore<ImagePoint | null>(null),
+  aim: valueStore<ScreenPoint | null>(null),
+  lasso: valueStore<readonly ImagePoint[] | null>(null),
+  ring: valueStore<RingDraft | null>(null),
 });

@@ -1,3 +1,4 @@
+import type { Furniture } from '@/components/map/furniture';
 import type { GraticuleLine } from '@/shared/image/graticule';
 import type { Path } from '@/shared/image/skyPath';
 import type { ImagePoint, Viewport } from '@/shared/image/viewport';
@@ -7,6 +8,8 @@ export interface SceneMark extends ImagePoint {
   /** Channels away from the one shown: 0 is this one's own mark, others are faint. */
   away: number;
   selected: boolean;
+  /** The person is not sure of it: drawn hollow. */
+  unsure?: boolean;
 }
 
 /** Everything that is drawn over a channel map; paths in image pixels. */
@@ -21,6 +24,10 @@ export interface Scene {
   centre: ImagePoint | null;
   /** The beam's outline about (0, 0), image pixels. */
   beam: readonly ImagePoint[] | null;
+  /** Scale bar and directions for a viewport. */
+  furniture?: ((viewport: Viewport) => Furniture) | null;
+  /** Contours of another picture of the same sky. */
+  contours?: readonly { path: Path; strong: boolean }[];
 }
 
 /** The colours of what lies over an image; the same in both themes, since image panels are dark in both. */

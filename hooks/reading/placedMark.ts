@@ -1,13 +1,7 @@
 import type { Mark } from '@/shared/contract/readings';
 
 /** A rim mark with an identity: what the screen selects, moves and merges. */
-export interface PlacedMark {
-  id: string;
-  channel: number;
-  x: number;
-  y: number;
-  sigma?: number;
-}
+export type PlacedMark = Mark & { id: string };
 
 /** Marks as they come from the server; one that came without an identity (through a script) takes one from its place. */
 export function placed(marks: readonly Mark[]): PlacedMark[] {
@@ -22,7 +16,33 @@ export function placed(marks: readonly Mark[]): PlacedMark[] {
 }
 
 export const sameMark = (a: PlacedMark, b: PlacedMark): boolean =>
-  a.id === b.id && a.channel === b.channel && a.x === b.x && a.y === b.y && a.sigma === b.sigma;
+  a.id === b.id &&
+  a.channel === b.channel &&
+  a.x === b.x &&
+  a.y === b.y &&
+  a.sigma === b.sigma &&
+  a.unsure === b.unsure &&
+  a.note === b.note &&
+  a.placed === b.placed;
+
+/** What a person says of a mark besides where it is. An error or a note of null, and unsure of false, take it away. */
+export interface MarkSaid {
+  sigma?: number | null;
+  unsure?: boolean;
+  note?: string | null;
+}
+
+export function described({ sigma, unsure, note, ...mark }: PlacedMark, said: MarkSaid): PlacedMark {
+  const error = said.sigma === undefined ? sigma : (said.sigma ?? undefined);
+  const doubt = said.unsure === undefined ? unsure : said.unsure || undefined;
+  const text = said.note === undefined ? note : said.note?.trim() || undefined;
+  return {
+    ...mark,
+    ...(error !== undefined && { sigma: error }),
+    ...(doubt && { unsure: doubt }),
+    ...(text !== undefined && { note: text }),
+  };
+}
 
 /** The same marks, in whatever order. */
 export function sameMarks(a: readonly PlacedMark[], b: readonly PlacedMark[]): boolean {

@@ -23,7 +23,7 @@ const run = (state: ReadingState, ...actions: ReadingAction[]) => actions.reduce
 const ready = (...marks: PlacedMark[]) =>
   run(EMPTY_READING, { type: 'loaded', reading: stored(3, ...marks), draft: null });
 const ids = (state: ReadingState) => state.marks.map((m) => m.id).join('');
-const add = (id: string, x?: number): ReadingAction => ({ type: 'add', mark: mark(id, x) });
+const add = (id: string, x?: number): ReadingAction => ({ type: 'add', marks: [mark(id, x)] });
 
 describe('undo and redo', () => {
   test('take back and bring back own steps, in place', () => {
@@ -39,19 +39,27 @@ describe('undo and redo', () => {
   });
 
   test('a drag is one step', () => {
-    const to = (x: number): ReadingAction => ({ type: 'move', id: 'a', x, y: 2, gesture: 'drag 1' });
+    const to = (x: number): ReadingAction => ({
+      type: 'move',
+      to: [{ id: 'a', x, y: 2 }],
+      gesture: 'drag 1',
+    });
     let s = run(ready(mark('a')), to(2), to(3), to(4));
     expect(s.undo).toHaveLength(1);
     s = run(s, { type: 'undo' });
     expect(s.marks[0]).toEqual(mark('a', 1));
     expect(run(s, { type: 'redo' }).marks[0]).toEqual(mark('a', 4));
-    const again = run(s, { type: 'redo' }, { type: 'move', id: 'a', x: 9, y: 2, gesture: 'drag 1' });
+    const again = run(
+      s,
+      { type: 'redo' },
+      { type: 'move', to: [{ id: 'a', x: 9, y: 2 }], gesture: 'drag 1' },
+    );
     expect(again.undo).toHaveLength(2);
   });
 
   test('nothing changes without a change', () => {
     const s = ready(mark('a'));
-    expect(run(s, { type: 'move', id: 'a', x: 1, y: 2, gesture: null })).toBe(s);
+    expect(run(s, { type: 'move', to: [{ id: 'a', x: 1, y: 2 }], gesture: null })).toBe(s);
     expect(run(s, { type: 'remove', ids: ['z'] })).toBe(s);
     expect(run(s, { type: 'undo' })).toBe(s);
     expect(run(s, add('a'))).toBe(s);
@@ -102,7 +110,7 @@ describe('saving', () => {
 describe('two sides', () => {
   const conflicted = run(
     ready(mark('a')),
-    { type: 'move', id: 'a', x: 8, y: 2, gesture: null },
+    { type: 'move', to: [{ id: 'a', x: 8, y: 2 }], gesture: null },
     add('b'),
     { type: 'sending' },
     { type: 'conflicted', stored: stored(7, mark('a', 1), mark('t')) },

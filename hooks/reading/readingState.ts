@@ -1,5 +1,14 @@
-import { placed, sameMark, sameMarks, union, type PlacedMark } from '@/hooks/reading/placedMark';
+import {
+  described,
+  placed,
+  sameMark,
+  sameMarks,
+  union,
+  type MarkSaid,
+  type PlacedMark,
+} from '@/hooks/reading/placedMark';
 import { applied, difference, reversed, stacked, type Change, type Step } from '@/hooks/reading/readingSteps';
+import type { ReadingHistory } from '@/hooks/reading/readingHistory';
 import type { ProblemBody } from '@/shared/contract/problem';
 import type { Reading } from '@/shared/contract/readings';
 
@@ -54,10 +63,11 @@ export const EMPTY_READING: ReadingState = {
 };
 
 export type ReadingAction =
-  | { type: 'loaded'; reading: Reading; draft: ReadingDraftCopy | null }
+  | { type: 'loaded'; reading: Reading; draft: ReadingDraftCopy | null; history?: ReadingHistory | null }
   | { type: 'arrived'; reading: Reading }
-  | { type: 'add'; mark: PlacedMark }
-  | { type: 'move'; id: string; x: number; y: number; gesture: string | null }
+  | { type: 'add'; marks: readonly PlacedMark[] }
+  | { type: 'move'; to: readonly { id: string; x: number; y: number }[]; gesture: string | null }
+  | { type: 'describe'; ids: readonly string[]; said: MarkSaid; gesture: string | null }
   | { type: 'remove'; ids: readonly string[] }
   | { type: 'undo' }
   | { type: 'redo' }
@@ -72,26 +82,36 @@ export type ReadingAction =
 export function readingReducer(state: ReadingState, action: ReadingAction): ReadingState {
   switch (action.type) {
     case 'loaded':
-      return loaded(action.reading, action.draft);
+      return remembering(loaded(action.reading, action.draft), action.history ?? null);
     case 'arrived': {
       // News from another window: taken over only where nothing made here would be lost.
       const { reading } = action;
       if (!state.ready || reading.revision <= state.revision || isDirty(state) || state.conflict)
         return state;
-      return { ...state, ...known(reading), marks: placed(reading.marks) };
+      const marks = placed(reading.marks);
+      // The steps of undo lead from what was here before to other marks than those that came.
+      const steps = sameMarks(marks, state.marks) ? {} : { undo: [], redo: [] };
+      return { ...state, ...known(reading), ...steps, marks };
     }
-    case 'add':
-      if (state.marks.some((mark) => mark.id === action.mark.id)) return state;
-      return stepped(state, [
-        { id: action.mark.id, before: null, after: action.mark, index: state.marks.length },
-      ]);
+    case 'add': {
+      const here = new Set(state.marks.map((mark) => mark.id));
+      const changes = action.marks
+        .filter((mark) => !here.has(mark.id))
+        .map((mark, i) => ({ id: mark.id, before: null, after: mark, index: state.marks.length + i }));
+      return changes.length > 0 ? stepped(state, changes) : state;
+    }
     case 'move': {
-      const index = state.marks.findIndex((mark) => mark.id === action.id);
-      const before = state.marks[index];
-      if (!before) return state;
-      const after = { ...before, x: action.x, y: action.y };
-      if (sameMark(before, after)) return state;
-      return stepped(state, [{ id: action.id, before, after, index }], action.gesture);
+      const to = new Map(action.to.map((place) => [place.id, place]));
+      return changed(state, action.gesture, (mark) => {
+        const place = to.get(mark.id);
+        return place ? { ...mark, x: place.x, y: place.y } : mark;
+      });
+    }
+    case 'describe': {
+      const ids = new Set(action.ids);
+      return changed(state, action.gesture, (mark) =>
+        ids.has(mark.id) ? described(mark, action.said) : mark,
+      );
     }
     case 'remove': {
       const gone = new Set(action.ids);
@@ -154,11 +174,17 @@ function loaded(reading: Reading, draft: ReadingDraftCopy | null): ReadingState 
   const fresh: ReadingState = { ...EMPTY_READING, ready: true, ...known(reading), marks: stored };
   if (!draft || sameMarks(draft.marks, stored)) return fresh;
   // The draft goes on from what is stored, or someone has saved since: then a person must choose.
-  const drafted = { ...fresh, marks: draft.marks, edits: 1 };
+  const drafted = { ...fresh, marks: draft.marks, edits: difference(stored, draft.marks).length };
   const arrived = draft.sent != null && sameMarks(draft.sent, stored);
   if (draft.revision === reading.revision || arrived) return drafted;
   return { ...drafted, revision: draft.revision, conflict: reading };
 }
+
+/** With the undo and redo of the last visit, where they lead to and from just these marks. */
+const remembering = (state: ReadingState, history: ReadingHistory | null): ReadingState =>
+  history && !state.conflict && sameMarks(history.marks, state.marks)
+    ? { ...state, undo: history.undo, redo: history.redo }
+    : state;
 
 function edited(state: ReadingState, marks: readonly PlacedMark[]): ReadingState {
   return { ...state, marks, edits: state.edits + 1, problem: null };
@@ -171,6 +197,19 @@ function stepped(
 ): ReadingState {
   const undo = stacked(state.undo, { changes, gesture });
   return { ...edited(state, applied(state.marks, changes)), undo, redo: [] };
+}
+
+/** The same marks, some of them otherwise than before, as one step. */
+function changed(
+  state: ReadingState,
+  gesture: string | null,
+  change: (mark: PlacedMark) => PlacedMark,
+): ReadingState {
+  const changes = state.marks.flatMap((before, index) => {
+    const after = change(before);
+    return sameMark(before, after) ? [] : [{ id: before.id, before, after, index }];
+  });
+  return changes.length > 0 ? stepped(state, changes, gesture) : state;
 }
 
 function settled(state: ReadingState, reading: Reading): ReadingState {

@@ -3,6 +3,7 @@ import { advice } from '@/hooks/reading/advice';
 import type { PlacedMark } from '@/hooks/reading/placedMark';
 import { readingByChannel, skyMarks, type ChannelReading, type SkyRimMark } from '@/hooks/reading/skyMarks';
 import { isProblem, Problem } from '@/shared/contract/problem';
+import type { RingParameters } from '@/shared/shell/channelCurve';
 import { liveFit } from '@/shared/shell/fit';
 import { LEAST_CHANNELS, LEAST_MARKS } from '@/shared/shell/fitInput';
 import type { FitResult } from '@/shared/shell/fitResult';
@@ -23,13 +24,14 @@ export function useLiveFit(
   wcs: Wcs,
   channelWidth: number,
   range: readonly [number, number],
+  start: RingParameters | null = null,
 ): LiveFit {
   // The map follows the finger first; the fit follows when there is time.
   const deferred = useDeferredValue(marks);
   return useMemo(() => {
     const onSky = skyMarks(deferred, wcs);
     const readings = readingByChannel(onSky);
-    const { fit, problem } = fitted(onSky, readings.length, channelWidth);
+    const { fit, problem } = fitted(onSky, readings.length, channelWidth, start);
     const value = (name: string) => fit?.parameters[name]?.value ?? NaN;
     const model = fit ? { vSys: value('vSys'), vExp: value('vExp') } : null;
     const sentence = advice({
@@ -41,17 +43,18 @@ export function useLiveFit(
       channelWidth,
     });
     return { marks: onSky, readings, fit, problem, sentence };
-  }, [deferred, wcs, channelWidth, range]);
+  }, [deferred, wcs, channelWidth, range, start]);
 }
 
 function fitted(
   marks: readonly SkyRimMark[],
   channels: number,
   channelWidth: number,
+  start: RingParameters | null,
 ): { fit: FitResult | null; problem: Problem | null } {
   if (marks.length < LEAST_MARKS || channels < LEAST_CHANNELS) return { fit: null, problem: null };
   try {
-    return { fit: liveFit({ marks, channelWidth }), problem: null };
+    return { fit: liveFit({ marks, channelWidth }, start ? { start } : {}), problem: null };
   } catch (error) {
     if (isProblem(error)) return { fit: null, problem: error };
     // A fault of ours must not take the marks from under the person's hand.

@@ -3,6 +3,7 @@ import { useSWRConfig } from 'swr';
 import { api, asProblem, type ApiProblem } from '@/hooks/api';
 import { keys } from '@/hooks/keys';
 import { draftKey, keepDraft, readDraft } from '@/hooks/reading/readingDraft';
+import { historyKey, keepHistory, readHistory } from '@/hooks/reading/readingHistory';
 import {
   draftOf,
   EMPTY_READING,
@@ -58,7 +59,8 @@ export function useReading(shellId: string | null, cubeId: string, personId: str
     else {
       begun.current = shellId;
       const draft = personId ? readDraft(draftKey(personId, data.shellId)) : null;
-      dispatch({ type: 'loaded', reading: data, draft });
+      const history = personId ? readHistory(historyKey(personId, data.shellId)) : null;
+      dispatch({ type: 'loaded', reading: data, draft, history });
     }
   }, [data, shellId, personId]);
   useEffect(
@@ -70,6 +72,7 @@ export function useReading(shellId: string | null, cubeId: string, personId: str
   );
 
   useDraft(personId, state, cubeId);
+  useHistory(personId, state);
 
   const send = useCallback(async (): Promise<void> => {
     const before = now.current;
@@ -144,6 +147,21 @@ const put = (shellId: string, cubeId: string, state: ReadingState): Promise<Read
     signal: AbortSignal.timeout(ANSWER_MS),
   });
 };
+
+/** Keep undo and redo in the browser, so that they survive a reload. */
+function useHistory(personId: string | null, { ready, shellId, marks, undo, redo }: ReadingState): void {
+  const key = personId && shellId && ready ? historyKey(personId, shellId) : null;
+  useEffect(() => {
+    if (!key) return;
+    const keep = () => keepHistory(key, { marks, undo, redo });
+    const timer = setTimeout(keep, 150);
+    globalThis.addEventListener?.('pagehide', keep);
+    return () => {
+      clearTimeout(timer);
+      globalThis.removeEventListener?.('pagehide', keep);
+    };
+  }, [key, marks, undo, redo]);
+}
 
 /**
  * Keep unsaved marks in the browser: a moment after each change, when the page may go away, and when the person turns

@@ -69,8 +69,8 @@ test('a row of taps is one save, and the draft goes once it is safe', async () =
   const srv = server();
   const { result } = open();
   await ready(result);
-  act(() => result.current.dispatch({ type: 'add', mark: mark('a') }));
-  act(() => result.current.dispatch({ type: 'add', mark: mark('b') }));
+  act(() => result.current.dispatch({ type: 'add', marks: [mark('a')] }));
+  act(() => result.current.dispatch({ type: 'add', marks: [mark('b')] }));
   expect(result.current.status.kind).toBe('saving');
   await waitFor(() => expect(readDraft(draftKey('p1', 's1'))?.marks).toHaveLength(2));
   await waitFor(() => expect(result.current.status.kind).toBe('saved'), { timeout: 3000 });
@@ -84,7 +84,7 @@ test('with the line down marks wait here, survive a reload, and go out when it i
   const first = open();
   await ready(first.result);
   srv.cut = true;
-  act(() => first.result.current.dispatch({ type: 'add', mark: mark('a') }));
+  act(() => first.result.current.dispatch({ type: 'add', marks: [mark('a')] }));
   await waitFor(() => expect(first.result.current.status).toEqual({ kind: 'offline', waiting: 1 }), {
     timeout: 3000,
   });
@@ -102,7 +102,7 @@ test('a newer version elsewhere shows both sides; keeping both saves the union',
   const { result } = open();
   await ready(result);
   srv.stored = { ...srv.stored, marks: [mark('z')], revision: 9 };
-  act(() => result.current.dispatch({ type: 'add', mark: mark('a') }));
+  act(() => result.current.dispatch({ type: 'add', marks: [mark('a')] }));
   await waitFor(() => expect(result.current.status.kind).toBe('conflict'), { timeout: 3000 });
   expect(result.current.state.conflict?.marks).toHaveLength(1);
   act(() => result.current.dispatch({ type: 'resolve', keep: 'both' }));
@@ -115,7 +115,7 @@ test('flush saves at once and names the reading; with nothing to save it answers
   const srv = server();
   const { result } = open();
   await ready(result);
-  act(() => result.current.dispatch({ type: 'add', mark: mark('a') }));
+  act(() => result.current.dispatch({ type: 'add', marks: [mark('a')] }));
   let id: string | null = null;
   await act(async () => {
     id = await result.current.flush();
@@ -132,7 +132,7 @@ test('turning to another shell never saves one shell’s marks under the other',
   const srv = server();
   const view = open();
   await ready(view.result);
-  act(() => view.result.current.dispatch({ type: 'add', mark: mark('a') }));
+  act(() => view.result.current.dispatch({ type: 'add', marks: [mark('a')] }));
   const before = srv.stored;
   srv.stored = { ...srv.stored, shellId: 's2', id: 'r2', marks: [], revision: 0 };
   view.rerender({ shell: 's2' });

@@ -52,7 +52,7 @@ export function suggestMarks(task: SuggestionTask): Suggestion[] {
   };
   const found = traceChannel(
     {
-      shape: { nx, ny },
+      shape: { nx, ny, channels: channel + 1 },
       wcs,
       edge: 'ridge',
       noise: planeNoise(plane, beamDeg / pixelDeg),

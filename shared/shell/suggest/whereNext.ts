@@ -103,6 +103,9 @@ function addInformation(sum: Float64Array, marks: readonly SkyMark[], task: Next
     channel: new Int32Array(marks.length),
     velocity: Float64Array.of(marks[0]!.velocity),
     width: channelWidth,
+    block: new Int32Array(marks.length),
+    blocks: 1,
+    unseen: null,
   };
   const frame = frameAt(set, unitVector({ lon: shell.l, lat: shell.b }));
   const p = Float64Array.of(0, 0, shell.theta * DEGREE, shell.vSys, Math.log(shell.vExp));
