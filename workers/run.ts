@@ -9,6 +9,7 @@ import { fit } from './tasks/fit';
 import { ingest } from './tasks/ingest';
 import { mail } from './tasks/mail';
 import type { Hands } from './tasks/task';
+import { trace } from './tasks/trace';
 
 const SWEEP_MS = 5000;
 
@@ -45,7 +46,12 @@ export async function startWorker(parts: Parts): Promise<WorkerProcess> {
       if (level === 'error' || level === 'warning') parts.log.warn({ ...meta, queue: true }, message);
       else parts.log.debug({ queue: true }, message);
     }),
-    taskList: { ingest: ingest(parts, hands), fit: fit(parts, hands), mail: mail(parts, hands) },
+    taskList: {
+      ingest: ingest(parts, hands),
+      fit: fit(parts, hands),
+      trace: trace(parts, hands),
+      mail: mail(parts, hands),
+    },
   });
   const look = () =>
     sweep(parts).catch((error) => parts.log.warn({ error: error.message }, 'the sweep failed'));

@@ -1,9 +1,8 @@
 import { MessageChannel } from 'node:worker_threads';
 import type Piscina from 'piscina';
-import type { FitOutcome, FrozenMark } from '@/shared/contract/fits';
 import { Problem, type ProblemType } from '@/shared/contract/problem';
 import type { CubeThreads } from '@/server/services/passes';
-import type { FitSolver } from '@/server/services/runFit';
+import type { RimTracer } from '@/server/services/runTrace';
 import type { ThreadAnswer } from './threadTasks';
 
 /** The value a thread found, or the problem it met, thrown as it was there. */
@@ -13,12 +12,20 @@ function unpack<T>(answer: ThreadAnswer<T>): T {
   throw new Problem(type.replace('/problems/', '') as ProblemType, detail, extra);
 }
 
-/** Run a task that tells of its progress over a port of its own. */
-async function withProgress<T>(
+/** Run a task of this name on a thread. */
+export const onThread = async <T>(
   pool: Piscina,
   name: string,
   task: object,
-  onStep: (steps: number) => void,
+  signal: AbortSignal,
+): Promise<T> => unpack((await pool.run(task, { name, signal })) as ThreadAnswer<T>);
+
+/** The same for a task that tells of its progress over a port of its own. */
+export async function withProgress<T>(
+  pool: Piscina,
+  name: string,
+  task: object,
+  onStep: (step: number) => void,
   signal: AbortSignal,
 ): Promise<T> {
   const { port1, port2 } = new MessageChannel();
@@ -34,24 +41,11 @@ async function withProgress<T>(
 
 export const cubeThreads = (pool: Piscina): CubeThreads => ({
   rearrange: (task, onStep, signal) => withProgress(pool, 'rearrange', task, onStep, signal),
-  sample: async (task, signal) =>
-    unpack((await pool.run(task, { name: 'sample', signal })) as ThreadAnswer<number | null>),
+  sample: (task, signal) => onThread(pool, 'sample', task, signal),
   reduce: (task, onChannel, signal) => withProgress(pool, 'reduce', task, onChannel, signal),
 });
 
-/** The rings of a fit carry velocities; the channel they were marked on comes from the frozen marks. */
-function withChannels(outcome: FitOutcome, marks: FrozenMark[]): FitOutcome {
-  const channelAt = (velocity: number) =>
-    marks.reduce((best, m) =>
-      Math.abs(m.velocity - velocity) < Math.abs(best.velocity - velocity) ? m : best,
-    ).channel;
-  return { ...outcome, rings: outcome.rings.map((ring) => ({ ...ring, channel: channelAt(ring.velocity) })) };
-}
-
-export const solver =
-  (pool: Piscina): FitSolver =>
-  async (task, signal) =>
-    withChannels(
-      unpack((await pool.run(task, { name: 'fit', signal })) as ThreadAnswer<FitOutcome>),
-      task.frozen.marks,
-    );
+export const tracer =
+  (pool: Piscina): RimTracer =>
+  (task, onProgress, signal) =>
+    withProgress(pool, 'trace', task, onProgress, signal);

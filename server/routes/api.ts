@@ -5,12 +5,14 @@ import { MemberChange, MemberDraft, TokenDraft, type Me } from '@/shared/contrac
 import { ReadingDraft } from '@/shared/contract/readings';
 import { RegionChange, RegionDraft } from '@/shared/contract/regions';
 import { CatalogueQuery, DistanceDraft, ShellChange, ShellDraft } from '@/shared/contract/shells';
+import { TraceDraft } from '@/shared/contract/traces';
 import { contextOf } from '../auth/requests';
 import { catalogue, everyRow } from '../services/catalogue';
 import { catalogueCsv } from '../services/catalogueCsv';
 import { chooseSource, overrideCube } from '../services/cubeOverrides';
 import * as cubes from '../services/cubes';
 import * as distances from '../services/distances';
+import { drawsOf } from '../services/fitDraws';
 import * as fits from '../services/fits';
 import * as members from '../services/members';
 import * as readings from '../services/readings';
@@ -18,6 +20,7 @@ import * as regions from '../services/regions';
 import * as shells from '../services/shells';
 import { spectrumOf } from '../services/spectra';
 import * as tokens from '../services/tokens';
+import * as traces from '../services/traces';
 import { uploadsOfRegion } from '../services/uploads';
 import { idOf, parse } from './problems';
 import { planeRoutes } from './planes';
@@ -175,11 +178,28 @@ export function apiRoutes(): Router {
   api.get('/fits/:fitId/marks', async (req, res) => {
     res.json(await fits.frozenMarksOf(contextOf(req), idOf(req, 'fitId')));
   });
+  api.get('/fits/:fitId/draws', async (req, res) => {
+    res.json(await drawsOf(contextOf(req), idOf(req, 'fitId')));
+  });
   api.post('/fits/:fitId/cancel', async (req, res) => {
     res.status(202).json(await fits.cancelFit(contextOf(req), idOf(req, 'fitId')));
   });
   api.post('/fits/:fitId/retry', async (req, res) => {
     res.status(202).json(await fits.retryFit(contextOf(req), idOf(req, 'fitId')));
+  });
+
+  api.get('/shells/:shellId/traces', async (req, res) => {
+    res.json(list(await traces.tracesOfShell(contextOf(req), idOf(req, 'shellId'))));
+  });
+  api.post('/shells/:shellId/traces', async (req, res) => {
+    const draft = parse(TraceDraft, req.body);
+    res.status(202).json(await traces.startTrace(contextOf(req), idOf(req, 'shellId'), draft));
+  });
+  api.get('/traces/:traceId', async (req, res) => {
+    res.json(await traces.readTrace(contextOf(req), idOf(req, 'traceId')));
+  });
+  api.post('/traces/:traceId/cancel', async (req, res) => {
+    res.status(202).json(await traces.cancelTrace(contextOf(req), idOf(req, 'traceId')));
   });
 
   api.get('/shells/:shellId/distances', async (req, res) => {

@@ -1,22 +1,37 @@
 import type { CubeHead } from '@/shared/fits/cubeHead';
 import type { ByteSource } from '../files/byteSource';
+import type { PixelPlace } from '../files/pixelFile';
 import { readSpectra, readSpectraFromPlanes, type SpectrumVisitor } from '../files/spectra';
 import type { CubeRow } from '../store/cubes';
 import type { Parts } from './context';
 
 type Ready = CubeRow & { head: CubeHead };
 
-/** Read from where the cube's channels are one piece each: its own file, or the copy that ingest made. */
+/** Where the cube's channels are one piece each: its own file, or the copy that ingest made. */
+function planesOf({ planesKey, fileKey, layout, head }: Ready): { key: string; head: CubeHead } {
+  const copied = planesKey !== null && layout?.planes;
+  return copied
+    ? { key: planesKey, head: { ...head, ...copied, container: 'plain' } }
+    : { key: fileKey, head };
+}
+
+/** The same for a thread, which opens the file itself. */
+export function planesPlace(
+  { config: { dataDir, objectStore } }: Pick<Parts, 'config'>,
+  row: Ready,
+): { place: PixelPlace; head: CubeHead } {
+  const { key, head } = planesOf(row);
+  return { place: { files: { dataDir, objectStore }, key }, head };
+}
+
 export async function withPlanes<T>(
   parts: Pick<Parts, 'cubeFiles'>,
   row: Ready,
   work: (source: ByteSource, head: CubeHead) => Promise<T>,
 ): Promise<T> {
-  const copied = row.planesKey !== null && row.layout?.planes;
-  const source = await parts.cubeFiles.open(copied ? row.planesKey! : row.fileKey);
-  return work(source, copied ? { ...row.head, ...copied, container: 'plain' } : row.head).finally(() =>
-    source.close(),
-  );
+  const { key, head } = planesOf(row);
+  const source = await parts.cubeFiles.open(key);
+  return work(source, head).finally(() => source.close());
 }
 
 /** The spectra of some pixels (y · nx + x, each once), from the copy in tiles where there is one. */

@@ -1,7 +1,8 @@
 import { randomUUID } from 'node:crypto';
 import type { Fit, FitDraft, FrozenMark, FrozenMarks } from '@/shared/contract/fits';
 import type { Action } from '@/shared/contract/permissions';
-import { Problem } from '@/shared/contract/problem';
+import { isProblem, Problem } from '@/shared/contract/problem';
+import { readConstraints } from '@/shared/shell/constraints';
 import { readMarks } from '@/shared/shell/fitInput';
 import { buildWcs } from '@/shared/sky/wcs';
 import { isoTime, isoTimeOrNull, type Db } from '../store/db';
@@ -17,11 +18,13 @@ import {
 } from '../store/fits';
 import { addJob } from '../store/queue';
 import { findReadingById, type ReadingRow } from '../store/readings';
+import { findTrace } from '../store/traces';
 import { notFound, requirePermission } from './access';
 import { isAdoptable } from './adoption';
 import { announce } from './announce';
 import type { Context } from './context';
 import { cubeFor } from './cubes';
+import { engineInput } from './engineInput';
 import { shellFor } from './shells';
 
 const toFit = (row: FitRow): Fit => ({
@@ -32,10 +35,10 @@ const toFit = (row: FitRow): Fit => ({
   cubeId: row.cubeId,
   model: row.model,
   status: row.status,
-  progress: null,
-  activity: null,
+  progress: row.progress,
+  activity: row.activity,
   options: row.options,
-  traceId: null,
+  traceId: row.traceId,
   problem: row.problem,
   adopted: row.adopted,
   adoptable: row.outcome !== null && isAdoptable(row.outcome),
@@ -44,7 +47,7 @@ const toFit = (row: FitRow): Fit => ({
   finishedAt: isoTimeOrNull(row.finishedAt),
 });
 
-async function fitFor(ctx: Context, id: string, action: Action): Promise<FitRow> {
+export async function fitFor(ctx: Context, id: string, action: Action): Promise<FitRow> {
   const row = await findFit(ctx.db, id);
   if (!row) throw notFound('fit');
   requirePermission(ctx.actor, action, row.teamId, 'fit');
@@ -74,7 +77,7 @@ export async function startFit(ctx: Context, shellId: string, draft: FitDraft): 
   const reading = await findReadingById(ctx.db, draft.readingId);
   if (!reading || reading.shellId !== shellId) throw notFound('reading');
   const frozen = await freeze(ctx, reading);
-  readMarks({ ...engineInput(frozen), vSys: draft.options.vSys }, draft.model);
+  refuseUnfittable(frozen, draft);
   const id = randomUUID();
   await ctx.db.transaction(async (trx) => {
     await insertFit(trx, {
@@ -86,6 +89,7 @@ export async function startFit(ctx: Context, shellId: string, draft: FitDraft): 
       options: draft.options,
       marks: frozen,
       readingRevision: reading.revision,
+      traceId: reading.traceId,
       createdBy: ctx.actor.id,
     });
     await queueFit(trx, id);
@@ -107,6 +111,18 @@ export async function startFit(ctx: Context, shellId: string, draft: FitDraft): 
   return readFit(ctx, id);
 }
 
+/** The fields of the request lie one step deeper than those of the engine. */
+function refuseUnfittable(frozen: FrozenReading, { model, options }: FitDraft): void {
+  const input = engineInput(frozen, options);
+  try {
+    readConstraints(model, input.constraints, input.vSys);
+    readMarks(input, model);
+  } catch (error) {
+    if (!isProblem(error) || !/^(constraints|vSys)\b/.test(error.extra.field ?? '')) throw error;
+    throw new Problem(error.type, error.detail, { ...error.extra, field: `options.${error.extra.field}` });
+  }
+}
+
 /** The marks as places on the sky: what a fit needs, and what remains if the cube goes. */
 async function freeze(ctx: Context, reading: ReadingRow): Promise<FrozenReading> {
   const cube = await cubeFor(ctx, reading.cubeId, 'cube.read');
@@ -123,18 +139,10 @@ async function freeze(ctx: Context, reading: ReadingRow): Promise<FrozenReading>
       );
     return { ...mark, ...place, velocity: wcs.velocityOf(mark.channel), sigma: mark.sigma ?? null };
   });
-  return { channelWidth: wcs.velocityStep, marks };
+  const trace = reading.traceId === null ? null : (await findTrace(ctx.db, reading.traceId))!.outcome!;
+  const traced = trace && { beamDeg: trace.beamDeg, faint: trace.faint };
+  return { channelWidth: wcs.velocityStep, marks, ...(traced && { traced }) };
 }
-
-export const engineInput = (frozen: FrozenReading) => ({
-  channelWidth: frozen.channelWidth,
-  marks: frozen.marks.map(({ l, b, velocity, sigma }) => ({
-    l,
-    b,
-    velocity,
-    ...(sigma !== null && { sigma }),
-  })),
-});
 
 export const queueFit = (db: Db, fitId: string) => addJob(db, 'fit', { fitId }, `fit:${fitId}`);
 

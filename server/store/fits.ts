@@ -6,6 +6,8 @@ import { noJobFor } from './queue';
 export interface FrozenReading {
   channelWidth: number;
   marks: FrozenMark[];
+  /** Of a traced rim: what widens its error bars. */
+  traced?: { beamDeg: number; faint: boolean };
 }
 export interface FitRow {
   id: string;
@@ -17,8 +19,11 @@ export interface FitRow {
   model: ModelName;
   options: FitOptions;
   status: 'queued' | 'running' | 'done' | 'failed' | 'cancelled';
+  progress: number | null;
+  activity: string | null;
   outcome: FitOutcome | null;
   problem: ProblemBody | null;
+  traceId: string | null;
   adopted: boolean;
   createdById: string | null;
   createdByName: string | null;
@@ -29,7 +34,7 @@ export interface FitRow {
 const select = `
   select fits.id, regions.team_id as "teamId", regions.id as "regionId", fits.shell_id as "shellId",
          fits.reading_id as "readingId", fits.cube_id as "cubeId", fits.model, fits.options, fits.status,
-         fits.outcome, fits.problem, coalesce(shells.adopted_fit_id = fits.id, false) as adopted,
+         fits.progress, fits.activity, fits.outcome, fits.problem, fits.trace_id as "traceId", coalesce(shells.adopted_fit_id = fits.id, false) as adopted,
          fits.created_by as "createdById", people.name as "createdByName", fits.created_at as "createdAt",
          fits.finished_at as "finishedAt"
   from fits
@@ -50,6 +55,13 @@ export async function findFrozenReading(db: Db, fitId: string): Promise<FrozenRe
   )[0]?.marks;
 }
 
+/** The draws of the bootstrap: float64, little-endian, one row of the parameters each. */
+export async function findDraws(db: Db, fitId: string): Promise<Buffer | null> {
+  return (
+    await rows<{ draws: Buffer | null }>(db, 'select fits.draws from fits where fits.id = ?', [fitId])
+  )[0]!.draws;
+}
+
 export const insertFit = (
   db: Db,
   fit: {
@@ -61,6 +73,7 @@ export const insertFit = (
     options: FitOptions;
     marks: FrozenReading;
     readingRevision: number;
+    traceId: string | null;
     createdBy: string;
   },
 ) =>
@@ -73,28 +86,35 @@ export const insertFit = (
     options: JSON.stringify(fit.options),
     marks: JSON.stringify(fit.marks),
     reading_revision: fit.readingRevision,
+    trace_id: fit.traceId,
     created_by: fit.createdBy,
   });
 
-export const FIT_LEASE_SECONDS = 30;
+const LEASE_SECONDS = 30;
 
 export async function claimFit(db: Db, id: string, holder: string): Promise<boolean> {
   const found = await rows(
     db,
-    `update fits set status = 'running', lease_holder = ?, lease_until = now() + make_interval(secs => ?)
+    `update fits set status = 'running', progress = 0, lease_holder = ?,
+            lease_until = now() + make_interval(secs => ?)
      where id = ? and (status = 'queued' or (status = 'running' and lease_until < now())) returning id`,
-    [holder, FIT_LEASE_SECONDS, id],
+    [holder, LEASE_SECONDS, id],
   );
   return found.length > 0;
 }
 
-/** False: cancelled or taken over; stop. */
-export async function renewFit(db: Db, id: string, holder: string): Promise<boolean> {
+/** Renew the lease and say how far it is. False: cancelled or taken over; stop. */
+export async function renewFit(
+  db: Db,
+  id: string,
+  holder: string,
+  { progress, activity }: { progress: number; activity: string },
+): Promise<boolean> {
   const found = await rows(
     db,
-    `update fits set lease_until = now() + make_interval(secs => ?)
+    `update fits set lease_until = now() + make_interval(secs => ?), progress = ?, activity = ?
      where id = ? and lease_holder = ? and status = 'running' returning id`,
-    [FIT_LEASE_SECONDS, id, holder],
+    [LEASE_SECONDS, progress, activity, id, holder],
   );
   return found.length > 0;
 }
@@ -104,17 +124,18 @@ export async function finishFit(
   db: Db,
   id: string,
   holder: string,
-  result: { outcome: FitOutcome } | { problem: ProblemBody },
+  result: { outcome: FitOutcome; draws: Buffer | null } | { problem: ProblemBody },
 ): Promise<boolean> {
   const done = 'outcome' in result;
   const found = await rows(
     db,
-    `update fits set status = ?, outcome = ?::jsonb, problem = ?::jsonb, finished_at = now(), lease_holder = null,
-            lease_until = null
+    `update fits set status = ?, outcome = ?::jsonb, draws = ?, problem = ?::jsonb, progress = null, activity = null,
+            finished_at = now(), lease_holder = null, lease_until = null
      where id = ? and lease_holder = ? and status = 'running' returning id`,
     [
       done ? 'done' : 'failed',
       done ? JSON.stringify(result.outcome) : null,
+      done ? result.draws : null,
       done ? null : JSON.stringify(result.problem),
       id,
       holder,
@@ -131,8 +152,8 @@ export async function moveFit(
 ): Promise<boolean> {
   const found = await rows(
     db,
-    `update fits set status = ?, problem = null, lease_holder = null, lease_until = null,
-            finished_at = case when ? = 'cancelled' then now() end
+    `update fits set status = ?, problem = null, progress = null, activity = null, lease_holder = null,
+            lease_until = null, finished_at = case when ? = 'cancelled' then now() end
      where id = ? and status = any(?) returning id`,
     [after, after, id, before],
   );
@@ -142,7 +163,7 @@ export async function moveFit(
 export const releaseFit = (db: Db, id: string, holder: string) =>
   rows(
     db,
-    `update fits set status = 'queued', lease_holder = null, lease_until = null
+    `update fits set status = 'queued', progress = null, activity = null, lease_holder = null, lease_until = null
      where id = ? and lease_holder = ? and status = 'running'`,
     [id, holder],
   );

@@ -1,6 +1,6 @@
 import { rows, type Db } from './db';
 
-export type TaskName = 'ingest' | 'fit' | 'mail' | 'sweep';
+export type TaskName = 'ingest' | 'fit' | 'trace' | 'mail' | 'sweep';
 
 /**
  * Queue a job in the caller's transaction. The key makes it one job however often it is asked for; a job that a

@@ -59,7 +59,8 @@ const select = `
   left join lateral (
     select count(*) as shells,
            count(*) filter (where shells.adopted_fit_id is null and exists (
-             select 1 from readings where readings.shell_id = shells.id and jsonb_array_length(readings.marks) > 0
+             select 1 from readings
+             where readings.shell_id = shells.id and readings.kind = 'hand' and jsonb_array_length(readings.marks) > 0
            )) as unfitted
     from shells where shells.region_id = regions.id and shells.removed_at is null) s on true
   left join lateral (

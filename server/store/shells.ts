@@ -43,7 +43,7 @@ export interface ShellRow {
 const select = `
   select shells.id, regions.team_id as "teamId", shells.region_id as "regionId", regions.name as "regionName",
          shells.name, shells.note, shells.status, shells.designation, shells.adopted_fit_id as "adoptedFitId",
-         fits.outcome - '{residuals,rings}'::text[] as outcome, newest.pc as "distancePc", newest.error_pc as "distanceErrorPc",
+         fits.outcome - '{residuals,rings,extra}'::text[] as outcome, newest.pc as "distancePc", newest.error_pc as "distanceErrorPc",
          regions.distance_pc as "regionDistancePc", regions.distance_error_pc as "regionDistanceErrorPc",
          coalesce(marked.readings, '[]') as readings, coalesce(counted.fits, 0)::int as fits,
          shells.created_by as "createdById", people.name as "createdByName", shells.created_at as "createdAt",
@@ -64,7 +64,7 @@ const select = `
              'channels', (select count(distinct mark ->> 'channel') from jsonb_array_elements(readings.marks) as mark),
              'updatedAt', readings.updated_at) order by readings.created_at) as readings
     from readings join people as reader on reader.id = readings.person_id
-    where readings.shell_id = shells.id and jsonb_array_length(readings.marks) > 0) marked on true`;
+    where readings.shell_id = shells.id and readings.kind = 'hand' and jsonb_array_length(readings.marks) > 0) marked on true`;
 
 /** Also a removed one: the service decides what may be done with it. */
 export async function findShell(db: Db, id: string): Promise<ShellRow | undefined> {

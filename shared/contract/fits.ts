@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { Id, ProblemSchema, Time } from './common';
+import { Mark } from './readings';
 
 export const MODELS = ['sphere', 'drifting', 'elliptical', 'cap'] as const;
 export const FIT_STATUS = ['queued', 'running', 'done', 'failed', 'cancelled'] as const;
@@ -57,7 +58,7 @@ export const FitOptions = z
       .int()
       .min(0)
       .max(5000)
-      .default(0)
+      .default(500)
       .describe('draws; 0: error bars from the covariance'),
     seed: z.number().int().min(0).max(0xffffffff).default(1),
   })
@@ -194,10 +195,8 @@ export const Fit = z
   .and(FitOutcome.partial())
   .meta({ id: 'Fit', description: 'immutable once done; the outcome is absent until then' });
 
-export const FrozenMark = z.object({
-  channel: z.number().int(),
-  x: z.number(),
-  y: z.number(),
+/** A mark as it was, with its place on the sky. */
+export const FrozenMark = Mark.omit({ sigma: true }).extend({
   l: z.number(),
   b: z.number(),
   velocity: z.number(),

@@ -1,6 +1,16 @@
-import { finishedFit, makeFixture, newRegion, newShell, readyCube, saveMarks, type Fixture } from './fixture';
+import {
+  finishedFit,
+  makeFixture,
+  newRegion,
+  newShell,
+  readyCube,
+  saveMarks,
+  type Fixture as Made,
+} from './fixture';
 import { marksOnRing } from './cubeFile';
 import { startProduct, type Product, type SignedIn } from './harness';
+
+type Fixture = Omit<Made, 'traceId'>;
 
 let product: Product;
 let lead: SignedIn;
@@ -108,7 +118,7 @@ test('only a finished fit of the same shell is adopted, and adoption can be take
     .db('fits')
     .where({ id: queued })
     .whereNot({ status: 'done' })
-    .update({ status: 'cancelled' });
+    .update({ status: 'cancelled', progress: null, activity: null });
   const { status } = (await lead.get(`/fits/${queued}`)).body;
   if (status === 'cancelled')
     await lead.patch(`/shells/${near.shellId}`, { adoptedFitId: queued }).expect(409);

@@ -1,5 +1,7 @@
 /** Small cubes made in the test: the sky is invented, the header is what common software writes. */
 
+import { seededRandom } from '@/shared/random';
+
 const card = (keyword: string, value: string | number | boolean) => {
   const text =
     typeof value === 'string'
@@ -31,6 +33,12 @@ const shellAt = (x: number, y: number, channel: number): number => {
   const ring = (SHELL.theta / PIXEL) * Math.sqrt(1 - u * u);
   const off = (Math.hypot(x - SHELL.x, y - SHELL.y) - ring) / 1.5;
   return Math.exp(-0.5 * off * off);
+};
+
+/** The same with a noise of 0.02, for what has to tell the shell from it. */
+export const noisyShell = (x: number, y: number, channel: number): number => {
+  const random = seededRandom((channel * 64 + y) * 64 + x);
+  return shellAt(x, y, channel) + 0.02 * random.normal();
 };
 
 export function cubeFile({ nx, ny, channels, cards = {}, value = shellAt }: CubeSpec): Buffer {

@@ -1,6 +1,6 @@
-/** Records to try the routes on: a ready cube, a shell with marks and a finished fit, and a second team. */
+/** Records to try the routes on: a ready cube, a shell with marks, a finished fit and a traced rim, and a second team. */
 import { randomUUID } from 'node:crypto';
-import { cubeFile, marksOnRing } from './cubeFile';
+import { cubeFile, marksOnRing, noisyShell } from './cubeFile';
 import { until, type Product, type SignedIn } from './harness';
 import { upload } from './uploading';
 
@@ -10,6 +10,7 @@ export interface Fixture {
   shellId: string;
   readingId: string;
   fitId: string;
+  traceId: string;
 }
 
 export const MARKS = [10, 13, 16, 19, 22].flatMap((k) => marksOnRing(k));
@@ -17,7 +18,7 @@ export const MARKS = [10, 13, 16, 19, 22].flatMap((k) => marksOnRing(k));
 let serial = 0;
 /** Bytes that no region holds yet. */
 export const freshCube = () =>
-  cubeFile({ nx: 64, ny: 60, channels: 32, cards: { OBJECT: `trial ${serial++}` } });
+  cubeFile({ nx: 64, ny: 60, channels: 32, cards: { OBJECT: `trial ${serial++}` }, value: noisyShell });
 
 export async function readyCube(product: Product, who: SignedIn, regionId: string): Promise<string> {
   const { cubeId, problem } = await upload(who, product.url, regionId, freshCube());
@@ -45,11 +46,25 @@ export async function saveMarks(
   return (await who.put(`/shells/${shellId}/readings/mine`, { cubeId, marks, revision }).expect(200)).body.id;
 }
 
-export async function finishedFit(who: SignedIn, shellId: string, readingId: string): Promise<string> {
-  const { id } = (await who.post(`/shells/${shellId}/fits`, { readingId }).expect(202)).body;
+export async function finishedFit(
+  who: SignedIn,
+  shellId: string,
+  readingId: string,
+  rest: object = {},
+): Promise<string> {
+  const { id } = (await who.post(`/shells/${shellId}/fits`, { readingId, ...rest }).expect(202)).body;
   await until(
     async () => (await who.get(`/fits/${id}`)).body,
     (fit) => fit.status === 'done',
+  );
+  return id;
+}
+
+export async function finishedTrace(who: SignedIn, shellId: string, fitId: string): Promise<string> {
+  const { id } = (await who.post(`/shells/${shellId}/traces`, { fitId }).expect(202)).body;
+  await until(
+    async () => (await who.get(`/traces/${id}`)).body,
+    (trace) => trace.status === 'done',
   );
   return id;
 }
@@ -60,7 +75,8 @@ export async function makeFixture(product: Product, who: SignedIn): Promise<Fixt
   const shellId = await newShell(who, regionId);
   const readingId = await saveMarks(who, shellId, cubeId);
   const fitId = await finishedFit(who, shellId, readingId);
-  return { regionId, cubeId, shellId, readingId, fitId };
+  const traceId = await finishedTrace(who, shellId, fitId);
+  return { regionId, cubeId, shellId, readingId, fitId, traceId };
 }
 
 /** Somebody who leads another team of the same installation. */

@@ -36,10 +36,18 @@ const failedCube = async (status: string) => {
 const fitIn = async (status: string) => {
   const { id } = (await lead().post(`/shells/${f.shellId}/fits`, { readingId: f.readingId })).body;
   // made by hand so that no worker takes it meanwhile
-  await product.parts.db.raw(`update fits set status = ?, outcome = null where id = ? and status <> 'done'`, [
-    status,
-    id,
-  ]);
+  await product.parts.db.raw(
+    `update fits set status = ?, outcome = null, progress = null, activity = null where id = ? and status <> 'done'`,
+    [status, id],
+  );
+  return id as string;
+};
+const traceIn = async (status: string) => {
+  const { id } = (await lead().post(`/shells/${f.shellId}/traces`, { fitId: f.fitId })).body;
+  await product.parts.db.raw(
+    `update traces set status = ?, outcome = null, progress = null where id = ? and status <> 'done'`,
+    [status, id],
+  );
   return id as string;
 };
 const READ: Case['expected'] = [200, 200, 200, 200, 404, 403];
@@ -223,6 +231,7 @@ const CASES: Case[] = [
   },
   { route: 'get /fits/:fitId', path: () => `/fits/${f.fitId}`, expected: READ },
   { route: 'get /fits/:fitId/marks', path: () => `/fits/${f.fitId}/marks`, expected: READ },
+  { route: 'get /fits/:fitId/draws', path: () => `/fits/${f.fitId}/draws`, expected: READ },
   {
     route: 'post /fits/:fitId/cancel',
     path: async () => `/fits/${await fitIn('queued')}/cancel`,
@@ -232,6 +241,20 @@ const CASES: Case[] = [
   {
     route: 'post /fits/:fitId/retry',
     path: async () => `/fits/${await fitIn('cancelled')}/retry`,
+    body: NONE,
+    expected: [202, 202, 202, 403, 404, 403],
+  },
+  { route: 'get /shells/:shellId/traces', path: () => `/shells/${f.shellId}/traces`, expected: READ },
+  {
+    route: 'post /shells/:shellId/traces',
+    path: () => `/shells/${f.shellId}/traces`,
+    body: () => ({ fitId: f.fitId, edge: 'inner' }),
+    expected: [202, 202, 202, 403, 404, 403],
+  },
+  { route: 'get /traces/:traceId', path: () => `/traces/${f.traceId}`, expected: READ },
+  {
+    route: 'post /traces/:traceId/cancel',
+    path: async () => `/traces/${await traceIn('queued')}/cancel`,
     body: NONE,
     expected: [202, 202, 202, 403, 404, 403],
   },

@@ -13,7 +13,7 @@ test('a job that a killed worker took and never began is queued again; one that 
   const { db } = product.parts;
   const lead = await product.signIn('lena');
   const { cubeId } = await upload(lead, product.url, await newRegion(lead), freshCube());
-  expect(await sweep(product.parts)).toEqual({ cubes: 0, fits: 0 });
+  expect(await sweep(product.parts)).toEqual({ cubes: 0, fits: 0, traces: 0 });
   // as a worker leaves it that is killed between taking the job and claiming the cube: locked, with the cube untouched
   const lock = (ago: string) =>
     db.raw(
@@ -22,9 +22,9 @@ test('a job that a killed worker took and never began is queued again; one that 
       [ago, `ingest:${cubeId}`],
     );
   await lock('1 second');
-  expect(await sweep(product.parts)).toEqual({ cubes: 0, fits: 0 }); // it may only just have been taken
+  expect(await sweep(product.parts)).toEqual({ cubes: 0, fits: 0, traces: 0 }); // it may only just have been taken
   await lock('1 minute');
-  expect(await sweep(product.parts)).toEqual({ cubes: 1, fits: 0 });
+  expect(await sweep(product.parts)).toEqual({ cubes: 1, fits: 0, traces: 0 });
   await product.startWorker();
   await until(
     async () => (await lead.get(`/cubes/${cubeId}`)).body.status,
