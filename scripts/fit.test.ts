@@ -77,6 +77,28 @@ describe('npm run fit', () => {
     },
   );
 
+  it('holds, bounds and informs parameters, the command line before the file', async () => {
+    const marks = join(reference, 'cases/04-cap-near-prior.json');
+    const { code, stdout } = await fit(
+      ...[marks, '--model=cap', '--prior', 'vSys=5.4,0.5', '--bound=theta=1,', '--fix=l=155.01'],
+    );
+    expect(code).toBe(0);
+    const { parameters, dof } = JSON.parse(stdout);
+    expect(parameters.vSys.constraint).toEqual({ prior: { mean: 5.4, sd: 0.5 } });
+    expect(parameters.theta.constraint).toEqual({ low: 1 });
+    expect(parameters.l).toMatchObject({ value: 155.01, se: 0, constraint: { fixed: 155.01 } });
+    const { fit: plain } = await load('cases/04-cap-near-prior.fit.json');
+    expect(dof).toBe(plain.dof + 1);
+    expect(parameters.vExp.constraint).toBeUndefined();
+  });
+
+  it('keeps all marks when told so', async () => {
+    const marks = join(reference, 'cases/07-outliers.json');
+    const [on, off] = await Promise.all([fit(marks, '--robust=on'), fit(marks, '--robust', 'off')]);
+    expect(JSON.parse(on.stdout).extra.setAside.length).toBeGreaterThan(0);
+    expect(JSON.parse(off.stdout).extra.setAside).toEqual([]);
+  });
+
   const good = () => load('cases/02-few-4x6.json');
   it.each([
     ['no file', async () => ['nowhere.json'], 'invalid-input', 'marks'],
@@ -132,6 +154,60 @@ describe('npm run fit', () => {
       async () => [join(reference, 'cases/02-few-4x6.json'), '--bootstrap', '0.5'],
       'invalid-input',
       'bootstrap',
+    ],
+    [
+      'an unknown parameter',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--fix', 'size=3'],
+      'invalid-input',
+      'constraints.size',
+    ],
+    [
+      'half a prior',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--prior', 'theta=3'],
+      'invalid-input',
+      'prior',
+    ],
+    [
+      'a bound in words',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--bound', 'theta=small,large'],
+      'invalid-input',
+      'bound',
+    ],
+    [
+      'no bound at all',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--bound', 'theta=,'],
+      'invalid-input',
+      'bound',
+    ],
+    [
+      'bounds the wrong way round',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--bound', 'theta=3,2'],
+      'invalid-input',
+      'constraints.theta.low',
+    ],
+    [
+      'a parameter held twice',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--fix=theta=2', '--fix=theta=3'],
+      'invalid-input',
+      'fix',
+    ],
+    [
+      'held and under a prior',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--fix=theta=2', '--prior=theta=3,1'],
+      'invalid-input',
+      'constraints.theta',
+    ],
+    [
+      'a robust fit that is neither on nor off',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--robust=maybe'],
+      'invalid-input',
+      'robust',
+    ],
+    [
+      'a trace without a cube',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--trace=ridge'],
+      'invalid-input',
+      'trace',
     ],
     [
       'a cap without v_sys',

@@ -116,6 +116,9 @@ describe('residuals of the marks', () => {
       channel: Int32Array.from(points, (_, i) => i % 5),
       velocity,
       width: 1.3,
+      block: Int32Array.from(points, (_, i) => i % 5),
+      blocks: 5,
+      unseen: null,
     };
   }
 
