@@ -7,24 +7,27 @@ import type { CubeHead } from '@/shared/fits/cubeHead';
 import { headerBytesOf } from '@/tests/reference/headerBytes';
 import { openDiskSource, type ByteSource } from './byteSource';
 import { readCubeHead } from './cubeHead';
-import { diskCubeStore } from './diskCubeStore';
-import { makePlainCopy, needsPlainCopy, type PlainCopyOptions } from './plainCopy';
+import { needsPlainCopy, writePlainFile, type PlainCopyOptions } from './plainCopy';
 
 /** Made by fpack of cfitsio 4.2.0 (Debian libcfitsio-bin); beside each what its funpack makes of it. */
 const folder = join(__dirname, '../../tests/reference/fits-corpus-compressed');
 const work = mkdtempSync(join(tmpdir(), 'plain-copy-'));
 afterAll(() => rmSync(work, { recursive: true }));
 
-const store = diskCubeStore(join(work, 'store'));
-let copies = 0;
+const making = join(work, 'making');
 
-/** Plain copy of a file through the store, as bytes with its head. */
+/** Plain copy of a file, as bytes with its head. */
 async function copyOf(path: string, options: PlainCopyOptions = {}) {
-  const [from, to] = [`cubes/${++copies}.fits`, `cubes/${copies}-plain.fits`];
-  await store.writeBytes(from, readFileSync(path));
-  await makePlainCopy(store, from, to, { directory: join(work, 'making'), ...options });
-  const bytes = readFileSync(join(work, 'store', to));
-  return { bytes, head: await readCubeHead(sourceOf(bytes)) };
+  const source = await openDiskSource(path);
+  const to = join(making, 'plain.fits');
+  try {
+    await writePlainFile(source, to, options);
+    const bytes = readFileSync(to);
+    return { bytes, head: await readCubeHead(sourceOf(bytes)) };
+  } finally {
+    await source.close();
+    rmSync(to, { force: true });
+  }
 }
 const sourceOf = (bytes: Uint8Array): ByteSource => ({
   size: bytes.length,
@@ -160,16 +163,18 @@ describe('gzip', () => {
       /after its FITS data/,
     ],
     ['no bytes behind the magic', Buffer.from([0x1f, 0x8b]), 'compressed-damaged', /ends early/],
-  ] as const)('refuses %s, and leaves nothing behind', async (_what, bytes, type, words) => {
-    const path = fileOf('bad.fits.gz', bytes);
-    for (const act of [() => headOf(path), () => copyOf(path)]) {
-      const failure = await refusal(act());
-      expect(failure.type).toBe(type);
-      expect(failure.detail).toMatch(words);
-    }
-    expect(readdirSync(join(work, 'making'))).toEqual([]);
-    expect(await store.exists(`cubes/${copies}-plain.fits`)).toBe(false);
-  });
+  ] as const)(
+    'refuses %s, and leaves nothing beside the file it was writing',
+    async (_what, bytes, type, words) => {
+      const path = fileOf('bad.fits.gz', bytes);
+      for (const act of [() => headOf(path), () => copyOf(path)]) {
+        const failure = await refusal(act());
+        expect(failure.type).toBe(type);
+        expect(failure.detail).toMatch(words);
+      }
+      expect(readdirSync(making)).toEqual([]);
+    },
+  );
 
   it('stops at the limit of the installation', async () => {
     const path = fileOf('limit.fits.gz', gzipSync(cube));

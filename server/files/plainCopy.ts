@@ -1,7 +1,5 @@
-import { randomUUID } from 'node:crypto';
 import { mkdir, open, rm, type FileHandle } from 'node:fs/promises';
-import { tmpdir } from 'node:os';
-import { dirname, join } from 'node:path';
+import { dirname } from 'node:path';
 import { Problem } from '@/shared/contract/problem';
 import { plainImageHeader } from '@/shared/fits/compressed/imageHeader';
 import { tiledImage } from '@/shared/fits/compressed/tiledImage';
@@ -12,7 +10,6 @@ import { BLOCK } from '@/shared/fits/headerScan';
 import { pixelBytes } from '@/shared/fits/imageData';
 import { openDiskSource, type ByteSource } from './byteSource';
 import { MAX_EXPANDED_BYTES, requireRoom } from './cubeHead';
-import type { CubeStore } from './cubeStore';
 import { freeBytes } from './diskSpace';
 import { ExpandedBytes, isGzip } from './gunzip';
 import { expandRest } from './gzipRest';
@@ -23,8 +20,6 @@ export interface PlainCopyOptions {
   hdu?: number;
   /** Most bytes to expand to; default 64 GiB. */
   maxBytes?: number;
-  /** Where the copy is made before it is put into the store; default the system's temporary folder. */
-  directory?: string;
   signal?: AbortSignal;
   /** 0 … 1. */
   onProgress?: (fraction: number) => void;
@@ -37,29 +32,11 @@ export const needsPlainCopy = (head: Pick<CubeHead, 'container'>): boolean =>
   (head.container ?? 'plain') !== 'plain';
 
 /**
- * Write the cube of a gzip or tile-compressed file into the store as a plain FITS file with that cube alone. Memory
- * stays below 256 MB whatever the file claims; nothing is stored when it is refused.
+ * Write the cube of a gzip or tile-compressed file as a plain FITS file with that cube alone. Memory stays below 256 MB
+ * whatever the file claims. When this throws, the caller removes what lies at `path`.
  *
  * @throws Problem as `readCubeHead`, compressed-damaged, too-large, disk-full; the signal's reason when it fires
  */
-export async function makePlainCopy(
-  store: Pick<CubeStore, 'open' | 'put'>,
-  fileKey: string,
-  plainKey: string,
-  options: PlainCopyOptions = {},
-): Promise<void> {
-  const source = await store.open(fileKey);
-  const path = join(options.directory ?? tmpdir(), `${randomUUID()}.plain`);
-  try {
-    await writePlainFile(source, path, options);
-    await store.put(plainKey, path);
-  } finally {
-    await source.close();
-    await rm(path, { force: true });
-  }
-}
-
-/** The same into a file on disk, which the caller removes when this throws. */
 export async function writePlainFile(
   source: ByteSource,
   path: string,
