@@ -62,7 +62,11 @@ test('the progress of a fit is written into the fit and its list; a finished one
   expect(list.items.map((f) => f.progress)).toEqual([0.6, 0.1]);
   expect(list.items[0]!.activity).toBe('draw 300 of 500');
   expect(isProgressOnly({ ...progress, status: 'done' }, fit)).toBe(false);
-  expect(isProgressOnly({ ...progress, subject: 'trace' }, fit)).toBe(false);
+  expect(isProgressOnly({ ...progress, subject: 'shell' }, fit)).toBe(false);
+  expect(placesOf({ ...progress, subject: 'trace' })).toEqual({
+    record: keys.trace('f'),
+    list: keys.traces('s'),
+  });
 });
 
 test('a traced rim makes the list of traces stale', () => {

@@ -1,6 +1,4 @@
-import type { Cube } from '@/shared/contract/cubes';
 import type { LiveEvent } from '@/shared/contract/events';
-import type { Fit } from '@/shared/contract/fits';
 import { isCatalogue, keys } from './keys';
 import type { List } from './useRead';
 
@@ -38,15 +36,17 @@ export function staleAfter(event: LiveEvent): Matcher {
   }
 }
 
-/** What says of itself how far it is: a cube that is read, a fit that runs. */
-export type Running = Pick<Cube | Fit, 'id' | 'status' | 'progress' | 'activity'>;
+/** What says of itself how far it is: a cube that is read, a fit that runs, a rim that is traced. */
+export interface Running {
+  id: string;
+  status: string;
+  progress: number | null;
+  activity?: string | null;
+}
 
-/**
- * True for an event that says only how far a cube or a fit is: it can be written into what is shown, without asking
- * again.
- */
+/** True for an event that says only how far something is: it can be written into what is shown, without asking again. */
 export const isProgressOnly = (event: LiveEvent, shown: Running | undefined): boolean =>
-  (event.subject === 'cube' || event.subject === 'fit') &&
+  (event.subject === 'cube' || event.subject === 'fit' || event.subject === 'trace') &&
   event.progress !== undefined &&
   shown !== undefined &&
   shown.status === (event.status ?? shown.status);
@@ -58,7 +58,7 @@ export const withProgress = <T extends Running>(record: T, event: LiveEvent): T 
     : {
         ...record,
         progress: event.progress ?? record.progress,
-        activity: event.activity === undefined ? record.activity : event.activity,
+        ...(event.activity !== undefined && { activity: event.activity }),
       };
 
 export const listWithProgress = <T extends Running>(list: List<T>, event: LiveEvent): List<T> => ({
@@ -70,5 +70,7 @@ export const listWithProgress = <T extends Running>(list: List<T>, event: LiveEv
 export function placesOf(event: LiveEvent): { record: string; list: string | null } {
   if (event.subject === 'fit')
     return { record: keys.fit(event.id), list: event.shellId ? keys.fits(event.shellId) : null };
+  if (event.subject === 'trace')
+    return { record: keys.trace(event.id), list: event.shellId ? keys.traces(event.shellId) : null };
   return { record: keys.cube(event.id), list: event.regionId && keys.cubes(event.regionId) };
 }

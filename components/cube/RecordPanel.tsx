@@ -1,5 +1,6 @@
 import { View } from 'react-native';
 import { isDone } from '@/components/fit/fitFacts';
+import { FitProgress } from '@/components/fit/FitProgress';
 import { RecordResults } from '@/components/cube/RecordResults';
 import { useSession } from '@/components/cube/session';
 import type { RecordFit } from '@/components/cube/useRecordFit';
@@ -8,7 +9,6 @@ import { StatusChip } from '@/components/ui/Chip';
 import { moment } from '@/components/ui/format';
 import { SectionTitle } from '@/components/ui/Panel';
 import { ProblemNotice } from '@/components/ui/ProblemNotice';
-import { ProgressBar } from '@/components/ui/ProgressBar';
 import { SkeletonRows } from '@/components/ui/Skeleton';
 import { Text } from '@/components/ui/Text';
 import { space } from '@/components/ui/tokens';
@@ -33,41 +33,7 @@ export function RecordPanel({ record }: { record: RecordFit }) {
           None yet. It freezes your marks, fits them in the worker and keeps the answer with all that made it.
         </Text>
       )}
-      {newest && (newest.status === 'queued' || newest.status === 'running') && (
-        <>
-          <ProgressBar
-            value={
-              typeof newest.progress === 'number' ? newest.progress : newest.status === 'queued' ? 0 : 0.05
-            }
-            label="The fit of record"
-            activity={
-              typeof newest.activity === 'string'
-                ? newest.activity
-                : newest.status === 'queued'
-                  ? 'Waiting for the worker'
-                  : 'Fitting, and drawing its error bars'
-            }
-          />
-          <View style={{ flexDirection: 'row' }}>
-            <Button label="Stop" icon="close" busy={busy} onPress={() => void record.cancel()} />
-          </View>
-        </>
-      )}
-      {newest?.status === 'failed' && (
-        <ProblemNotice
-          problem={newest.problem ?? { title: 'The fit failed', detail: 'No cause was kept.' }}
-          onRetry={() => void record.retry()}
-          busy={busy}
-        />
-      )}
-      {newest?.status === 'cancelled' && (
-        <View style={{ flexDirection: 'row', alignItems: 'center', gap: space(3) }}>
-          <Text tone="quiet" style={{ flex: 1 }}>
-            It was stopped.
-          </Text>
-          <Button label="Run it again" icon="retry" busy={busy} onPress={() => void record.retry()} />
-        </View>
-      )}
+      {newest && !isDone(newest) && <FitProgress fit={newest} />}
       {newest && isDone(newest) && (
         <>
           <Text size="small" tone="quiet">
@@ -93,6 +59,7 @@ export function RecordPanel({ record }: { record: RecordFit }) {
                   busy={busy}
                 />
               ))}
+            <Button label="The whole report" icon="chart" href={`/shells/${shell.id}/fits/${newest.id}`} />
             <Button label="All fits of this shell" kind="quiet" href={`/shells/${shell.id}`} />
           </View>
           {!newest.adoptable && (

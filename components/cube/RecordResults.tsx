@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
 import { byLargest, type DoneFit } from '@/components/fit/fitFacts';
-import { ParameterRows } from '@/components/fit/FitReport';
+import { ParameterRows } from '@/components/fit/ParameterRows';
 import { useSession } from '@/components/cube/session';
 import { Button } from '@/components/ui/Button';
 import { Press, type PressState } from '@/components/ui/Press';

@@ -1,24 +1,30 @@
 import { useCallback, useState } from 'react';
 import type { CubeSession } from '@/components/cube/cubeSession';
+import { defaultForm, readFitForm } from '@/components/fit/fitForm';
 import { ApiProblem, asProblem } from '@/hooks/api';
 import { useFitActions, useFits } from '@/hooks/useFits';
 import { useMay } from '@/hooks/useMe';
 import { useShellActions } from '@/hooks/useShells';
-import type { Fit } from '@/shared/contract/fits';
+import type { Fit, FitDraft } from '@/shared/contract/fits';
 
 export interface RecordFit {
   /** The newest fit of record; the adopted one may be another. */
   newest: Fit | null;
   waiting: boolean;
-  /** Of the last thing tried here: running, stopping, adopting. */
+  /** Of the last thing tried here: running, adopting. */
   problem: ApiProblem | null;
   busy: boolean;
   /** Why it cannot be run now; null when it can. */
   obstacle: string | null;
+  /** Whether a fit can be asked for with settings of one's own: a traced rim needs no marks of mine. */
+  mayChoose: boolean;
+  /** Of my marks; null while none was saved. */
+  readingId: string | null;
   mayAdopt: boolean;
+  /** Freezes my marks and fits them with the usual settings. */
   run: () => Promise<void>;
-  cancel: () => Promise<void>;
-  retry: () => Promise<void>;
+  /** Saves my marks, then queues a fit as it was asked for; throws what stood in the way. */
+  runAs: (draft: FitDraft) => Promise<void>;
   adopt: (on: boolean) => Promise<void>;
 }
 
@@ -47,7 +53,19 @@ export function useRecordFit(s: CubeSession): RecordFit {
     }
   }, []);
 
-  const obstacle = !shell
+  /** The id of my reading, once its last change is saved. */
+  async function savedMarks(): Promise<string> {
+    const readingId = await reading.flush();
+    if (readingId) return readingId;
+    throw new ApiProblem({
+      type: 'conflict',
+      status: 0,
+      title: 'The marks are not saved yet',
+      detail: 'A fit of record is made from saved marks. Once they are saved, run it again.',
+    });
+  }
+
+  const barred = !shell
     ? 'Choose a shell first.'
     : !may('fit.run')
       ? 'Your role does not run fits.'
@@ -55,11 +73,9 @@ export function useRecordFit(s: CubeSession): RecordFit {
         ? 'Your marks of this shell lie on another cube.'
         : underWay(newest)
           ? 'A fit is under way.'
-          : live.fit
-            ? null
-            : live.problem
-              ? live.problem.title
-              : 'It needs six marks on three channels.';
+          : null;
+  const obstacle =
+    barred ?? (live.fit ? null : live.problem ? live.problem.title : 'It needs six marks on three channels.');
 
   return {
     newest,
@@ -67,26 +83,21 @@ export function useRecordFit(s: CubeSession): RecordFit {
     problem: problem ?? fits.problem,
     busy,
     obstacle,
+    mayChoose: barred === null,
+    readingId: reading.state.readingId,
     mayAdopt: may('fit.adopt'),
     run: () =>
       tried(async () => {
         if (!shell) return;
-        const readingId = await reading.flush();
-        if (!readingId)
-          throw new ApiProblem({
-            type: 'conflict',
-            status: 0,
-            title: 'The marks are not saved yet',
-            detail: 'A fit of record is made from saved marks. Once they are saved, run it again.',
-          });
-        await actions.run(shell.id, {
-          readingId,
-          model: 'sphere',
-          options: { setAside: true, bootstrap: 500, seed: 1 },
-        });
+        const usual = readFitForm(defaultForm(await savedMarks()));
+        if ('draft' in usual) await actions.run(shell.id, usual.draft);
       }),
-    cancel: () => tried(async () => newest && actions.cancel(newest.id)),
-    retry: () => tried(async () => newest && actions.retry(newest.id)),
+    runAs: async (draft) => {
+      setProblem(null);
+      // a traced rim lies still; only my own marks may have unsaved changes
+      if (draft.readingId === reading.state.readingId) await savedMarks();
+      if (shell) await actions.run(shell.id, draft);
+    },
     adopt: (on) =>
       tried(async () => newest && shell && change(shell.id, { adoptedFitId: on ? newest.id : null })),
   };

@@ -1,113 +1,63 @@
+import type { ReactNode } from 'react';
 import { View } from 'react-native';
-import { RadiusVelocity } from '../diagram/RadiusVelocity';
-import { DefinitionRows } from '../ui/DefinitionRows';
-import { Measured } from '../ui/Measured';
-import { Panel } from '../ui/Panel';
-import { Notice } from '../ui/ProblemNotice';
-import { ParameterName, Quantity } from '../ui/Quantity';
-import { Text } from '../ui/Text';
+import { useFitDraws, useFitMarks } from '@/hooks/useFits';
 import { space } from '../ui/tokens';
 import { useWide } from '../ui/useWide';
+import { ComparisonPanel } from './ComparisonPanel';
+import { CornerPanel } from './CornerPanel';
 import { CorrelationTable } from './CorrelationTable';
-import { chi2PerDof, modelNames, modelOf, ringsOf, type DoneFit } from './fitFacts';
+import type { DoneFit } from './fitFacts';
+import { FitSummary } from './FitSummary';
+import { LeaveOneOutPanel } from './LeaveOneOutPanel';
+import { MethodsPanel } from './MethodsPanel';
+import { OutlierPanel } from './OutlierPanel';
+import { ProfilePanel } from './ProfilePanel';
 import { Provenance } from './Provenance';
+import { ResidualMap } from './ResidualMap';
 import { ResidualTable } from './ResidualTable';
 import { RingTable } from './RingTable';
+import { ScatterPanel } from './ScatterPanel';
+import { TracePanel } from './TracePanel';
 
-/** The numbers with their errors and limits, and the curve they draw. */
-export function FitSummary({
-  fit,
-  name,
-  channelWidth,
-}: {
-  fit: DoneFit;
-  name: string;
-  channelWidth: number;
-}) {
+/** All that a referee may ask of a fit, the numbers first. Parts that an old fit was made without are left out. */
+export default function FitReport({ fit, name }: { fit: DoneFit; name: string }) {
+  const draws = useFitDraws(fit.errorBars === 'bootstrap' ? fit.id : null);
+  const channelWidth = useFitMarks(fit.id).data?.channelWidth ?? 0;
   const { wide } = useWide();
+  const left = (
+    <>
+      <ScatterPanel fit={fit} />
+      <ResidualMap fit={fit} name={name} />
+      <OutlierPanel fit={fit} />
+      <ResidualTable fit={fit} />
+      <TracePanel fit={fit} />
+    </>
+  );
+  const right = (
+    <>
+      <CornerPanel fit={fit} draws={draws} name={name} />
+      <ProfilePanel fit={fit} />
+      <CorrelationTable correlation={fit.correlation} />
+      <RingTable fit={fit} channelWidth={channelWidth} />
+    </>
+  );
   return (
-    <View style={{ gap: space(4) }}>
-      <View style={{ flexDirection: wide ? 'row' : 'column', gap: space(4), alignItems: 'stretch' }}>
-        <Panel
-          title="Parameters"
-          aside={
-            <Text tone="quiet" size="small">
-              {modelNames[fit.model]}
-            </Text>
-          }
-          style={wide ? { flex: 1 } : undefined}
-        >
-          <ParameterRows fit={fit} />
-        </Panel>
-        <Panel title="Radius–velocity" style={wide ? { flex: 1, minWidth: 0 } : undefined}>
-          <Measured height={space(72)}>
-            {(width) => (
-              <RadiusVelocity
-                width={width}
-                height={space(72)}
-                rings={ringsOf(fit)}
-                model={modelOf(fit)}
-                channelWidth={channelWidth}
-                name={name}
-              />
-            )}
-          </Measured>
-        </Panel>
-      </View>
-      {fit.warnings.map((w) => (
-        <Notice key={w.code} kind="person">
-          {w.message}
-        </Notice>
-      ))}
+    <View style={{ gap: space(4), alignSelf: 'stretch' }}>
+      <FitSummary fit={fit} name={name} draws={draws.data} />
+      <ComparisonPanel fit={fit} />
+      <LeaveOneOutPanel fit={fit} channelWidth={channelWidth} />
+      <Columns wide={wide} left={left} right={right} />
+      <Columns wide={wide} left={<MethodsPanel fit={fit} name={name} />} right={<Provenance fit={fit} />} />
     </View>
   );
 }
 
-/** What the numbers rest on: residuals by mark, rings by channel, correlation, provenance. */
-export function FitDetails({ fit, channelWidth }: { fit: DoneFit; channelWidth: number }) {
-  const { wide } = useWide();
+function Columns({ wide, left, right }: { wide: boolean; left: ReactNode; right: ReactNode }) {
+  const column = [{ gap: space(4), alignSelf: 'stretch' as const }, wide && { flex: 1, minWidth: 0 }];
   return (
     <View style={{ flexDirection: wide ? 'row' : 'column', gap: space(4), alignItems: 'flex-start' }}>
-      <View style={[{ gap: space(4), alignSelf: 'stretch' }, wide && { flex: 1, minWidth: 0 }]}>
-        <ResidualTable fit={fit} />
-      </View>
-      <View style={[{ gap: space(4), alignSelf: 'stretch' }, wide && { flex: 1, minWidth: 0 }]}>
-        <RingTable fit={fit} channelWidth={channelWidth} />
-        <CorrelationTable correlation={fit.correlation} />
-        <Provenance fit={fit} />
-      </View>
+      <View style={column}>{left}</View>
+      <View style={column}>{right}</View>
     </View>
   );
 }
-
-const order = ['l', 'b', 'theta', 'vSys', 'vExp'];
-
-export function ParameterRows({ fit }: { fit: DoneFit }) {
-  const names = Object.keys(fit.parameters).sort((a, b) => rank(a) - rank(b));
-  const quality = chi2PerDof(fit);
-  return (
-    <View style={{ gap: space(2) }}>
-      <DefinitionRows
-        rows={[
-          ...names.map((n) => ({
-            key: n,
-            name: <ParameterName name={n} long />,
-            value: <Quantity quantity={fit.parameters[n]} align="right" />,
-          })),
-          {
-            key: 'chi2',
-            name: 'χ² / degrees of freedom',
-            value: `${fit.chi2.toFixed(1)} / ${fit.dof}${quality === null ? '' : ` = ${quality.toFixed(2)}`}`,
-          },
-        ]}
-      />
-      <Text size="small" tone="quiet">
-        {fit.errorBars === 'bootstrap'
-          ? 'Errors from the bootstrap: +a −b bound the central 68 %.'
-          : 'Errors: one standard error from the four-source covariance; +a −b where the central 68 % is lopsided.'}
-      </Text>
-    </View>
-  );
-}
-
-const rank = (name: string): number => (order.includes(name) ? order.indexOf(name) : order.length);

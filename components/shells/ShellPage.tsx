@@ -1,13 +1,12 @@
-import { useLocalSearchParams, useRouter } from 'expo-router';
 import { useState } from 'react';
 import { View } from 'react-native';
 import type { Shell } from '@/shared/contract/shells';
-import { useFitMarks, useFits } from '@/hooks/useFits';
+import { useFits } from '@/hooks/useFits';
 import { useMay } from '@/hooks/useMe';
 import { useShell } from '@/hooks/useShells';
 import { isDone } from '../fit/fitFacts';
 import { FitList } from '../fit/FitList';
-import { FitDetails, FitSummary } from '../fit/FitReport';
+import { FitSummary } from '../fit/FitSummary';
 import { RecordGate } from '../frame/RecordGate';
 import { Screen } from '../frame/Screen';
 import { Button } from '../ui/Button';
@@ -27,7 +26,7 @@ import { OpenInCube } from './OpenInCube';
 import { ShellDialog } from './ShellDialog';
 import { useShellMenu } from './useShellMenu';
 
-/** A shell: what is adopted, every fit of record with its report, distances, readings. */
+/** A shell: what is adopted, every fit of record with a way to its report, distances, readings. */
 export function ShellPage({ shellId }: { shellId: string }) {
   const shell = useShell(shellId);
   const data = shell.data;
@@ -70,16 +69,12 @@ function Actions({ shell }: { shell: Shell }) {
 function Content({ shell }: { shell: Shell }) {
   const { wide } = useWide();
   const fits = useFits(shell.id);
-  const router = useRouter();
-  const { fit: asked } = useLocalSearchParams<{ fit?: string }>();
   const done = (fits.data?.items ?? []).filter(isDone);
-  const shown =
-    done.find((f) => f.id === asked) ?? done.find((f) => f.id === shell.adoptedFitId) ?? done[0] ?? null;
-  const frozen = useFitMarks(shown?.id ?? null);
+  const shown = done.find((f) => f.id === shell.adoptedFitId) ?? done[0] ?? null;
   const side = (
     <View style={{ gap: space(4), alignSelf: 'stretch' }}>
       <MeasuresPanel shell={shell} brief={shown !== null && shown.id === shell.adoptedFitId} />
-      <FitList shellId={shell.id} shown={shown?.id ?? null} onShow={(id) => router.setParams({ fit: id })} />
+      <FitList shell={shell} />
       <DistancePanel shell={shell} />
       <Readings shell={shell} />
     </View>
@@ -90,18 +85,21 @@ function Content({ shell }: { shell: Shell }) {
     ) : shown ? (
       <View style={{ gap: space(4) }}>
         {shown.id !== shell.adoptedFitId && (
-          <Notice title={shell.adoptedFitId ? 'This is not the adopted fit' : 'No fit is adopted yet'}>
+          <Notice title="No fit is adopted yet: this is the newest">
             {shown.adoptable
               ? 'Adopt it under “Fits of record” if it should stand for the shell in the catalogue.'
               : 'Its marks do not measure the radius, so it cannot stand for the shell.'}
           </Notice>
         )}
-        <FitSummary
-          key={shown.id}
-          fit={shown}
-          name={shell.name}
-          channelWidth={frozen.data?.channelWidth ?? 0}
-        />
+        <FitSummary key={shown.id} fit={shown} name={shell.name} />
+        <View style={{ flexDirection: 'row' }}>
+          <Button
+            kind="primary"
+            icon="chart"
+            label="The whole report of this fit"
+            href={`/shells/${shell.id}/fits/${shown.id}`}
+          />
+        </View>
       </View>
     ) : (
       <Panel>
@@ -112,9 +110,6 @@ function Content({ shell }: { shell: Shell }) {
         </EmptyState>
       </Panel>
     );
-  const details = shown && (
-    <FitDetails key={shown.id} fit={shown} channelWidth={frozen.data?.channelWidth ?? 0} />
-  );
   return (
     <>
       {shell.status === 'withdrawn' && (
@@ -123,17 +118,13 @@ function Content({ shell }: { shell: Shell }) {
       {shell.note ? <Text tone="quiet">{shell.note}</Text> : null}
       {wide ? (
         <View style={{ flexDirection: 'row', gap: space(4), alignItems: 'flex-start' }}>
-          <View style={{ flex: 1, minWidth: 0, gap: space(4) }}>
-            {summary}
-            {details}
-          </View>
-          <View style={{ width: space(92) }}>{side}</View>
+          <View style={{ flex: 1, minWidth: 0, gap: space(4) }}>{summary}</View>
+          <View style={{ width: space(96) }}>{side}</View>
         </View>
       ) : (
         <View style={{ gap: space(4) }}>
           {summary}
           {side}
-          {details}
         </View>
       )}
     </>
