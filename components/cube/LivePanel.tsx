@@ -1,6 +1,7 @@
 import { useMemo, useState } from 'react';
 import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
+import { TrialPanel } from '@/components/cube/TrialPanel';
 import { ringsOf } from '@/components/fit/fitFacts';
 import { radiusErrorOf } from '@/components/diagram/modelError';
 import { RadiusVelocity } from '@/components/diagram/RadiusVelocity';
@@ -15,6 +16,7 @@ import type { FitResult } from '@/shared/shell/fitResult';
 import { separation } from '@/shared/sky/greatCircle';
 
 const SHOWN = ['l', 'b', 'theta', 'vSys', 'vExp'] as const;
+const SOURCES = { trial: 'trial model', live: 'live fit', record: 'fit of record' } as const;
 const TITLES: Record<string, string> = {
   'few-channels': 'Few channels',
   'vexp-unconstrained': 'Expansion velocity not bounded',
@@ -34,7 +36,8 @@ export function LivePanel({
   /** Where little is seen at once, the numbers come before the diagram. */
   numbersFirst?: boolean;
 }) {
-  const { live, model, modelSource, shownRecord, axes, velocity, shell, showChannel } = useSession();
+  const { live, model, modelSource, shownRecord, axes, velocity, shell, showChannel, trial, changeTrial } =
+    useSession();
   const [width, setWidth] = useState(0);
   const { fit } = live;
 
@@ -58,11 +61,11 @@ export function LivePanel({
     [live, shownRecord],
   );
   const shown = useMemo<DiagramModel | null>(() => {
-    const source = fit ?? shownRecord;
-    if (!model || !source) return null;
-    const errorAt = radiusErrorOf(source);
+    const source = trial ? null : (fit ?? shownRecord);
+    if (!model) return null;
+    const errorAt = source && radiusErrorOf(source);
     return { theta: model.theta, vSys: model.vSys, vExp: model.vExp, ...(errorAt && { errorAt }) };
-  }, [model, fit, shownRecord]);
+  }, [model, fit, shownRecord, trial]);
   // Few rings would make an axis of their own; the cube's range shows where they stand.
   const domain = useMemo(
     () =>
@@ -89,7 +92,7 @@ export function LivePanel({
       <View style={{ flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline' }}>
         <SectionTitle>Radius–velocity</SectionTitle>
         <Text size="small" tone="quiet">
-          {modelSource ? `${modelSource === 'live' ? 'live fit' : 'fit of record'}, sphere` : ''}
+          {modelSource ? `${SOURCES[modelSource]}, sphere` : ''}
         </Text>
       </View>
       <View style={{ height: diagramHeight }}>
@@ -104,6 +107,7 @@ export function LivePanel({
             current={velocity}
             domain={domain}
             name={shell?.name ?? 'this shell'}
+            onModel={changeTrial}
             onPick={(ring) => ring.channel !== null && showChannel(ring.channel)}
           />
         ) : (
@@ -114,6 +118,7 @@ export function LivePanel({
           </View>
         )}
       </View>
+      <TrialPanel />
     </>
   );
   return (

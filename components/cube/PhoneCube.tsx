@@ -16,6 +16,7 @@ import { ShellChooser } from '@/components/cube/ShellChooser';
 import { StripPanel } from '@/components/cube/StripPanel';
 import { Tools } from '@/components/cube/Tools';
 import type { RecordFit } from '@/components/cube/useRecordFit';
+import { Slices } from '@/components/slices/Slices';
 import { Sheet } from '@/components/ui/Sheet';
 import { Text } from '@/components/ui/Text';
 import { layout, space } from '@/components/ui/tokens';
@@ -71,7 +72,7 @@ export function PhoneCube({
       onTab={setTab}
       aside={
         <Text size="small" tone="quiet">
-          {modelSource ? `${modelSource === 'live' ? 'live' : 'of record'}, sphere` : ''}
+          {modelSource ? `${modelSource === 'record' ? 'of record' : modelSource}, sphere` : ''}
         </Text>
       }
       tabs={[
@@ -99,6 +100,7 @@ export function PhoneCube({
             </>
           ),
         },
+        { key: 'slice', label: 'Slice', content: <Slices height={230} /> },
         {
           key: 'results',
           label: 'Results',

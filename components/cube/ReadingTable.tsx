@@ -1,4 +1,5 @@
 import { View } from 'react-native';
+import { MarkNext } from '@/components/cube/MarkNext';
 import { useSession } from '@/components/cube/session';
 import { Press, type PressState } from '@/components/ui/Press';
 import { SectionTitle } from '@/components/ui/Panel';
@@ -38,6 +39,7 @@ export function ReadingTable() {
       <Text size="small" tone="quiet" role="status">
         {live.sentence}
       </Text>
+      <MarkNext />
     </View>
   );
 }

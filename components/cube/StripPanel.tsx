@@ -7,7 +7,7 @@ import { useChannels } from '@/hooks/useCubes';
 
 /** The strip, wired to the session. */
 export function StripPanel() {
-  const { cube, order, channel, showChannel, marksByChannel, model, channelLook } = useSession();
+  const { cube, order, channel, showChannel, marksByChannel, model, channelLook, next } = useSession();
   const { data: channels, problem, reload } = useChannels(cube.id);
   const strip = useStripPicture(cube, channelLook.look.ramp, channelLook.tone);
   const spectrum = useMemo(() => {
@@ -19,6 +19,7 @@ export function StripPanel() {
     () => model && { low: model.vSys - model.vExp, middle: model.vSys, high: model.vSys + model.vExp },
     [model],
   );
+  const helpful = useMemo(() => next.map((n) => n.channel), [next]);
   return (
     <>
       <Strip
@@ -29,6 +30,7 @@ export function StripPanel() {
         spectrum={spectrum}
         marks={marksByChannel}
         span={span}
+        next={helpful}
       />
       {(problem ?? strip.problem) && (
         <ProblemNotice problem={(problem ?? strip.problem)!} onRetry={() => void reload()} />

@@ -61,11 +61,9 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const canMark = shell !== null && mayMark && state.ready && !elsewhere && !state.conflict && !onMap;
   const mapTool: MapTool = canMark ? tool : 'move';
 
-  const velocities = axes.spectral.velocities;
-  const range = useMemo(() => [velocities[0], velocities[1]] as const, [velocities]);
   const guess = useRef<() => SceneModel>(() => firstGuess(axes, wcs, [], null));
   const trialModel = useTrial(useCallback(() => guess.current(), []));
-  const live = useLiveFit(marks, wcs, axes.spectral.channelWidth, range, trialModel.fitStart);
+  const live = useLiveFit(marks, wcs, axes.spectral.channelWidth, trialModel.fitStart);
   const shown = useModel(shell, live, mayMark, state.readingId, trialModel.trial);
   const { model } = shown;
   useEffect(() => {

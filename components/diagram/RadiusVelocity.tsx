@@ -1,6 +1,7 @@
-import { useMemo } from 'react';
+import { useMemo, useState } from 'react';
 import { View } from 'react-native';
 import Svg, { Circle, G, Line, Path, Text as SvgText } from 'react-native-svg';
+import { DiagramHandles } from '@/components/diagram/DiagramHandles';
 import {
   curveVelocities,
   diagramLayout,
@@ -14,7 +15,7 @@ import { useTheme } from '@/components/ui/theme';
 import { fonts, typeScale } from '@/components/ui/tokens';
 import { labelOf } from '@/shared/image/ticks';
 import { velocityLabel } from '@/shared/image/velocityDigits';
-import { modelRadius } from '@/shared/shell/channelCurve';
+import { modelRadius, type RingParameters } from '@/shared/shell/channelCurve';
 import { ringRadius } from '@/shared/shell/ring';
 
 export interface RadiusVelocityProps {
@@ -34,6 +35,8 @@ export interface RadiusVelocityProps {
   /** What the diagram is about: the shell's name. */
   name: string;
   onPick?: (ring: DiagramRing) => void;
+  /** Where the model may be set by hand: its crown and its feet can be taken hold of. */
+  onModel?: (by: Partial<RingParameters>) => void;
 }
 
 /** Data minus model in degrees; null beyond the model's caps. */
@@ -55,13 +58,16 @@ export function RadiusVelocity(props: RadiusVelocityProps) {
     residuals = true,
     name,
     onPick,
+    onModel,
   } = props;
   const { color } = useTheme();
   const own = useMemo(
     () => domainOf([{ rings, model }], (r, m) => ringResidual(r, m, channelWidth)),
     [rings, model, channelWidth],
   );
-  const domain = props.domain ?? own;
+  // Axes that moved under the hand would take the model from it: they wait until it lets go.
+  const [held, setHeld] = useState<DiagramDomain | null>(null);
+  const domain = held ?? props.domain ?? own;
   const showResiduals = residuals && model !== null;
   const l = useMemo(
     () => diagramLayout(domain, width, height, showResiduals),
@@ -73,84 +79,96 @@ export function RadiusVelocity(props: RadiusVelocityProps) {
   const inside = (v: number) => v >= domain.velocity[0] && v <= domain.velocity[1];
 
   return (
-    <View role="img" aria-label={describe(name, rings, model, channelWidth)} style={{ width, height }}>
-      <Svg width={width} height={height} aria-hidden>
-        {l.radiusTicks.values.map((r) => (
-          <G key={r}>
-            <Line x1={l.left} x2={l.right} y1={l.y(r)} y2={l.y(r)} stroke={color.line} strokeWidth={1} />
-            <SvgText {...font} x={l.left - 8} y={l.y(r) + 4} textAnchor="end">
-              {labelOf(r, l.radiusTicks.decimals)}
+    <View style={{ width, height }}>
+      <View role="img" aria-label={describe(name, rings, model, channelWidth)} style={{ width, height }}>
+        <Svg width={width} height={height} aria-hidden>
+          {l.radiusTicks.values.map((r) => (
+            <G key={r}>
+              <Line x1={l.left} x2={l.right} y1={l.y(r)} y2={l.y(r)} stroke={color.line} strokeWidth={1} />
+              <SvgText {...font} x={l.left - 8} y={l.y(r) + 4} textAnchor="end">
+                {labelOf(r, l.radiusTicks.decimals)}
+              </SvgText>
+            </G>
+          ))}
+          {l.velocityTicks.values.map((v) => (
+            <SvgText key={v} {...font} x={l.x(v)} y={l.residualFloor + 16} textAnchor="middle">
+              {labelOf(v, l.velocityTicks.decimals)}
             </SvgText>
-          </G>
-        ))}
-        {l.velocityTicks.values.map((v) => (
-          <SvgText key={v} {...font} x={l.x(v)} y={l.residualFloor + 16} textAnchor="middle">
-            {labelOf(v, l.velocityTicks.decimals)}
+          ))}
+          <SvgText {...names} x={l.left - 36} y={12}>
+            ring radius, °
           </SvgText>
-        ))}
-        <SvgText {...names} x={l.left - 36} y={12}>
-          ring radius, °
-        </SvgText>
-        <SvgText {...names} x={l.right} y={l.residualFloor + 30} textAnchor="end">
-          velocity, km/s
-        </SvgText>
-        {curve?.band && <Path d={curve.band} fill={color.model} fillOpacity={0.2} />}
-        {current != null && inside(current) && (
-          <Line
-            x1={l.x(current)}
-            x2={l.x(current)}
-            y1={l.top - 6}
-            y2={l.residualFloor}
-            stroke={color.text}
-            strokeWidth={1.5}
-            strokeDasharray="2 4"
-          />
-        )}
-        {points.map((p, i) => (
-          <Circle
-            key={i}
-            cx={l.x(p.velocity)}
-            cy={l.y(p.radius)}
-            r={1.5}
-            fill={color.quiet}
-            fillOpacity={0.8}
-          />
-        ))}
-        {curve && <Path d={curve.line} fill="none" stroke={color.model} strokeWidth={2} />}
-        {rings.map((ring) => (
-          <Datum key={ring.velocity} ring={ring} x={l.x(ring.velocity)} y={l.y} onPick={onPick} />
-        ))}
-        {showResiduals && (
-          <>
+          <SvgText {...names} x={l.right} y={l.residualFloor + 30} textAnchor="end">
+            velocity, km/s
+          </SvgText>
+          {curve?.band && <Path d={curve.band} fill={color.model} fillOpacity={0.2} />}
+          {current != null && inside(current) && (
             <Line
-              x1={l.left}
-              x2={l.right}
-              y1={l.yResidual(0)}
-              y2={l.yResidual(0)}
-              stroke={color.line}
-              strokeWidth={1}
+              x1={l.x(current)}
+              x2={l.x(current)}
+              y1={l.top - 6}
+              y2={l.residualFloor}
+              stroke={color.text}
+              strokeWidth={1.5}
+              strokeDasharray="2 4"
             />
-            <SvgText {...font} x={l.left - 8} y={l.yResidual(0) + 4} textAnchor="end">
-              0
-            </SvgText>
-            <SvgText {...names} x={l.left - 36} y={l.residualTop + 2}>
-              data − model, °
-            </SvgText>
-            {rings.map((ring) => {
-              const residual = ringResidual(ring, model, channelWidth);
-              return residual === null ? null : (
-                <Datum
-                  key={ring.velocity}
-                  ring={{ ...ring, theta: residual }}
-                  x={l.x(ring.velocity)}
-                  y={l.yResidual}
-                  small
-                />
-              );
-            })}
-          </>
-        )}
-      </Svg>
+          )}
+          {points.map((p, i) => (
+            <Circle
+              key={i}
+              cx={l.x(p.velocity)}
+              cy={l.y(p.radius)}
+              r={1.5}
+              fill={color.quiet}
+              fillOpacity={0.8}
+            />
+          ))}
+          {curve && <Path d={curve.line} fill="none" stroke={color.model} strokeWidth={2} />}
+          {rings.map((ring) => (
+            <Datum key={ring.velocity} ring={ring} x={l.x(ring.velocity)} y={l.y} onPick={onPick} />
+          ))}
+          {showResiduals && (
+            <>
+              <Line
+                x1={l.left}
+                x2={l.right}
+                y1={l.yResidual(0)}
+                y2={l.yResidual(0)}
+                stroke={color.line}
+                strokeWidth={1}
+              />
+              <SvgText {...font} x={l.left - 8} y={l.yResidual(0) + 4} textAnchor="end">
+                0
+              </SvgText>
+              <SvgText {...names} x={l.left - 36} y={l.residualTop + 2}>
+                data − model, °
+              </SvgText>
+              {rings.map((ring) => {
+                const residual = ringResidual(ring, model, channelWidth);
+                return residual === null ? null : (
+                  <Datum
+                    key={ring.velocity}
+                    ring={{ ...ring, theta: residual }}
+                    x={l.x(ring.velocity)}
+                    y={l.yResidual}
+                    small
+                  />
+                );
+              })}
+            </>
+          )}
+        </Svg>
+      </View>
+      {onModel && model && (
+        <DiagramHandles
+          layout={l}
+          domain={domain}
+          model={model}
+          channelWidth={channelWidth}
+          onModel={onModel}
+          onHold={(holding) => setHeld(holding ? domain : null)}
+        />
+      )}
     </View>
   );
 }

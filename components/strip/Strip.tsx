@@ -12,6 +12,8 @@ export interface StripProps {
   spectrum: readonly (number | null)[];
   marks: ReadonlyMap<number, number>;
   span: { low: number; middle: number; high: number } | null;
+  /** Channels where marks would help most, the best first. */
+  next?: readonly number[];
 }
 
 export function Strip(props: StripProps) {

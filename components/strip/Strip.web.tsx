@@ -26,9 +26,11 @@ const KEYS: Record<string, number> = {
   End: Infinity,
 };
 
+const NONE: readonly number[] = [];
+
 /** Thumbnails, mean spectrum, marks and the model's span in one object: the velocity scrubber. */
 export function Strip(props: StripProps) {
-  const { order, channel, onChannel, picture, spectrum, marks, span } = props;
+  const { order, channel, onChannel, picture, spectrum, marks, span, next = NONE } = props;
   const { color } = useTheme();
   const element = useRef<HTMLDivElement>(null);
   const canvas = useRef<HTMLCanvasElement>(null);
@@ -52,6 +54,7 @@ export function Strip(props: StripProps) {
       edge: color.edgeOnImage,
       box: color.onImage,
       pointer: color.text,
+      ground: color.ground,
       font: `${typeScale.small[0]}px ${fonts.mono}, monospace`,
     }),
     [color],
@@ -67,8 +70,8 @@ export function Strip(props: StripProps) {
     }
     const running = film.current;
     const current = running !== null && Math.round(running) === position ? running : position;
-    drawStrip(ctx, { layout, order, current, picture, spectrum, marks, span }, colours, ratio);
-  }, [layout, order, position, picture, spectrum, marks, span, colours, width]);
+    drawStrip(ctx, { layout, order, current, picture, spectrum, marks, span, next }, colours, ratio);
+  }, [layout, order, position, picture, spectrum, marks, span, next, colours, width]);
   useLayoutEffect(draw, [draw]);
 
   useEffect(() => {

@@ -22,6 +22,8 @@ export interface StripScene {
   marks: ReadonlyMap<number, number>;
   /** The model's near cap, systemic velocity and far cap, km/s. */
   span: { low: number; middle: number; high: number } | null;
+  /** Channels where marks would help most, the best first. */
+  next: readonly number[];
 }
 
 export interface StripColours {
@@ -35,6 +37,8 @@ export interface StripColours {
   /** Of the small triangle above the box, which lies on the page's ground. */
   pointer: string;
   font: string;
+  /** The page's own, under bracket and labels. */
+  ground: string;
 }
 
 /** Heights from top to bottom, px. */
@@ -59,6 +63,7 @@ export function drawStrip(
   drawMarks(ctx, s, c);
   drawBox(ctx, s, c);
   if (s.span) drawSpan(ctx, s, s.span, c);
+  s.next.forEach((channel, rank) => drawNext(ctx, s, channel, rank === 0, c));
   drawLabels(ctx, s, c);
 }
 
@@ -187,6 +192,31 @@ function drawSpan(
   ctx.lineTo(middle, y + 5);
   ctx.strokeStyle = c.model;
   ctx.lineWidth = 2;
+  ctx.stroke();
+}
+
+/** A diamond on the bracket: full for the channel that would help most, open for the others. */
+function drawNext(
+  ctx: CanvasRenderingContext2D,
+  s: StripScene,
+  channel: number,
+  best: boolean,
+  c: StripColours,
+): void {
+  const position = s.order.positions[channel];
+  if (position === undefined) return;
+  const x = xOf(s.layout, position, s.current);
+  const y = TOP + THUMBNAILS + 6;
+  ctx.beginPath();
+  ctx.moveTo(x, y - 5.5);
+  ctx.lineTo(x + 5.5, y);
+  ctx.lineTo(x, y + 5.5);
+  ctx.lineTo(x - 5.5, y);
+  ctx.closePath();
+  ctx.fillStyle = best ? c.model : c.ground;
+  ctx.fill();
+  ctx.strokeStyle = c.model;
+  ctx.lineWidth = 1.75;
   ctx.stroke();
 }
 

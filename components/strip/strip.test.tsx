@@ -73,4 +73,7 @@ test('says neighbouring narrow channels apart', () => {
     '1.57 km/s, channel 2 of 3, 1 mark',
     '1.63 km/s, channel 3 of 3',
   ]);
+  expect(stripText({ order, channel: 2, marks: new Map(), next: [2] })).toBe(
+    '1.63 km/s, channel 3 of 3, marks here would help most',
+  );
 });

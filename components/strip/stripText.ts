@@ -7,9 +7,11 @@ export function stripText({
   order,
   channel,
   marks,
-}: Pick<StripProps, 'order' | 'channel' | 'marks'>): string {
+  next,
+}: Pick<StripProps, 'order' | 'channel' | 'marks' | 'next'>): string {
   const velocity = order.velocities[order.positions[channel] ?? 0] ?? 0;
   const count = marks.get(channel) ?? 0;
   const own = count > 0 ? `, ${count} mark${count === 1 ? '' : 's'}` : '';
-  return `${velocityLabel(velocity, channelStep(order))} km/s, channel ${channel + 1} of ${order.channels.length}${own}`;
+  const wanted = next?.includes(channel) ? ', marks here would help most' : '';
+  return `${velocityLabel(velocity, channelStep(order))} km/s, channel ${channel + 1} of ${order.channels.length}${own}${wanted}`;
 }

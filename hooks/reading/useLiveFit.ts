@@ -23,7 +23,6 @@ export function useLiveFit(
   marks: readonly PlacedMark[],
   wcs: Wcs,
   channelWidth: number,
-  range: readonly [number, number],
   start: RingParameters | null = null,
 ): LiveFit {
   // The map follows the finger first; the fit follows when there is time.
@@ -32,18 +31,15 @@ export function useLiveFit(
     const onSky = skyMarks(deferred, wcs);
     const readings = readingByChannel(onSky);
     const { fit, problem } = fitted(onSky, readings.length, channelWidth, start);
-    const value = (name: string) => fit?.parameters[name]?.value ?? NaN;
-    const model = fit ? { vSys: value('vSys'), vExp: value('vExp') } : null;
     const sentence = advice({
       readings,
       marks: onSky.length,
-      model,
+      fitted: fit !== null,
       problem: problem?.detail ?? null,
-      range,
       channelWidth,
     });
     return { marks: onSky, readings, fit, problem, sentence };
-  }, [deferred, wcs, channelWidth, range, start]);
+  }, [deferred, wcs, channelWidth, start]);
 }
 
 function fitted(
