@@ -29,7 +29,7 @@ async function onCube(file: string, json: unknown, request: Request): Promise<vo
     const placed = marksOnCube(await readCubeHead(source), json, request.marks);
     const input = constrained(placed.input, request);
     if (trace === null) return print(fitShell(input, options), placed);
-    const around = fitShell(input, { ...options, bootstrap: 0 });
+    const around = fitShell(input, { ...options, bootstrap: 0, extras: false });
     const traced = await traceOnCube(source, around, trace);
     const { vSys, constraints } = input;
     const fit = fitShell({ ...traced.input, vSys, constraints }, options);

@@ -77,4 +77,6 @@ export const finishFit = ({ task: { model, options, codeVersion }, solved, draws
 const engineOptions = (model: ModelName, { bootstrap, seed, setAside }: FitOptions): engine.FitOptions => ({
   ...{ model, bootstrap, seed, setAside },
   optimiser: 'record',
+  extras: true,
+  extras: true,
 });

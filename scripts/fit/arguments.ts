@@ -28,7 +28,7 @@ export interface Request {
  */
 export function parse(args: readonly string[]): Request {
   const files: string[] = [];
-  const options: FitOptions = {};
+  const options: FitOptions = { extras: true };
   const constraints: Constraints = {};
   let trace: Edge | null = null;
   for (let i = 0; i < args.length; i++) {

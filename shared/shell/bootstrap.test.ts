@@ -68,7 +68,7 @@ test('percentiles unwrap angles and keep infinities', () => {
   expect(lo).toBeCloseTo(-0.34, 10);
   expect(hi).toBeCloseTo(0.34, 10);
   const unbounded = Float64Array.from({ length: 101 }, (_, i) => (i < 70 ? i : Infinity));
-  expect(percentiles(unbounded, 1, 0, 20)).toEqual({ lo: 16, hi: Infinity, sd: Infinity });
+  expect(percentiles(unbounded, 1, 0, 20)).toEqual({ lo: 16, median: 50, hi: Infinity, sd: Infinity });
 });
 
 test('draws made in parts, by others who got the solution as plain data, are those made in one go', () => {

@@ -187,7 +187,7 @@ function placer({ model, marks }: ShellProblem, { frame, p }: ShellState, errors
 const ONE_SIGMA_TAIL = 0.1587;
 
 /**
- * The 16th and 84th percentiles of one parameter over the draws (the nearest draw), angles unwrapped about the fitted
+ * The 16th, 50th and 84th percentiles of one parameter over the draws (the nearest draw), angles unwrapped about the fitted
  * value first; half their distance is the standard deviation. Infinite where that share of the draws is unbounded.
  *
  * @param period 360 for a longitude, 180 for the direction of an axis
@@ -200,7 +200,7 @@ export function percentiles(
   about: number,
   period?: number,
   tail = ONE_SIGMA_TAIL,
-): { lo: number; hi: number; sd: number } {
+): { lo: number; median: number; hi: number; sd: number } {
   const draws = values.length / size;
   const sorted = Float64Array.from({ length: draws }, (_, d) => {
     const value = values[d * size + column]!;
@@ -208,5 +208,5 @@ export function percentiles(
   }).sort();
   const at = (share: number) => sorted[Math.round(share * (draws - 1))]!;
   const [lo, hi] = [at(tail), at(1 - tail)];
-  return { lo, hi, sd: 0.5 * (hi - lo) };
+  return { lo, median: at(0.5), hi, sd: 0.5 * (hi - lo) };
 }

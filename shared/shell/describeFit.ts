@@ -2,7 +2,6 @@ import { DEGREE, lonLatOf } from '@/shared/sky/greatCircle';
 import { percentiles, type BootstrapDraws } from '@/shared/shell/bootstrap';
 import { arcCovered, riseAboveLine } from '@/shared/shell/arc';
 import { channelCurve, curveTable } from '@/shared/shell/channelCurve';
-import type { ErrorModel } from '@/shared/shell/errorModel';
 import type { FitOptions } from '@/shared/shell/fit';
 import type { FitExtra, FitResult, FitRing } from '@/shared/shell/fitResult';
 import {
@@ -14,17 +13,16 @@ import {
 } from '@/shared/shell/findings';
 import { PARAMETER_WORDS } from '@/shared/shell/constraints';
 import { evaluation, frameAt } from '@/shared/shell/frame';
-import { informationCriteria } from '@/shared/shell/information';
 import { finite, report } from '@/shared/shell/intervals';
-import { isInformed, priorChi2, reached } from '@/shared/shell/known';
+import { isInformed, reached } from '@/shared/shell/known';
 import type { MarkSet } from '@/shared/shell/markSet';
 import { naturalValues } from '@/shared/shell/naturalParameters';
+import { qualityOf, waldTest } from '@/shared/shell/quality';
 import { evaluate } from '@/shared/shell/residuals';
 import { fitRing } from '@/shared/shell/ring';
 import { median } from '@/shared/shell/robust';
-import { EXTRA_1, EXTRA_2, LN_W, THETA, V0 } from '@/shared/shell/shellModel';
+import { LN_W, THETA, V0 } from '@/shared/shell/shellModel';
 import type { Solved } from '@/shared/shell/solveShell';
-import { upperF } from '@/shared/shell/studentT';
 import { warningsOf } from '@/shared/shell/warnings';
 
 /** A solved problem as the JSON that is stored and shown. */
@@ -33,14 +31,8 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
   const { model, marks, known } = problem;
   const { p } = outcome;
   const reported = report(model, outcome, errors, known);
-  const { residual, variance } = errors.evaluation;
+  const quality = qualityOf(problem, outcome, errors);
   const values = naturalValues(model, outcome);
-  let chi2 = priorChi2(known, values);
-  for (let i = 0; i < marks.count; i++) chi2 += residual[i]! ** 2 / variance[i]!;
-  const free = p.length - known.filter((k) => k.fixed !== null).length;
-  const dof = marks.count - free + known.filter((k) => k.prior !== null).length;
-  const { aicc, bic } = informationCriteria(chi2, variance, free);
-
   const names = [...reported.names];
   const w = Math.exp(p[LN_W]!);
   const seLnVExp = Math.sqrt(errors.covariance[LN_W * p.length + LN_W]!);
@@ -66,12 +58,13 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
     reach: { low: (marks.velocity[0]! - p[V0]!) / w, high: (marks.velocity.at(-1)! - p[V0]!) / w },
     arcDeg,
     riseSigma,
-    chi2PerDof: chi2 / Math.max(dof, 1),
+    chi2PerDof: quality.chi2 / Math.max(quality.dof, 1),
   });
   const { lon, lat } = lonLatOf(start.centre);
   const size = names.length;
   const named = (value: (a: number) => number) =>
     Object.fromEntries(names.map((name, a) => [name, value(a)]));
+  const wald = waldTest(p, errors);
   const extra: FitExtra = {
     covariance: names.map((_, a) => names.map((_, b) => finite(reported.covariance[a * size + b]!))),
     leastSquaresSe: Object.fromEntries(
@@ -92,16 +85,13 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
     sigmaUsedDeg: Math.sqrt(median(all.sigma2)) / DEGREE,
     settled: outcome.settled,
     convergence: convergenceOf(outcome, atBounds.length > 0),
-    ...(size > EXTRA_1 ? { extraParameters: extraParameters(p, errors) } : {}),
+    ...(wald === null ? {} : { extraParameters: wald }),
   };
   return {
     model,
     parameters: withConstraints(reported.parameters, names, known, atBounds),
     correlation: { names, matrix: reported.correlation.map((row) => row.map(finite)) },
-    chi2,
-    dof,
-    aicc: finite(aicc),
-    bic: finite(bic),
+    ...quality,
     errorBars: 'covariance',
     warnings,
     residuals: residualsOf(solved),
@@ -124,36 +114,23 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
   };
 }
 
-/**
- * How far the model's two extra parameters lie from the sphere's zeros (Wald's test): their squared distance in units
- * of the channel-aware covariance, against Fisher's F. This decides between models; the information criteria take marks
- * as independent and favour the richer model where channels share errors.
- */
-function extraParameters(p: Float64Array, { covariance, tDof }: ErrorModel): FitExtra['extraParameters'] {
-  const size = p.length;
-  const V = (a: number, b: number) => covariance[a * size + b]!;
-  const [x, y] = [p[EXTRA_1]!, p[EXTRA_2]!];
-  const [xx, xy, yy] = [V(EXTRA_1, EXTRA_1), V(EXTRA_1, EXTRA_2), V(EXTRA_2, EXTRA_2)];
-  const f = (x * x * yy - 2 * x * y * xy + y * y * xx) / (xx * yy - xy * xy) / 2;
-  const dof = Math.min(tDof[EXTRA_1]!, tDof[EXTRA_2]!);
-  return { f, probability: upperF(f, 2, dof), dof };
-}
-
 /** Replace the interval ends by the bootstrap's percentiles, and say how the draws went. */
 export function withBootstrap(fit: FitResult, drawn: BootstrapDraws): FitResult {
   const { names } = fit.correlation;
   const parameters = { ...fit.parameters };
   const sd: Record<string, number | null> = {};
+  const median: Record<string, number | null> = {};
   names.forEach((name, a) => {
     const fitted = fit.parameters[name]!;
     const period = name === 'l' ? 360 : name === 'positionAngle' ? 180 : undefined;
     const found = percentiles(drawn.values, names.length, a, fitted.value, period);
     parameters[name] = { ...fitted, lo: finite(found.lo), hi: finite(found.hi) };
     sd[name] = finite(found.sd);
+    median[name] = finite(found.median);
   });
   const { failed, unbounded } = drawn;
   const draws = drawn.values.length / names.length;
-  const summary = { draws, sd, failed, vExpUnbounded: unbounded };
+  const summary = { draws, sd, median, failed, vExpUnbounded: unbounded };
   return { ...fit, parameters, errorBars: 'bootstrap', extra: { ...fit.extra, bootstrap: summary } };
 }
 

@@ -3,6 +3,7 @@ import { bootstrap, type BootstrapDraws } from '@/shared/shell/bootstrap';
 import type { RingParameters } from '@/shared/shell/channelCurve';
 import { readConstraints } from '@/shared/shell/constraints';
 import { describeFit, withBootstrap } from '@/shared/shell/describeFit';
+import { withExtras } from '@/shared/shell/extras/extras';
 import { readMarks, type FitInput } from '@/shared/shell/fitInput';
 import type { FitResult } from '@/shared/shell/fitResult';
 import { PARAMETER_NAMES, type ModelName } from '@/shared/shell/shellModel';
@@ -18,6 +19,11 @@ export interface FitOptions {
   bootstrap?: number;
   /** Seed of its random numbers. */
   seed?: number;
+  /**
+   * For the fit of record: profile likelihoods, the fit without each channel, other models on the same marks. Not made
+   * for more than 20 000 marks.
+   */
+  extras?: boolean;
   /** Kept in the provenance. */
   codeVersion?: string;
   /** Begin here, for instance with what a person set by hand, instead of with linear least squares: degrees, km/s. */
@@ -82,7 +88,8 @@ export function bootstrapDraws(
 
 /** The last third: the fit as the JSON that is stored and shown, its intervals from the draws where there are any. */
 export function finishFit(solved: Solved, options: FitOptions, draws: BootstrapDraws | null): FitResult {
-  const described = describeFit(solved, options);
+  const plain = describeFit(solved, options);
+  const described = options.extras ? withExtras(plain, solved) : plain;
   if (draws === null) return described;
   options.onDraws?.(draws.values);
   return withBootstrap(described, draws);

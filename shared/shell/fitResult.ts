@@ -111,6 +111,8 @@ export interface FitExtra {
     draws: number;
     /** Half the width of the 68 % interval. */
     sd: Record<string, number | null>;
+    /** The 50th percentile. */
+    median: Record<string, number | null>;
     failed: number;
     /** Draws in which the expansion velocity ran to its bound. */
     vExpUnbounded: number;

@@ -29,6 +29,8 @@ export interface SolveOptions {
   /** Stop when a step is shorter than this many standard errors. */
   tolerance?: number;
   maxIterations?: number;
+  /** Variances to weight the marks by, in place of those of the parameters reached so far. */
+  variance?: Float64Array;
 }
 
 export interface Outcome extends ShellState {
@@ -116,7 +118,7 @@ export function solve(
     if (robust && iteration % ROBUST_EVERY === 0 && iteration <= ROBUST_LAST)
       robustWeights(ws.now.residual, ws.now.variance, iteration >= ROBUST_EVERY, ws.scratch, ws.robust);
     for (let i = 0; i < marks.count; i++) {
-      const fresh = ws.now.variance[i]!;
+      const fresh = options.variance?.[i] ?? ws.now.variance[i]!;
       ws.variance[i] = iteration < HOLD_STEPS ? fresh : Math.sqrt(ws.variance[i]! * fresh);
       ws.weight[i] = ws.robust[i]! / ws.variance[i]!;
     }
