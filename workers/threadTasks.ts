@@ -78,5 +78,4 @@ const engineOptions = (model: ModelName, { bootstrap, seed, setAside }: FitOptio
   ...{ model, bootstrap, seed, setAside },
   optimiser: 'record',
   extras: true,
-  extras: true,
 });
