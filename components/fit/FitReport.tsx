@@ -3,6 +3,7 @@ import { View } from 'react-native';
 import { useFitDraws, useFitMarks } from '@/hooks/useFits';
 import { space } from '../ui/tokens';
 import { useWide } from '../ui/useWide';
+import { ApartPanel } from './ApartPanel';
 import { ComparisonPanel } from './ComparisonPanel';
 import { CornerPanel } from './CornerPanel';
 import { CorrelationTable } from './CorrelationTable';
@@ -31,6 +32,7 @@ export default function FitReport({ fit, name }: { fit: DoneFit; name: string })
       <OutlierPanel fit={fit} />
       <ResidualTable fit={fit} />
       <TracePanel fit={fit} />
+      <ApartPanel fit={fit} />
     </>
   );
   const right = (

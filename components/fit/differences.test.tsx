@@ -8,6 +8,7 @@ const fit = (id: string, part: object = {}, options: object = {}): Fit =>
     model: 'sphere',
     status: 'done',
     traceId: null,
+    readingRevision: 3,
     parameters: {},
     provenance: { marks: 40 },
     extra: { setAside: [] },
@@ -20,13 +21,19 @@ test('fits that agree are told by their model alone', () =>
 
 test('only what differs is said, of each fit', () => {
   const found = differences([
-    fit('a', { provenance: { marks: 42 } }),
+    fit('a', { provenance: { marks: 42 }, readingRevision: 4 }),
     fit('b', {}, { bootstrap: 0 }),
     fit('c', { model: 'drifting', extra: { setAside: [1, 2] } }),
   ]);
-  expect(found.get('a')).toEqual(['sphere', '42 marks', '0 set aside', '500 draws', 'seed 1']);
-  expect(found.get('b')).toEqual(['sphere', '40 marks', '0 set aside', 'no draws']);
-  expect(found.get('c')).toEqual(['drifting sphere', '40 marks', '2 set aside', '500 draws', 'seed 1']);
+  expect(found.get('a')).toEqual(['sphere', '42 marks, revision 4', '0 set aside', '500 draws', 'seed 1']);
+  expect(found.get('b')).toEqual(['sphere', '40 marks, revision 3', '0 set aside', 'no draws']);
+  expect(found.get('c')).toEqual([
+    'drifting sphere',
+    '40 marks, revision 3',
+    '2 set aside',
+    '500 draws',
+    'seed 1',
+  ]);
 });
 
 test('constraints are said even where all fits share them', () => {
@@ -54,5 +61,5 @@ test('revisions of the marks and traced rims tell fits apart', () => {
 
 test('a fit under way has no counts yet', () => {
   const running = fit('a', { status: 'running', parameters: undefined, extra: undefined });
-  expect(differences([running, fit('b')]).get('a')).toEqual(['sphere', 'outliers set aside']);
+  expect(differences([running, fit('b')]).get('a')).toEqual(['sphere', 'revision 3', 'outliers set aside']);
 });

@@ -48,13 +48,10 @@ export function sourceOf(fit: Pick<Fit, 'traceId' | 'createdBy'>, traces: readon
 export const edgeWords = (edge: Trace['edge'] | undefined): string =>
   edge === undefined ? 'traced rim' : edge === 'ridge' ? 'traced ridge' : 'traced inner edge';
 
-/** Marks are told apart by their revision, or by their number where none is kept. */
+/** Marks are told apart by their revision; how many there were helps a person to know which. */
 function marksOf(fit: Fit): string {
-  const { readingRevision: revision } = fit as { readingRevision?: number };
   const number = isDone(fit) ? count(fit.provenance.marks, 'mark') : '';
-  return [number, revision !== undefined && fit.traceId === null && `revision ${revision}`]
-    .filter(Boolean)
-    .join(', ');
+  return [number, fit.traceId === null && `revision ${fit.readingRevision}`].filter(Boolean).join(', ');
 }
 
 function constraintsOf({ options }: Fit): string {

@@ -32,6 +32,7 @@ const toFit = (row: FitRow): Fit => ({
   id: row.id,
   shellId: row.shellId,
   readingId: row.readingId,
+  readingRevision: row.readingRevision,
   cubeId: row.cubeId,
   model: row.model,
   status: row.status,

@@ -15,6 +15,7 @@ export interface FitRow {
   regionId: string;
   shellId: string;
   readingId: string;
+  readingRevision: number;
   cubeId: string;
   model: ModelName;
   options: FitOptions;
@@ -33,7 +34,8 @@ export interface FitRow {
 
 const select = `
   select fits.id, regions.team_id as "teamId", regions.id as "regionId", fits.shell_id as "shellId",
-         fits.reading_id as "readingId", fits.cube_id as "cubeId", fits.model, fits.options, fits.status,
+         fits.reading_id as "readingId",
+         fits.reading_revision as "readingRevision", fits.cube_id as "cubeId", fits.model, fits.options, fits.status,
          fits.progress, fits.activity, fits.outcome, fits.problem, fits.trace_id as "traceId", coalesce(shells.adopted_fit_id = fits.id, false) as adopted,
          fits.created_by as "createdById", people.name as "createdByName", fits.created_at as "createdAt",
          fits.finished_at as "finishedAt"

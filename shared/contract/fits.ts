@@ -178,6 +178,7 @@ export const Fit = z
     id: Id,
     shellId: Id,
     readingId: Id,
+    readingRevision: z.number().int().describe('of the marks, as they were frozen'),
     cubeId: Id,
     model: z.enum(MODELS),
     status: z.enum(FIT_STATUS),
