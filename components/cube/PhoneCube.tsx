@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
 import { ConflictNotice } from '@/components/cube/ConflictNotice';
+import { GhostList } from '@/components/cube/GhostList';
 import { Headline } from '@/components/cube/Headline';
 import { LivePanel } from '@/components/cube/LivePanel';
 import { LookPanel } from '@/components/cube/LookPanel';
@@ -85,6 +86,7 @@ export function PhoneCube({
               {hasReading && <ReadingTable />}
               {hasReading && <MarkDetails />}
               {hasReading && <MarkList />}
+              {hasReading && <GhostList />}
               <ShellChooser />
             </>
           ),

@@ -1,5 +1,6 @@
 import { ScrollView, View } from 'react-native';
 import { ConflictNotice } from '@/components/cube/ConflictNotice';
+import { GhostList } from '@/components/cube/GhostList';
 import { Headline } from '@/components/cube/Headline';
 import { LivePanel } from '@/components/cube/LivePanel';
 import { LookPanel } from '@/components/cube/LookPanel';
@@ -15,9 +16,11 @@ import { ShellChooser } from '@/components/cube/ShellChooser';
 import { StripPanel } from '@/components/cube/StripPanel';
 import { Tools } from '@/components/cube/Tools';
 import type { RecordFit } from '@/components/cube/useRecordFit';
+import { SecondMap } from '@/components/seeing/SecondMap';
+import { Slices } from '@/components/slices/Slices';
 import { Rule } from '@/components/ui/Panel';
 import { useTheme } from '@/components/ui/theme';
-import { hairline, space } from '@/components/ui/tokens';
+import { breakpoints, hairline, space } from '@/components/ui/tokens';
 import { useWide } from '@/components/ui/useWide';
 
 /** Side columns: comfortable from 1180 px on, narrow below, so that the map keeps the middle. */
@@ -31,7 +34,7 @@ export function WideCube({
   record: RecordFit;
   look: { open: boolean; toggle: () => void };
 }) {
-  const { shell, hasReading } = useSession();
+  const { shell, hasReading, seeing } = useSession();
   const { color } = useTheme();
   const { width, height } = useWide();
   const [left, right] = width >= COLUMNS.from ? COLUMNS.wide : COLUMNS.narrow;
@@ -49,6 +52,7 @@ export function WideCube({
           {hasReading && <ReadingTable />}
           {hasReading && <MarkDetails />}
           {hasReading && <MarkList />}
+          {hasReading && <GhostList />}
         </ScrollView>
       </View>
       <View style={{ flex: 1, minWidth: 0, padding: space(4), paddingBottom: space(2), gap: space(2) }}>
@@ -71,7 +75,10 @@ export function WideCube({
         </View>
         <ConflictNotice />
         <View style={{ flex: 1, minHeight: space(40) }}>
-          <MapPanel />
+          <View style={{ flex: 1, flexDirection: 'row', gap: space(2) }}>
+            <MapPanel />
+            {seeing.second && width >= breakpoints.roomy && <SecondMap />}
+          </View>
           {look.open && (
             <View
               pointerEvents="box-none"
@@ -88,6 +95,7 @@ export function WideCube({
             </View>
           )}
         </View>
+        {seeing.slice && <Slices height={Math.min(Math.max(height * 0.2, 150), 260)} closable />}
         <StripPanel />
       </View>
       <View
