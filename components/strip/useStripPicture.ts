@@ -1,14 +1,9 @@
-import { useEffect, useMemo, useState } from 'react';
+import { useMemo } from 'react';
 import type { StripPicture } from '@/components/strip/drawStrip';
-import { apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
-import { cubeImage } from '@/hooks/cubeImages';
+import { asProblem, type ApiProblem } from '@/hooks/api';
+import { useStripGrey, type StripGrey } from '@/hooks/planes/thumbnailPlanes';
 import type { Cube } from '@/shared/contract/cubes';
 import { TONE_CURVES, type Tone } from '@/shared/image/tone';
-
-interface Grey {
-  pixels: ImageData;
-  step: number;
-}
 
 /** The cube's thumbnails in the palette and tone of the map; they keep one brightness window, so that they compare. */
 export function useStripPicture(
@@ -16,42 +11,13 @@ export function useStripPicture(
   ramp: Uint32Array,
   tone: Tone,
 ): { picture: StripPicture | null; problem: ApiProblem | null } {
-  const [grey, setGrey] = useState<Grey | null>(null);
-  const [problem, setProblem] = useState<ApiProblem | null>(null);
-
-  const path = cubeImage(cube, 'strip');
-  useEffect(() => {
-    if (typeof createImageBitmap === 'undefined') return;
-    const leaving = new AbortController();
-    setGrey(null);
-    setProblem(null);
-    readStrip(path, leaving.signal).then(
-      (found) => !leaving.signal.aborted && setGrey(found),
-      (error: unknown) => !leaving.signal.aborted && setProblem(asProblem(error)),
-    );
-    return () => leaving.abort();
-  }, [path]);
-
+  const { data: grey, error } = useStripGrey(cube);
   const picture = useMemo(() => (grey ? coloured(grey, ramp, tone) : null), [grey, ramp, tone]);
-  return { picture, problem };
-}
-
-async function readStrip(path: string, signal: AbortSignal): Promise<Grey | null> {
-  const answer = await apiResponse(path, { signal });
-  const bitmap = await createImageBitmap(await answer.blob());
-  const canvas = document.createElement('canvas');
-  canvas.width = bitmap.width;
-  canvas.height = bitmap.height;
-  const ctx = canvas.getContext('2d', { willReadFrequently: true });
-  if (!ctx) return null;
-  ctx.drawImage(bitmap, 0, 0);
-  bitmap.close();
-  const pixels = ctx.getImageData(0, 0, canvas.width, canvas.height);
-  return { pixels, step: Math.max(1, Number(answer.headers.get('Strip-Step') ?? 1) || 1) };
+  return { picture, problem: error === undefined ? null : asProblem(error) };
 }
 
 /** Grey levels 1 … 255 through the tone into the palette; blanks, 0 (give or take the compression), take its low end. */
-function coloured({ pixels, step }: Grey, ramp: Uint32Array, tone: Tone): StripPicture | null {
+function coloured({ pixels, step }: StripGrey, ramp: Uint32Array, tone: Tone): StripPicture | null {
   const { forward } = TONE_CURVES[tone];
   const colour = Uint32Array.from(
     { length: 256 },

@@ -14,6 +14,8 @@ export interface ChannelPlane {
   scale: number;
   offset: number;
   blank: number;
+  /** A thumbnail in the place of a plane that is on its way. */
+  standIn?: boolean;
   /** Of a map: which values were left out, in words. */
   mask?: string;
 }

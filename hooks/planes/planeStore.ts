@@ -1,4 +1,5 @@
 import type { ChannelPlane } from '@/hooks/planes/decodePlane';
+import { pace, type Pace } from '@/hooks/planes/pace';
 
 /** Longest side of a plane as asked for; null: as it is in the cube. */
 export type PlaneSize = number | null;
@@ -12,13 +13,22 @@ export interface PlaneStoreOptions {
   budgetBytes: number;
   /** Requests at a time. */
   lanes?: number;
+  /** Milliseconds; given by tests. */
+  now?: () => number;
 }
 
 export interface PlaneStore {
   /** The finest plane held of a channel. */
   best(channel: number): ChannelPlane | null;
-  /** Show this channel next, sharp enough for an image that is `sidePx` device pixels long; neighbours follow. */
-  want(channel: number, sidePx: number): void;
+  /** The plane of a channel at one size, where it is held. */
+  at(channel: number, size: PlaneSize): ChannelPlane | null;
+  /** The sizes there are, small to whole. */
+  sizes: readonly PlaneSize[];
+  /**
+   * Show this channel next, sharp enough for an image that is `sidePx` device pixels long, and these others with it;
+   * neighbours follow.
+   */
+  want(channel: number, sidePx: number, others?: readonly number[]): void;
   problem(channel: number): unknown;
   retry(): void;
   subscribe(listener: () => void): () => void;
@@ -31,15 +41,18 @@ export interface PlaneStore {
 const STEPS = [256, 1024];
 const NEIGHBOUR_BYTES = 24e6;
 const MOST_NEIGHBOURS = 12;
+/** Full planes wait until the hand has rested for this long. */
+const REST_MS = 140;
 
 /**
  * Planes in memory: the least recently used go first when they no longer fit.
  *
- * What is wanted is loaded first, small before large; then its neighbours on both sides, so that the next step is
- * there before it is asked for. What is no longer wanted is given up.
+ * What is wanted is loaded first, small before large; then its neighbours, more of them on the side to which the hand
+ * moves and the farther the faster, so that the next step is there before it is asked for. While the hand moves on,
+ * only small planes are asked for. What is no longer wanted is given up.
  */
 export function planeStore(options: PlaneStoreOptions): PlaneStore {
-  const { load, side, channels, budgetBytes, lanes = 4 } = options;
+  const { load, side, channels, budgetBytes, lanes = 4, now = () => performance.now() } = options;
   const sizes: PlaneSize[] = [...STEPS.filter((step) => step < side / 1.5), null];
   const held = new Map<string, ChannelPlane>();
   const loading = new Map<string, AbortController>();
@@ -47,7 +60,9 @@ export function planeStore(options: PlaneStoreOptions): PlaneStore {
   const listeners = new Set<() => void>();
   let bytes = 0;
   let version = 0;
-  let wanted: { channel: number; size: PlaneSize } | null = null;
+  let wanted: { channel: number; size: PlaneSize; others: readonly number[] } | null = null;
+  let moving: Pace | null = null;
+  let resting: ReturnType<typeof setTimeout> | undefined;
   let closed = false;
 
   const keyOf = (channel: number, size: PlaneSize) => `${channel}/${size ?? 'whole'}`;
@@ -72,14 +87,21 @@ export function planeStore(options: PlaneStoreOptions): PlaneStore {
   /** What should be there, most urgent first. */
   const wishes = (): { channel: number; size: PlaneSize }[] => {
     if (!wanted) return [];
-    const { channel, size } = wanted;
-    const list = sizes.slice(0, sizes.indexOf(size) + 1).map((s) => ({ channel, size: s }));
-    const neighbours = Math.min(
+    const { channel, others } = wanted;
+    const fast = moving?.fast ?? false;
+    const size = fast ? sizes[0]! : wanted.size;
+    const steps = sizes.slice(0, sizes.indexOf(size) + 1);
+    const list = steps.flatMap((s) => [channel, ...others].map((c) => ({ channel: c, size: s })));
+    const most = Math.min(
       MOST_NEIGHBOURS,
-      Math.max(2, Math.floor(NEIGHBOUR_BYTES / 2 / bytesOf(size))),
+      Math.max(2, Math.floor(NEIGHBOUR_BYTES / 2 / bytesOf(wanted.size))),
     );
-    for (let d = 1; d <= neighbours; d++)
-      for (const c of [channel + d, channel - d])
+    const ahead = Math.max(most, moving?.ahead ?? 0);
+    const way = moving?.way ?? 1;
+    for (let d = 1; d <= ahead; d++)
+      for (const c of d <= most / (fast ? 4 : 1)
+        ? [channel + d * way, channel - d * way]
+        : [channel + d * way])
         if (c >= 0 && c < channels) list.push({ channel: c, size: d <= 2 ? size : sizes[0]! });
     return list;
   };
@@ -99,7 +121,7 @@ export function planeStore(options: PlaneStoreOptions): PlaneStore {
     // until something of the wanted channel is there, nothing else competes with it for the line
     const blank = wanted !== null && !sizes.some((s) => held.has(keyOf(wanted!.channel, s)));
     for (const { channel, size } of list) {
-      if (loading.size >= (blank ? 1 : lanes)) break;
+      if (loading.size >= (blank && !moving?.fast ? 1 : lanes)) break;
       const key = keyOf(channel, size);
       if (covered(channel, size) || loading.has(key) || failed.has(key)) continue;
       const controller = new AbortController();
@@ -123,24 +145,39 @@ export function planeStore(options: PlaneStoreOptions): PlaneStore {
     }
   };
 
+  const touched = (key: string) => {
+    const plane = held.get(key);
+    if (!plane) return null;
+    held.delete(key); // to the end of the line of those that must go
+    held.set(key, plane);
+    return plane;
+  };
+
   return {
+    sizes,
     best(channel) {
       for (let i = sizes.length - 1; i >= 0; i--) {
-        const key = keyOf(channel, sizes[i]!);
-        const plane = held.get(key);
-        if (!plane) continue;
-        held.delete(key); // to the end of the line of those that must go
-        held.set(key, plane);
-        return plane;
+        const plane = touched(keyOf(channel, sizes[i]!));
+        if (plane) return plane;
       }
       return null;
     },
-    want(channel, sidePx) {
+    at: (channel, size) => touched(keyOf(channel, size)),
+    want(channel, sidePx, others = []) {
       // The smallest step that still has a pixel for each of the screen's.
       const size = sizes.find((s) => s === null || s >= sidePx * 0.75) ?? null;
-      if (wanted?.channel === channel && wanted.size === size) return;
-      if (wanted?.channel !== channel) for (const s of sizes) failed.delete(keyOf(channel, s));
-      wanted = { channel, size };
+      if (wanted?.channel === channel && wanted.size === size && `${wanted.others}` === `${others}`) return;
+      if (wanted?.channel !== channel) {
+        for (const s of sizes) failed.delete(keyOf(channel, s));
+        moving = wanted ? pace(moving, wanted.channel, channel, now()) : null;
+        clearTimeout(resting);
+        if (moving?.fast)
+          resting = setTimeout(() => {
+            if (moving) moving = { ...moving, fast: false, ahead: 0 };
+            pump();
+          }, REST_MS);
+      }
+      wanted = { channel, size, others };
       pump();
     },
     problem(channel) {
@@ -159,6 +196,7 @@ export function planeStore(options: PlaneStoreOptions): PlaneStore {
     version: () => version,
     close() {
       closed = true;
+      clearTimeout(resting);
       for (const controller of loading.values()) controller.abort();
       loading.clear();
     },

@@ -3,10 +3,11 @@ import { apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
 import { cubeImage } from '@/hooks/cubeImages';
 import { decodePlane, type ChannelPlane } from '@/hooks/planes/decodePlane';
 import { planeStore, type PlaneStore } from '@/hooks/planes/planeStore';
+import { useThumbnailPlanes } from '@/hooks/planes/thumbnailPlanes';
 import type { Cube } from '@/shared/contract/cubes';
 
 /** Phones keep less: a tab that takes too much is ended by the system. */
-const BUDGET_BYTES = { fine: 256e6, coarse: 96e6 };
+const BUDGET_BYTES = { fine: 160e6, coarse: 96e6 };
 
 export interface Planes {
   plane: ChannelPlane | null;
@@ -14,12 +15,13 @@ export interface Planes {
   retry: () => void;
 }
 
-type Drawn = Pick<Cube, 'id' | 'readyAt'>;
+type Drawn = Pick<Cube, 'id' | 'readyAt' | 'window'>;
+type Image = { nx: number; ny: number; channels: number };
 
 const stores = new Map<string, PlaneStore>();
 
 /** One store for a reading of a cube; opening another cube lets the first one's planes go. */
-function storeOf(cube: Drawn, side: number, channels: number): PlaneStore {
+function storeOf(cube: Pick<Cube, 'id' | 'readyAt'>, side: number, channels: number): PlaneStore {
   const key = `${cube.id} ${cube.readyAt}`;
   const known = stores.get(key);
   if (known) return known;
@@ -42,28 +44,50 @@ function storeOf(cube: Drawn, side: number, channels: number): PlaneStore {
   return store;
 }
 
+export interface ChannelPlanes extends Planes {
+  store: PlaneStore;
+  /** Changes with what the store holds. */
+  version: number;
+  /** A channel's thumbnail as a plane; null until they are read. */
+  thumbnail: (channel: number) => ChannelPlane | null;
+}
+
 /**
- * The plane to show for a channel: the finest one there is, at once when it is in memory; null while it is on its way.
+ * The plane to show for a channel: the finest one there is, at once when it is in memory; else its thumbnail.
  *
  * @param sidePx device pixels along the image's longer side as it is drawn now
+ * @param others channels that are needed with it
  */
 export function usePlanes(
-  { id, readyAt }: Drawn,
-  image: { nx: number; ny: number; channels: number },
+  cube: Drawn,
+  image: Image,
   channel: number,
   sidePx: number,
-): Planes {
+  others: readonly number[] = NONE,
+): ChannelPlanes {
+  const { id, readyAt } = cube;
   const side = Math.max(image.nx, image.ny);
   const store = useMemo(
     () => storeOf({ id, readyAt }, side, image.channels),
     [id, readyAt, side, image.channels],
   );
-  useSyncExternalStore(store.subscribe, store.version, store.version);
-  useEffect(() => store.want(channel, sidePx), [store, channel, sidePx]);
-  const plane = store.best(channel);
-  const problem = plane ? null : store.problem(channel);
+  const version = useSyncExternalStore(store.subscribe, store.version, store.version);
+  useEffect(() => store.want(channel, sidePx, others), [store, channel, sidePx, others]);
+  const thumbnail = useThumbnailPlanes(cube, image);
+  const held = store.best(channel);
+  const problem = held ? null : store.problem(channel);
+  const plane = held ?? (problem === null ? thumbnail(channel) : null);
   return useMemo(
-    () => ({ plane, problem: problem === null ? null : asProblem(problem), retry: store.retry }),
-    [plane, problem, store],
+    () => ({
+      plane,
+      problem: problem === null ? null : asProblem(problem),
+      retry: store.retry,
+      store,
+      version,
+      thumbnail,
+    }),
+    [plane, problem, store, version, thumbnail],
   );
 }
+
+const NONE: readonly number[] = [];

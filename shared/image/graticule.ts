@@ -1,11 +1,13 @@
 import { pathThrough, type Path, type Project } from '@/shared/image/skyPath';
-import { labelOf, niceTicks } from '@/shared/image/ticks';
+import { decimalLabel, sexagesimalTicks } from '@/shared/image/sexagesimal';
+import { niceTicks } from '@/shared/image/ticks';
 import { toImage, toScreen, type ScreenPoint, type Viewport } from '@/shared/image/viewport';
 import { wrap360, type LonLat } from '@/shared/sky/greatCircle';
 
 export interface GraticuleLine {
   axis: 'lon' | 'lat';
   value: number;
+  /** With its unit. */
   label: string;
   path: Path;
   /** Where the line leaves the map: longitudes below, latitudes on the left; null where it does not. */
@@ -16,6 +18,9 @@ export interface SkyMapping {
   project: Project;
   unproject: (x: number, y: number) => LonLat | null;
 }
+
+/** Decimal degrees, or sexagesimal with longitudes in degrees or in hours. */
+export type Notation = 'decimal' | 'sexagesimal' | 'hours';
 
 const SAMPLES = 12;
 const POINTS = 48;
@@ -28,16 +33,30 @@ const POINTS = 48;
  *
  * @param spacingPx wished distance between lines on the screen
  */
-export function graticule(v: Viewport, sky: SkyMapping, spacingPx = 130): GraticuleLine[] {
+export function graticule(
+  v: Viewport,
+  sky: SkyMapping,
+  notation: Notation = 'decimal',
+  spacingPx = 130,
+): GraticuleLine[] {
   const range = rangeOf(v, sky);
   if (!range) return [];
   const { lon, lat } = range;
   const wish = (size: number) => Math.max(2, size / spacingPx);
   const around = lon[1] - lon[0] > 180;
+  const ticks = ([low, high]: readonly [number, number], count: number, hours: boolean) => {
+    if (notation !== 'decimal') return sexagesimalTicks(low, high, count, hours ? 'hours' : 'degrees');
+    const { values, decimals } = niceTicks(low, high, count);
+    return { values, label: (value: number) => decimalLabel(value, decimals) };
+  };
+  const hours = notation === 'hours';
   const lons = around
-    ? { values: Array.from({ length: 12 }, (_, i) => lon[0] + 30 * i - (lon[0] % 30)), decimals: 0 }
-    : niceTicks(lon[0], lon[1], wish(v.width));
-  const lats = niceTicks(lat[0], lat[1], wish(v.height));
+    ? {
+        values: Array.from({ length: 12 }, (_, i) => lon[0] + 30 * i - (lon[0] % 30)),
+        label: (value: number) => (hours ? `${Math.round(value / 15)}ʰ` : decimalLabel(value, 0)),
+      }
+    : ticks(lon, wish(v.width), hours);
+  const lats = ticks(lat, wish(v.height), false);
   const jump = Math.max(v.nx, v.ny) / 2;
   const margin = { lon: (lon[1] - lon[0]) * 0.2, lat: (lat[1] - lat[0]) * 0.2 };
   const run = (low: number, high: number, at: (value: number) => LonLat) =>
@@ -53,13 +72,13 @@ export function graticule(v: Viewport, sky: SkyMapping, spacingPx = 130): Gratic
       lon: value,
       lat: b,
     }));
-    const label = labelOf(wrap360(value), lons.decimals);
+    const label = lons.label(wrap360(value));
     lines.push({ axis: 'lon', value: wrap360(value), label, path, labelAt: crossing(v, path, 'below') });
   }
   for (const value of lats.values) {
     if (Math.abs(value) >= 90) continue;
     const path = run(lon[0] - margin.lon, lon[1] + margin.lon, (l) => ({ lon: l, lat: value }));
-    const label = labelOf(value, lats.decimals);
+    const label = lats.label(value);
     lines.push({ axis: 'lat', value, label, path, labelAt: crossing(v, path, 'left') });
   }
   return lines;

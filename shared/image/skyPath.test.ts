@@ -29,11 +29,11 @@ test('a ring is cut where nothing is shown and where the map jumps', () => {
 
 test('lines of round coordinates across longitude 0, with labels at the edges', () => {
   const v = fitted(201, 201, 402, 402);
-  const lines = graticule(v, { project, unproject }, 100);
+  const lines = graticule(v, { project, unproject }, 'decimal', 100);
   const lons = lines.filter((l) => l.axis === 'lon').map((l) => l.label);
-  expect(lons).toEqual(['350', '355', '0', '5', '10']);
+  expect(lons).toEqual(['350°', '355°', '0°', '5°', '10°']);
   const lats = lines.filter((l) => l.axis === 'lat');
-  expect(lats.map((l) => l.label)).toEqual(['−10', '−5', '0', '5', '10']);
+  expect(lats.map((l) => l.label)).toEqual(['−10°', '−5°', '0°', '5°', '10°']);
   expect(lats[2]!.labelAt).toEqual({ sx: 0, sy: 201 });
   const zero = lines.find((l) => l.label === '0' && l.axis === 'lon')!;
   expect(zero.labelAt!.sx).toBeCloseTo(201, 6);
