@@ -1,7 +1,7 @@
 import { useEffect, useMemo, useSyncExternalStore } from 'react';
-import { apiResponse, asProblem, type ApiProblem } from '@/hooks/api';
-import { cubeImage } from '@/hooks/cubeImages';
-import { decodePlane, type ChannelPlane } from '@/hooks/planes/decodePlane';
+import { asProblem, type ApiProblem } from '@/hooks/api';
+import type { ChannelPlane } from '@/hooks/planes/decodePlane';
+import { loadPlane } from '@/hooks/planes/loadPlane';
 import { planeStore, type PlaneStore } from '@/hooks/planes/planeStore';
 import { useThumbnailPlanes } from '@/hooks/planes/thumbnailPlanes';
 import type { Cube } from '@/shared/contract/cubes';
@@ -34,11 +34,7 @@ function storeOf(cube: Pick<Cube, 'id' | 'readyAt'>, side: number, channels: num
     side,
     channels,
     budgetBytes: coarse ? BUDGET_BYTES.coarse : BUDGET_BYTES.fine,
-    async load(channel, size, signal) {
-      const path = `channels/${channel}/plane${size === null ? '' : `?size=${size}`}`;
-      const answer = await apiResponse(cubeImage(cube, path), { signal });
-      return decodePlane(channel, await answer.arrayBuffer(), (name) => answer.headers.get(name));
-    },
+    load: (channel, size, signal) => loadPlane(cube, channel, size, signal),
   });
   stores.set(key, store);
   return store;
