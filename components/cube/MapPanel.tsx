@@ -9,6 +9,7 @@ import { VIEWS } from '@/components/cube/views';
 import { ViewNote } from '@/components/cube/ViewNote';
 import { ChannelMap } from '@/components/map/ChannelMap';
 import { PictureNote } from '@/components/seeing/PictureNote';
+import { SliceHandles } from '@/components/slices/SliceHandles';
 import { ProblemNotice } from '@/components/ui/ProblemNotice';
 import { HiddenText, Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
@@ -64,6 +65,7 @@ export function MapPanel({ round = true }: { round?: boolean }) {
       <SelectedMark />
       <ToolBar />
       <ViewNote />
+      <SliceHandles />
       <PictureNote />
       <Readout />
       {late && (

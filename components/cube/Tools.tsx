@@ -27,7 +27,7 @@ export function Tools({
   /** Room for palette and tone beside the window. */
   roomy?: boolean;
 }) {
-  const { tool, setTool, suggesting, setSuggesting, shell, mayMark, reading, look, unit, store, view } =
+  const { tool, setTool, suggesting, setSuggesting, shell, mayMark, reading, look, unit, store, view, film } =
     useSession();
   const showKeys = useShowKeys();
   const { undo, redo, ready } = reading.state;
@@ -108,6 +108,11 @@ export function Tools({
       )}
       {!compact && (
         <>
+          <IconButton
+            icon={film.playing ? 'pause' : 'play'}
+            label={film.playing ? 'Stop playing' : 'Play back and forth'}
+            onPress={film.toggle}
+          />
           <IconButton icon="minus" label="Zoom out" onPress={() => zoomMap(store, 1 / 1.5)} />
           <IconButton icon="plus" label="Zoom in" onPress={() => zoomMap(store, 1.5)} />
           <IconButton icon="fit" label="Whole image" onPress={() => zoomMap(store, null)} />
