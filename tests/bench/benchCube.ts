@@ -15,15 +15,18 @@ const RING = { x: 260, y: 240, radius: 120, channel: 64, halfSpan: 22 };
  * a blank corner. Normal numbers are drawn once and read from another place for each row: what is timed depends on
  * how values are distributed, not on whether rows repeat.
  */
-export function benchCube(): Buffer {
+export const benchCube = (): Buffer => benchField(SHAPE);
+
+/** The same sky in a cube of another shape. */
+export function benchField(shape: { nx: number; ny: number; channels: number }): Buffer {
   const random = seededRandom(2026);
   const normals = Float32Array.from({ length: TABLE }, () => NOISE * random.normal());
   let start = 0;
   return cubeFile({
-    ...SHAPE,
+    ...shape,
     cards: { OBJECT: 'Bench field' },
     value(x, y, channel) {
-      if (x === 0) start = Math.floor(random.uniform() * (TABLE - SHAPE.nx));
+      if (x === 0) start = Math.floor(random.uniform() * (TABLE - shape.nx));
       if (x + y < BLANK_SIDE) return NaN;
       return normals[start + x]! + emission(x, y, channel * STEP);
     },

@@ -9,6 +9,7 @@
  * coverage  how many error bars hold the truth in 18 simulated cases, beside the reference (--simulations n; 500)
  * trace   how far off traced rims are on cubes of known truth (--cubes n a setting; 12)
  * screen  the first look at that cube and stepping through its channels, in Chromium
+ * viewer  scrubbing, look, opening, memory and a poor line, in Chromium
  *
  * A bench and no test: a limit that is missed is said, and the exit code stays 0. Other work on the machine shows in
  * every figure, so the load stands beside them.
@@ -23,6 +24,7 @@ import { benchPlanes } from './planes';
 import { stopAll } from './product';
 import { benchScreen } from './screen';
 import { benchSize } from './size';
+import { benchViewer } from './viewer';
 import { benchTraceBias } from './traceBias';
 import { benchUpload } from './upload';
 
@@ -43,6 +45,7 @@ const parts: Record<
   coverage: { programs: [], run: benchCoverage },
   trace: { programs: [], run: benchTraceBias },
   screen: { programs: ['postgresql', 'chromium'], run: benchScreen },
+  viewer: { programs: ['postgresql', 'chromium'], run: benchViewer },
 };
 
 async function main(args: string[]) {
