@@ -1,6 +1,6 @@
 import { blockProducts } from '@/shared/shell/channelDirections';
 import { channelDof, FLOOR, unsharedNoise, type ErrorModel } from '@/shared/shell/errorModel';
-import { centreAt, projectMarks, type Frame } from '@/shared/shell/frame';
+import { centreAt, frameAt, type Frame } from '@/shared/shell/frame';
 import { solve, workspace, type ShellProblem, type ShellState } from '@/shared/shell/gaussNewton';
 import { isFixed } from '@/shared/shell/known';
 import type { MarkSet } from '@/shared/shell/markSet';
@@ -56,7 +56,7 @@ export function bootstrap(
     eastward: new Float64Array(marks.count),
     northward: new Float64Array(marks.count),
   };
-  const place = placer(problem, state, errors, drawn);
+  const place = placer(problem, state, errors, drawn, frame);
   const draw = errorDrawer(problem, errors);
   const ws = workspace(marks, size);
   const e = new Float64Array(marks.count);
@@ -67,7 +67,6 @@ export function bootstrap(
     const random = randomOfDraw(options.seed, d);
     draw(e, random);
     place(e);
-    projectMarks(drawn, frame);
     const redrawn = known.map((k) => {
       if (k.prior === null) return k;
       const { sd } = k.prior;
@@ -153,33 +152,51 @@ function errorDrawer({ marks, known }: ShellProblem, errors: ErrorModel) {
   };
 }
 
-/** A function that puts every mark on its model ring, moved along its own radius by scaled errors. */
-function placer({ model, marks }: ShellProblem, { frame, p }: ShellState, errors: ErrorModel, into: MarkSet) {
+/**
+ * A function that puts every mark on its model ring, moved along its own radius by scaled errors: its components in the
+ * frame, and for an elliptical shell, which asks for it, its direction.
+ */
+function placer(
+  { model, marks }: ShellProblem,
+  { frame, p }: ShellState,
+  errors: ErrorModel,
+  drawn: MarkSet,
+  into: Frame,
+) {
   const { residual, variance } = errors.evaluation;
   const n = marks.count;
-  const centre = new Float64Array(3 * n);
-  const outward = new Float64Array(3 * n);
+  const deviation = variance.map(Math.sqrt);
   const radius = new Float64Array(n);
-  const drifting = model === 'drifting';
+  const ringCentre: MarkSet = { ...marks, direction: new Float64Array(3 * n) };
+  const outward: MarkSet = { ...marks, direction: new Float64Array(3 * n) };
   for (let i = 0; i < n; i++) {
     const fromV0 = marks.velocity[marks.channel[i]!]! - p[V0]!;
-    const c = drifting ? centreAt(frame, p[EXTRA_1]! * fromV0, p[EXTRA_2]! * fromV0) : frame.origin;
+    const c =
+      model === 'drifting' ? centreAt(frame, p[EXTRA_1]! * fromV0, p[EXTRA_2]! * fromV0) : frame.origin;
     const q = marks.direction.subarray(3 * i, 3 * i + 3);
     const cosine = q[0]! * c[0] + q[1]! * c[1] + q[2]! * c[2];
     const off = [0, 1, 2].map((a) => q[a]! - cosine * c[a]!);
     const sine = Math.hypot(...off);
-    centre.set(c, 3 * i);
-    outward.set(
+    ringCentre.direction.set(c, 3 * i);
+    outward.direction.set(
       off.map((x) => x / Math.max(sine, 1e-12)),
       3 * i,
     );
     radius[i] = Math.atan2(sine, cosine) - residual[i]!;
   }
+  const atCentre = frameAt(ringCentre, frame.origin);
+  const atOut = frameAt(outward, frame.origin);
   return (e: Float64Array): void => {
     for (let i = 0; i < n; i++) {
-      const angle = radius[i]! + e[i]! * Math.sqrt(variance[i]!);
-      const [c, s] = [Math.cos(angle), Math.sin(angle)];
-      for (let a = 3 * i; a < 3 * i + 3; a++) into.direction[a] = c * centre[a]! + s * outward[a]!;
+      const angle = radius[i]! + e[i]! * deviation[i]!;
+      const c = Math.cos(angle);
+      const s = Math.sin(angle);
+      into.along[i] = c * atCentre.along[i]! + s * atOut.along[i]!;
+      into.eastward[i] = c * atCentre.eastward[i]! + s * atOut.eastward[i]!;
+      into.northward[i] = c * atCentre.northward[i]! + s * atOut.northward[i]!;
+      if (model !== 'elliptical') continue;
+      for (let a = 3 * i; a < 3 * i + 3; a++)
+        drawn.direction[a] = c * ringCentre.direction[a]! + s * outward.direction[a]!;
     }
   };
 }
@@ -187,8 +204,8 @@ function placer({ model, marks }: ShellProblem, { frame, p }: ShellState, errors
 const ONE_SIGMA_TAIL = 0.1587;
 
 /**
- * The 16th, 50th and 84th percentiles of one parameter over the draws (the nearest draw), angles unwrapped about the fitted
- * value first; half their distance is the standard deviation. Infinite where that share of the draws is unbounded.
+ * The 16th, 50th and 84th percentiles of one parameter over the draws (the nearest draw), angles unwrapped about the
+ * fitted value first; half their distance is the standard deviation. Infinite where that share of the draws is unbounded.
  *
  * @param period 360 for a longitude, 180 for the direction of an axis
  * @param tail share of the draws below lo and above hi, if others than those percentiles are wanted

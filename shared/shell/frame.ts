@@ -31,8 +31,7 @@ export function frameAt(marks: MarkSet, origin: Vector): Frame {
   return frame;
 }
 
-/** Recompute the components after the marks moved (the bootstrap moves them in place). */
-export function projectMarks(marks: MarkSet, frame: Frame): void {
+function projectMarks(marks: MarkSet, frame: Frame): void {
   const { direction: q, count } = marks;
   const { origin: n, east: e, north: m } = frame;
   for (let i = 0; i < count; i++) {

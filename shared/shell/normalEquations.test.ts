@@ -42,3 +42,25 @@ test('normal equations of a line through points, and a held parameter', () => {
   hold(2, 1, B, g);
   expect([...B, ...g]).toEqual([4, 0, 0, 1, 1, 0]);
 });
+
+test('five parameters, summed in registers, as any number of them', () => {
+  const value = (i: number) => Math.sin(1 + 7 * i);
+  const n = 9;
+  const five = Float64Array.from({ length: 5 * n }, (_, i) => value(i));
+  const six = Float64Array.from({ length: 6 * n }, (_, i) =>
+    i % 6 === 5 ? 0 : five[5 * Math.floor(i / 6) + (i % 6)]!,
+  );
+  const residual = Float64Array.from({ length: n }, (_, i) => value(100 + i));
+  const weight = Float64Array.from({ length: n }, (_, i) => 1 + value(200 + i) ** 2);
+  const [B, g, C, h] = [25, 5, 36, 6].map((size) => new Float64Array(size)) as [
+    Float64Array,
+    Float64Array,
+    Float64Array,
+    Float64Array,
+  ];
+  expect(accumulate(5, residual, five, weight, B, g)).toBe(accumulate(6, residual, six, weight, C, h));
+  for (let a = 0; a < 5; a++) {
+    expect(g[a]).toBe(h[a]);
+    for (let b = 0; b < 5; b++) expect(B[5 * a + b]).toBe(C[6 * a + b]);
+  }
+});

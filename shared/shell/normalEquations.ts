@@ -11,6 +11,7 @@ export function accumulate(
   A: Float64Array,
   g: Float64Array,
 ): number {
+  if (size === 5) return accumulateFive(residual, jacobian, weight, A, g);
   A.fill(0);
   g.fill(0);
   let cost = 0;
@@ -26,6 +27,61 @@ export function accumulate(
     }
   }
   for (let a = 0; a < size; a++) for (let b = 0; b < a; b++) A[b * size + a] = A[a * size + b]!;
+  return cost;
+}
+
+/** The same for the five parameters of the round shell, its sums in registers: most of a fit's time is spent here. */
+function accumulateFive(
+  residual: Float64Array,
+  jacobian: Float64Array,
+  weight: Float64Array,
+  A: Float64Array,
+  g: Float64Array,
+): number {
+  let [cost, g0, g1, g2, g3, g4] = [0, 0, 0, 0, 0, 0];
+  let [s00, s10, s11, s20, s21, s22, s30] = [0, 0, 0, 0, 0, 0, 0];
+  let [s31, s32, s33, s40, s41, s42, s43, s44] = [0, 0, 0, 0, 0, 0, 0, 0];
+  for (let i = 0, row = 0; i < residual.length; i++, row += 5) {
+    const w = weight[i]!;
+    const r = residual[i]!;
+    const j0 = jacobian[row]!;
+    const j1 = jacobian[row + 1]!;
+    const j2 = jacobian[row + 2]!;
+    const j3 = jacobian[row + 3]!;
+    const j4 = jacobian[row + 4]!;
+    const w0 = w * j0;
+    const w1 = w * j1;
+    const w2 = w * j2;
+    const w3 = w * j3;
+    const w4 = w * j4;
+    cost += w * r * r;
+    g0 += w0 * r;
+    g1 += w1 * r;
+    g2 += w2 * r;
+    g3 += w3 * r;
+    g4 += w4 * r;
+    s00 += w0 * j0;
+    s10 += w1 * j0;
+    s11 += w1 * j1;
+    s20 += w2 * j0;
+    s21 += w2 * j1;
+    s22 += w2 * j2;
+    s30 += w3 * j0;
+    s31 += w3 * j1;
+    s32 += w3 * j2;
+    s33 += w3 * j3;
+    s40 += w4 * j0;
+    s41 += w4 * j1;
+    s42 += w4 * j2;
+    s43 += w4 * j3;
+    s44 += w4 * j4;
+  }
+  g.set([g0, g1, g2, g3, g4]);
+  A.set([s00, s10, s20, s30, s40]);
+  A.set([s10, s11, s21, s31, s41], 5);
+  A.set([s20, s21, s22, s32, s42], 10);
+  A.set([s30, s31, s32, s33, s43], 15);
+  A.set([s40, s41, s42, s43, s44], 20);
   return cost;
 }
 

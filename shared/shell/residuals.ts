@@ -43,19 +43,22 @@ const SMALLEST_SINE = 1e-9;
  * keeps its digits at any size, and d theta/dx = -(q . dc/dx)/sin theta.
  */
 function evaluateRound(size: number, marks: MarkSet, frame: Frame, p: Float64Array, out: Evaluation): void {
-  const { curve, jacobian: J } = out;
+  const { jacobian: J, residual, variance } = out;
+  const { radius, variance: spread, dTheta, dV0, dLnW } = out.curve;
+  const { along, eastward, northward } = frame;
+  const { channel, velocity, sigma2 } = marks;
   const drifting = size > EXTRA_1;
   const driftX = drifting ? p[EXTRA_1]! : 0;
   const driftY = drifting ? p[EXTRA_2]! : 0;
   const v0 = p[V0]!;
   const centreX = p[X]!;
   const centreY = p[Y]!;
-  for (let i = 0; i < marks.count; i++) {
-    const k = marks.channel[i]!;
-    const a = frame.along[i]!;
-    const e = frame.eastward[i]!;
-    const n = frame.northward[i]!;
-    const fromV0 = marks.velocity[k]! - v0;
+  for (let i = 0, at = 0; i < residual.length; i++) {
+    const k = channel[i]!;
+    const a = along[i]!;
+    const e = eastward[i]!;
+    const n = northward[i]!;
+    const fromV0 = velocity[k]! - v0;
     const x = centreX + driftX * fromV0;
     const y = centreY + driftY * fromV0;
     const perLength = 1 / Math.sqrt(1 + x * x + y * y);
@@ -64,20 +67,19 @@ function evaluateRound(size: number, marks: MarkSet, frame: Frame, p: Float64Arr
     const c2 = n - a * y;
     const c3 = a * x - e;
     const sine = Math.sqrt(c1 * c1 + c2 * c2 + c3 * c3) * perLength;
-    const slope = -perLength / Math.max(sine, SMALLEST_SINE);
+    const slope = -perLength / (sine > SMALLEST_SINE ? sine : SMALLEST_SINE);
     const dX = slope * (e - cosine * x * perLength);
     const dY = slope * (n - cosine * y * perLength);
-    out.residual[i] = Math.atan2(sine, cosine) - curve.radius[k]!;
-    out.variance[i] = marks.sigma2[i]! + curve.variance[k]!;
-    let at = i * size; // in the order of shellModel.ts
-    J[at++] = dX;
+    residual[i] = Math.atan2(sine, cosine) - radius[k]!;
+    variance[i] = sigma2[i]! + spread[k]!;
+    J[at++] = dX; // in the order of shellModel.ts
     J[at++] = dY;
-    J[at++] = -curve.dTheta[k]!;
-    J[at++] = -curve.dV0[k]! - driftX * dX - driftY * dY;
-    J[at++] = -curve.dLnW[k]!;
+    J[at++] = -dTheta[k]!;
+    J[at++] = -dV0[k]! - driftX * dX - driftY * dY;
+    J[at++] = -dLnW[k]!;
     if (drifting) {
       J[at++] = dX * fromV0;
-      J[at] = dY * fromV0;
+      J[at++] = dY * fromV0;
     }
   }
 }
