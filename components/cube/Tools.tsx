@@ -19,6 +19,7 @@ export function Tools({
   onLook,
   compact,
   roomy,
+  full,
 }: {
   lookOpen: boolean;
   onLook: () => void;
@@ -26,6 +27,8 @@ export function Tools({
   compact?: boolean;
   /** Room for palette and tone beside the window. */
   roomy?: boolean;
+  /** Room for every tool side by side; else they lie in a menu. */
+  full?: boolean;
 }) {
   const { tool, setTool, suggesting, setSuggesting, shell, mayMark, reading, look, unit, store, view, film } =
     useSession();
@@ -34,6 +37,7 @@ export function Tools({
   const canMark = shell !== null && mayMark;
   const window = windowWords(look.window, unit);
   const off = view === 'channel' ? undefined : true;
+  const canRedo = ready && redo.length > 0;
   const toolItems: MenuItem[] = [
     ...TOOL_ORDER.map((t) => ({
       label: MAP_TOOLS[t].label,
@@ -48,6 +52,16 @@ export function Tools({
       disabled: off,
       perform: () => setSuggesting(!suggesting),
     },
+    ...(compact
+      ? [
+          {
+            label: 'Redo',
+            icon: 'redo' as const,
+            disabled: !canRedo,
+            perform: () => reading.dispatch({ type: 'redo' }),
+          },
+        ]
+      : []),
   ];
   return (
     <View
@@ -70,7 +84,7 @@ export function Tools({
             disabled={off}
             onPress={() => setTool(tool === 'mark' ? 'move' : 'mark')}
           />
-          {roomy ? (
+          {full ? (
             <>
               {TOOL_ORDER.filter((t) => t !== 'mark').map((t) => (
                 <IconButton
@@ -98,12 +112,14 @@ export function Tools({
             disabled={!ready || undo.length === 0}
             onPress={() => reading.dispatch({ type: 'undo' })}
           />
-          <IconButton
-            icon="redo"
-            label="Redo"
-            disabled={!ready || redo.length === 0}
-            onPress={() => reading.dispatch({ type: 'redo' })}
-          />
+          {!compact && (
+            <IconButton
+              icon="redo"
+              label="Redo"
+              disabled={!canRedo}
+              onPress={() => reading.dispatch({ type: 'redo' })}
+            />
+          )}
         </>
       )}
       {!compact && (

@@ -74,6 +74,7 @@ export function Magnifier({ map, store }: MagnifierProps) {
         border: `2px solid ${color.onImage}`,
         boxSizing: 'border-box',
         pointerEvents: 'none',
+        zIndex: 3, // over what lies on the map beside it
       }}
     />
   );

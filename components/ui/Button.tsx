@@ -107,6 +107,7 @@ export function IconButton({
 }: IconButtonProps) {
   const { color } = useTheme();
   const tip = { title: label } as object;
+  const onMap = tone === 'onImage'; // dark in both themes
   return (
     <Press
       {...rest}
@@ -121,7 +122,11 @@ export function IconButton({
           alignItems: 'center',
           justifyContent: 'center',
           borderRadius: radius.small,
-          backgroundColor: selected ? color.person : hovered ? color.chip : 'transparent',
+          backgroundColor: selected
+            ? color.person
+            : hovered
+              ? color[onMap ? 'imageShade' : 'chip']
+              : 'transparent',
           opacity: disabled ? 0.4 : 1,
         },
         style,
