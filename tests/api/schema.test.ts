@@ -45,3 +45,33 @@ test('the database itself refuses to change a finished fit or an event', async (
   await expect(db('events').delete()).rejects.toThrow(/not changed once written/);
   await product.stop();
 });
+
+test('going back from traced rims takes them and their fits out, and leaves the rest', async () => {
+  const { url, drop } = await freshDatabase();
+  const knex = knexFactory({ client: 'pg', connection: url });
+  const { migrations } = require('../../knexfile.js');
+  const id = (n: number) => `00000000-0000-4000-8000-${String(n).padStart(12, '0')}`;
+  const fit = `(id, shell_id, reading_id, cube_id, model, options, marks, reading_revision, status, outcome`;
+  await knex.raw(`
+    set session_replication_role = replica; -- people, regions and cubes are of no matter here
+    insert into shells (id, region_id, name) values ('${id(1)}', '${id(2)}', 'Ring');
+    insert into readings (id, shell_id, person_id, cube_id, marks, revision)
+      values ('${id(3)}', '${id(1)}', '${id(4)}', '${id(5)}', '[]', 1);
+    insert into fits ${fit}) values ('${id(6)}', '${id(1)}', '${id(3)}', '${id(5)}', 'sphere', '{}', '{}', 1, 'done', '{}');
+    insert into traces (id, shell_id, fit_id, cube_id, edge, status, outcome, created_by)
+      values ('${id(7)}', '${id(1)}', '${id(6)}', '${id(5)}', 'ridge', 'done', '{}', '${id(4)}');
+    insert into readings (id, shell_id, person_id, cube_id, marks, revision, kind, trace_id)
+      values ('${id(8)}', '${id(1)}', '${id(4)}', '${id(5)}', '[]', 1, 'traced', '${id(7)}');
+    insert into fits ${fit}, trace_id) values
+      ('${id(9)}', '${id(1)}', '${id(8)}', '${id(5)}', 'sphere', '{}', '{}', 1, 'done', '{}', '${id(7)}');
+    update shells set adopted_fit_id = '${id(9)}', designation = 'GSH';
+    set session_replication_role = origin;`);
+  await knex.migrate.down({ ...migrations, name: '20261201120000_fit_extras.js' });
+  expect(await knex('fits').pluck('id')).toEqual([id(6)]);
+  expect(await knex('readings').pluck('id')).toEqual([id(3)]);
+  expect(await knex('shells').first()).toMatchObject({ adopted_fit_id: null, designation: null });
+  await expect(knex('fits').update({ outcome: '{"a": 1}' })).rejects.toThrow(/not changed once written/);
+  await knex.migrate.latest(migrations);
+  await knex.destroy();
+  await drop();
+});
