@@ -20,6 +20,7 @@ export const PROBLEMS = {
   'not-fits': { status: 422, title: 'This is not a FITS file' },
   'fits-card': { status: 422, title: 'A header card cannot be used' },
   'fits-shape': { status: 422, title: 'This FITS image is not a spectral-line cube' },
+  'fits-image': { status: 422, title: 'This FITS file is not an image of the sky' },
   'compressed-damaged': { status: 422, title: 'The compressed data are damaged' },
   'fits-truncated': { status: 422, title: 'The file ends before its data do' },
   'upload-protocol': { status: 400, title: 'The upload request cannot be used' },

@@ -1,6 +1,6 @@
 import { Problem } from '@/shared/contract/problem';
 import { buildWcs } from '@/shared/sky/wcs';
-import { WcsError, type SkyFrame, type VelocityConvention, type WcsSpec } from '@/shared/sky/wcsSpec';
+import type { SkyFrame, VelocityConvention, WcsSpec } from '@/shared/sky/wcsSpec';
 import { beamOf, unitOfBrightness, type Beam } from './brightness';
 import { plainImageHeader } from './compressed/imageHeader';
 import { tiledImage } from './compressed/tiledImage';
@@ -11,6 +11,7 @@ import { linearStep } from './linearStep';
 import { skyOfHeader } from './skyHeader';
 import { spectralOfHeader } from './spectralHeader';
 import { stokesOf, type StokesPlane } from './stokesAxis';
+import { usable } from './wcsProblem';
 
 export type { Beam };
 
@@ -163,40 +164,25 @@ export function describeCube(
     },
     wcs,
     cautions: [...cautions, ...header.cautions],
-    cards: header.cards.map(({ keyword, value, field, comment }) => ({
-      keyword,
-      value: value === null ? null : typeof value === 'string' ? value : field,
-      comment,
-    })),
+    cards: shownCards(header),
   };
 }
+
+/** The cards as a person reads them. */
+export const shownCards = (header: Header): HeaderCard[] =>
+  header.cards.map(({ keyword, value, field, comment }) => ({
+    keyword,
+    value: value === null ? null : typeof value === 'string' ? value : field,
+    comment,
+  }));
 
 function wcsOf(header: Header, axes: CubeAxes, cautions: string[]): WcsSpec {
   const step = linearStep(header, axes, cautions);
   return {
     version: 1,
-    sky: skyOfHeader(header, axes, step, cautions),
+    sky: skyOfHeader(header, axes, step.sky, cautions),
     spectral: spectralOfHeader(header, axes, step, cautions),
   };
-}
-
-/** Run a step of shared/sky, with its errors turned into problems that name the card as this file writes it. */
-function usable<T>(step: () => T, axes: CubeAxes, header: Header): T {
-  try {
-    return step();
-  } catch (error) {
-    if (!(error instanceof WcsError)) throw error;
-    const hasCd = header.has(`CD${axes.longitude + 1}_${axes.longitude + 1}`);
-    const names: Record<string, string> = {
-      CTYPE: `CTYPE${axes.longitude + 1}`,
-      CRVAL: `CRVAL${axes.latitude + 1}`,
-      CDELT: `CDELT${axes.spectral + 1}`,
-      SPECTRAL: `CRVAL${axes.spectral + 1}`,
-      CD: `${hasCd ? 'CD' : 'PC'}${axes.longitude + 1}_${axes.longitude + 1}`,
-      PV2_1: `PV${axes.latitude + 1}_1`,
-    };
-    throw new Problem('fits-card', error.message, { card: names[error.card] ?? error.card });
-  }
 }
 
 /** What a head says of its spectral axis: all but the name the file gives it. */

@@ -1,13 +1,18 @@
 import { Problem } from '@/shared/contract/problem';
 import type { CubeAxes } from './cubeAxes';
 import type { Header } from './header';
+import type { SkyAxes } from './skyAxes';
 
-/** The linear part of world coordinates, in the header's own units: pixels (from 0) to intermediate coordinates. */
+/** The linear part of the sky coordinates, in the header's own units: pixels (from 0) to intermediate coordinates. */
+export interface SkyStep {
+  referencePixel: [number, number];
+  matrix: [number, number, number, number];
+}
+
+/** The same of a cube, with its spectral axis. */
 export interface LinearStep {
-  sky: { referencePixel: [number, number]; matrix: [number, number, number, number] };
+  sky: SkyStep;
   spectral: { referenceChannel: number; step: number };
-  /** Which keyword family gave the sky matrix: for messages. */
-  family: 'CD' | 'PC' | 'CDELT';
 }
 
 /**
@@ -18,62 +23,80 @@ export interface LinearStep {
  * @throws Problem fits-card when a step is zero or the spectral axis is tied to the sky
  */
 export function linearStep(header: Header, axes: CubeAxes, cautions: string[]): LinearStep {
-  const { longitude, latitude, spectral, naxis } = axes;
-  const number = (keyword: string, fallback: number) => header.number(keyword) ?? fallback;
-  const pixel = (axis: number) => {
-    const keyword = `CRPIX${axis + 1}`;
-    if (!header.has(keyword)) cautions.push(`${keyword} is missing; it is 0 by the standard.`);
-    return number(keyword, 0) - 1; // FITS counts pixels from 1
-  };
-  const rowHasCd = (i: number) => naxis.some((_, j) => header.has(`CD${i + 1}_${j + 1}`));
-  const element = (i: number, j: number): number => {
-    if (rowHasCd(i)) return number(`CD${i + 1}_${j + 1}`, 0);
-    return number(`PC${i + 1}_${j + 1}`, i === j ? 1 : 0) * delta(i) + 0; // never -0, which JSON loses
-  };
-  const delta = (axis: number): number => {
-    const keyword = `CDELT${axis + 1}`;
-    const value = number(keyword, 1);
-    if (value === 0) {
-      throw new Problem(
-        'fits-card',
-        `${keyword} is zero: all pixels along that axis would be at one place.`,
-        {
-          card: keyword,
-        },
-      );
-    }
-    return value;
-  };
-  const wanted = [longitude, latitude, spectral];
-  for (const axis of wanted) {
-    if (!rowHasCd(axis) && !header.has(`CDELT${axis + 1}`)) {
-      cautions.push(`CDELT${axis + 1} is missing; it is 1 by the standard.`);
-    }
-  }
-  const anyCd = rowHasCd(longitude) || rowHasCd(latitude);
-  const anyPc = wanted.some((i) => wanted.some((j) => header.has(`PC${i + 1}_${j + 1}`)));
-  refuseTies(element, axes, (i) => (rowHasCd(i) ? 'CD' : 'PC'));
-  const step = element(spectral, spectral);
+  const { spectral } = axes;
+  const cards = matrixCards(header, axes.naxis, cautions);
+  const sky = skyStep(header, axes, cautions);
+  cards.doubtStep(spectral);
+  refuseTies(cards, axes.naxis, [spectral]);
+  const step = cards.element(spectral, spectral);
   if (step === 0) {
     const card = `CD${spectral + 1}_${spectral + 1}`;
     throw new Problem('fits-card', `${card} is zero: all channels would have one velocity.`, { card });
   }
-  const rotation = anyCd || anyPc ? 0 : number(`CROTA${latitude + 1}`, 0);
+  return { sky, spectral: { referenceChannel: cards.pixel(spectral), step } };
+}
+
+/**
+ * The part of the sky axes alone, of a cube or of an image.
+ *
+ * @throws Problem fits-card when a step is zero or another axis is tied to the sky
+ */
+export function skyStep(header: Header, axes: SkyAxes, cautions: string[]): SkyStep {
+  const { longitude, latitude, naxis } = axes;
+  const cards = matrixCards(header, naxis, cautions);
+  const { pixel, element, delta, rowHasCd } = cards;
+  cards.doubtStep(longitude);
+  cards.doubtStep(latitude);
+  refuseTies(cards, naxis, [longitude, latitude]);
+  const anyPc = header.cards.some(({ keyword }) => /^PC\d+_\d+$/.test(keyword));
+  const isRotated = !anyPc && !rowHasCd(longitude) && !rowHasCd(latitude);
+  const rotation = isRotated ? (header.number(`CROTA${latitude + 1}`) ?? 0) : 0;
   return {
-    sky: {
-      referencePixel: [pixel(longitude), pixel(latitude)],
-      matrix:
-        rotation === 0
-          ? [
-              element(longitude, longitude),
-              element(longitude, latitude),
-              element(latitude, longitude),
-              element(latitude, latitude),
-            ]
-          : rotated(delta(longitude), delta(latitude), rotation),
+    referencePixel: [pixel(longitude), pixel(latitude)],
+    matrix:
+      rotation === 0
+        ? [
+            element(longitude, longitude),
+            element(longitude, latitude),
+            element(latitude, longitude),
+            element(latitude, latitude),
+          ]
+        : rotated(delta(longitude), delta(latitude), rotation),
+  };
+}
+
+type MatrixCards = ReturnType<typeof matrixCards>;
+
+/** The cards of the linear part, with what the standard takes where one is missing. Axes count from 0. */
+function matrixCards(header: Header, naxis: number[], cautions: string[]) {
+  const number = (keyword: string, fallback: number) => header.number(keyword) ?? fallback;
+  const rowHasCd = (i: number) => naxis.some((_, j) => header.has(`CD${i + 1}_${j + 1}`));
+  const delta = (axis: number): number => {
+    const card = `CDELT${axis + 1}`;
+    const value = number(card, 1);
+    if (value === 0) {
+      throw new Problem('fits-card', `${card} is zero: all pixels along that axis would be at one place.`, {
+        card,
+      });
+    }
+    return value;
+  };
+  return {
+    rowHasCd,
+    delta,
+    element(i: number, j: number): number {
+      if (rowHasCd(i)) return number(`CD${i + 1}_${j + 1}`, 0);
+      return number(`PC${i + 1}_${j + 1}`, i === j ? 1 : 0) * delta(i) + 0; // never -0, which JSON loses
     },
-    spectral: { referenceChannel: pixel(spectral), step },
-    family: anyCd ? 'CD' : anyPc ? 'PC' : 'CDELT',
+    pixel(axis: number): number {
+      const keyword = `CRPIX${axis + 1}`;
+      if (!header.has(keyword)) cautions.push(`${keyword} is missing; it is 0 by the standard.`);
+      return number(keyword, 0) - 1; // FITS counts pixels from 1
+    },
+    doubtStep(axis: number): void {
+      if (!rowHasCd(axis) && !header.has(`CDELT${axis + 1}`))
+        cautions.push(`CDELT${axis + 1} is missing; it is 1 by the standard.`);
+    },
   };
 }
 
@@ -84,21 +107,14 @@ function rotated(dx: number, dy: number, degrees: number): [number, number, numb
   return [dx * c, -dy * s, dx * s, dy * c];
 }
 
-function refuseTies(
-  element: (i: number, j: number) => number,
-  axes: CubeAxes,
-  family: (i: number) => string,
-): void {
-  const sky = [axes.longitude, axes.latitude];
-  axes.naxis.forEach((_, i) =>
-    axes.naxis.forEach((_length, j) => {
-      const used = i === axes.spectral || sky.includes(i);
-      const together = i === j || (sky.includes(i) && sky.includes(j));
-      if (!used || together || element(i, j) === 0) return;
-      const card = `${family(i)}${i + 1}_${j + 1}`;
-      throw new Problem('fits-card', `${card} ties the sky axes to another axis; such cubes are not read.`, {
+/** The coordinates of these axes may depend on the pixels along them, and on no others. */
+function refuseTies({ element, rowHasCd }: MatrixCards, naxis: number[], together: number[]): void {
+  for (const i of together)
+    naxis.forEach((_, j) => {
+      if (together.includes(j) || element(i, j) === 0) return;
+      const card = `${rowHasCd(i) ? 'CD' : 'PC'}${i + 1}_${j + 1}`;
+      throw new Problem('fits-card', `${card} ties the sky axes to another axis; such images are not read.`, {
         card,
       });
-    }),
-  );
+    });
 }

@@ -1,8 +1,8 @@
 import { Problem } from '@/shared/contract/problem';
 import type { SkyFrame, SkySpec } from '@/shared/sky/wcsSpec';
-import type { CubeAxes } from './cubeAxes';
 import type { Header } from './header';
-import type { LinearStep } from './linearStep';
+import type { SkyStep } from './linearStep';
+import type { SkyAxes } from './skyAxes';
 import { angleUnit } from './units';
 
 /**
@@ -11,15 +11,15 @@ import { angleUnit } from './units';
  * @param cautions sentences are added for what was doubtful
  * @throws Problem fits-card
  */
-export function skyOfHeader(header: Header, axes: CubeAxes, step: LinearStep, cautions: string[]): SkySpec {
+export function skyOfHeader(header: Header, axes: SkyAxes, step: SkyStep, cautions: string[]): SkySpec {
   const { longitude, latitude, naxis } = axes;
   const lonUnit = degreesPerUnit(header, longitude, cautions);
   const latUnit = degreesPerUnit(header, latitude, cautions);
-  const [a, b, c, d] = step.sky.matrix;
+  const [a, b, c, d] = step.matrix;
   const spec: SkySpec = {
     ...frameOf(header, axes, cautions),
     projection: axes.projection ?? 'CAR',
-    referencePixel: step.sky.referencePixel,
+    referencePixel: step.referencePixel,
     reference: [
       reference(header, longitude, cautions) * lonUnit,
       reference(header, latitude, cautions) * latUnit,
@@ -59,7 +59,7 @@ function withoutMinusZero(spec: SkySpec): SkySpec {
 /** No pixel spans more than the whole sky, and no image is so many pixels from its reference. */
 function requireSense(
   { matrix, reference, referencePixel }: SkySpec,
-  { longitude, latitude }: CubeAxes,
+  { longitude, latitude }: SkyAxes,
 ): void {
   const [a, b, c, d] = matrix.map(Math.abs) as SkySpec['matrix'];
   if (!(Math.max(a, b, c, d) <= 360)) {
@@ -128,7 +128,7 @@ function parametersOf(header: Header, axis: number): (number | null)[] {
  */
 function frameOf(
   header: Header,
-  axes: CubeAxes,
+  axes: SkyAxes,
   cautions: string[],
 ): { frame: SkyFrame; equinox: number | null } {
   if (axes.system === 'galactic') return { frame: 'galactic', equinox: null };

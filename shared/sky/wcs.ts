@@ -2,7 +2,7 @@ import { frameToGalactic } from './frames';
 import { lonLatOf, unitVector, type Vector } from './greatCircle';
 import { planeToSky } from './skyPlane';
 import { spectralAxis } from './spectralAxis';
-import { WcsError, type WcsSpec } from './wcsSpec';
+import { WcsError, type SkySpec, type WcsSpec } from './wcsSpec';
 
 export interface SkyPoint {
   lon: number;
@@ -19,14 +19,18 @@ export interface PixelPoint {
   y: number;
 }
 
-/** The world coordinates of one cube. Degrees, km/s positive away, pixels and channels from 0 at their centres. */
-export interface Wcs {
+/** Where the pixels of an image lie on the sky. Degrees; pixels count from 0 at their centres. */
+export interface Sky {
   /** Position in the header's own frame, longitude 0 … 360; null outside the projection. */
   pixelToSky(x: number, y: number): SkyPoint | null;
   /** Inverse of `pixelToSky`; null where the projection cannot show the place. */
   skyToPixel(lon: number, lat: number): PixelPoint | null;
   pixelToGalactic(x: number, y: number): GalacticPoint | null;
   galacticToPixel(l: number, b: number): PixelPoint | null;
+}
+
+/** The world coordinates of one cube: its sky and its velocities, km/s positive away; channels count from 0. */
+export interface Wcs extends Sky {
   /** Velocity in the axis' own convention (FREQ: radio; WAVE: optical), km/s. */
   velocityOf(channel: number): number;
   channelOf(velocity: number): number;
@@ -44,12 +48,22 @@ export interface Wcs {
  * @throws WcsError naming the card when the description cannot be used (unknown projection, singular matrix …)
  */
 export function buildWcs(spec: WcsSpec): Wcs {
-  const { toSky, toPlane } = planeToSky(spec.sky);
-  const galactic = frameToGalactic(spec.sky.frame, spec.sky.equinox);
+  const sky = buildSky(spec.sky);
   const { velocityOf, channelOf, frequencyHzOf, velocityStep } = spectralAxis(spec.spectral);
-  const [a, b, c, d] = spec.sky.matrix;
-  const [x0, y0] = spec.sky.referencePixel;
-  const [nx, ny] = spec.sky.size;
+  return { ...sky, velocityOf, channelOf, frequencyHzOf, velocityStep };
+}
+
+/**
+ * The sky part alone: of a cube, or of an image that has no spectral axis. Accuracy as `buildWcs`.
+ *
+ * @throws WcsError naming the card (unknown projection, singular matrix …)
+ */
+export function buildSky(spec: SkySpec): Sky {
+  const { toSky, toPlane } = planeToSky(spec);
+  const galactic = frameToGalactic(spec.frame, spec.equinox);
+  const [a, b, c, d] = spec.matrix;
+  const [x0, y0] = spec.referencePixel;
+  const [nx, ny] = spec.size;
   const determinant = a * d - b * c;
   if (!(Math.abs(determinant) > 1e-12 * (Math.abs(a * d) + Math.abs(b * c)))) {
     throw new WcsError('CD', 'The matrix from pixels to degrees is singular: pixels do not span the sky.');
@@ -88,10 +102,6 @@ export function buildWcs(spec: WcsSpec): Wcs {
       return { l: lon, b: lat };
     },
     galacticToPixel: (l, b) => pixelOf(galactic.fromGalactic(unitVector({ lon: l, lat: b }))),
-    velocityOf,
-    channelOf,
-    frequencyHzOf,
-    velocityStep,
   };
 }
 
