@@ -71,13 +71,13 @@ export function useScene(input: SceneInput): Scene {
           : polarLines(v, reach, '°');
     const mapping = skyMapping(sky, frame, grid);
     const style = notation === 'decimal' ? 'decimal' : grid === 'equatorial' ? 'hours' : 'sexagesimal';
-    return (v: Viewport) => graticule(v, mapping, style);
+    return keptWhileStill((v: Viewport) => graticule(v, mapping, style));
   }, [sky, frame, grid, notation, isPolar, lie, reach, model]);
 
   const furniture = useMemo(() => {
     if (isPolar) return null;
     const mapping = skyMapping(sky, frame, grid === 'off' ? 'galactic' : grid);
-    return (v: Viewport) => furnitureOf(v, mapping, distancePc);
+    return keptWhileStill((v: Viewport) => furnitureOf(v, mapping, distancePc));
   }, [sky, frame, grid, isPolar, distancePc]);
 
   const outline = useMemo(() => {
@@ -129,4 +129,13 @@ export function useScene(input: SceneInput): Scene {
     }),
     [lines, sceneMarks, modelRing, ownRing, centre, outline, furniture, contours],
   );
+}
+
+/** Lines cost some thousand coordinate transformations: as long as the map stands still they are worked out once. */
+function keptWhileStill<T>(make: (v: Viewport) => T): (v: Viewport) => T {
+  let last: { v: Viewport; made: T } | null = null;
+  return (v) => {
+    if (last?.v !== v) last = { v, made: make(v) };
+    return last.made;
+  };
 }
