@@ -34,7 +34,12 @@ export async function signIn(base: string, login: string): Promise<Client> {
   const cookieHeader = () => [...cookies].map(([name, value]) => `${name}=${value}`).join('; ');
   const request = async (path: string, init: RequestInit = {}): Promise<Response> => {
     const cookie = cookieHeader();
-    const headers = { ...(init.headers as Record<string, string>), ...(cookie && { cookie }) };
+    // making a cube blocks this process for longer than the server keeps an idle connection open
+    const headers = {
+      ...(init.headers as Record<string, string>),
+      ...(cookie && { cookie }),
+      connection: 'close',
+    };
     const response = await fetch(new URL(path, base), { ...init, headers, redirect: 'manual' }).catch(
       (error: Error) => {
         throw new Error(

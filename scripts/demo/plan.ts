@@ -1,3 +1,4 @@
+import type { ModelName } from '@/shared/contract/fits';
 import type { RegionDraft } from '@/shared/contract/regions';
 import type { DistanceDraft } from '@/shared/contract/shells';
 import type { MarkingStyle } from '@/shared/synthetic/marksOf';
@@ -14,6 +15,8 @@ export interface PlannedShell {
   readings: { by: 'ansa' | 'bram'; style: MarkingStyle }[];
   /** Whose reading is fitted, and whether the fit is adopted; none: the marks wait. */
   fit?: { of: 'ansa' | 'bram'; adopt: boolean };
+  /** Other models fitted to the same reading, and whether the rim is traced around the first fit and fitted too. */
+  compare?: { models?: ModelName[]; traced?: boolean };
   distance?: DistanceDraft;
 }
 
@@ -52,6 +55,7 @@ export const PLAN: PlannedRegion[] = [
               { by: 'ansa', style: { seed: 102, channels: 7, perChannel: 10, span: [-0.8, 0.8] } },
             ],
             fit: { of: 'bram', adopt: true },
+            compare: { models: ['drifting'] },
           },
           {
             name: 'Twin east',
@@ -95,6 +99,7 @@ export const PLAN: PlannedRegion[] = [
             name: 'Ketch',
             readings: [{ by: 'bram', style: { seed: 106, channels: 9, perChannel: 10 } }],
             fit: { of: 'bram', adopt: true },
+            compare: { traced: true },
             distance: {
               pc: 2900,
               errorPc: 450,

@@ -1,6 +1,7 @@
-import type { Fit } from '@/shared/contract/fits';
+import type { Fit, ModelName } from '@/shared/contract/fits';
 import type { Reading } from '@/shared/contract/readings';
 import type { Distance, Shell } from '@/shared/contract/shells';
+import type { Trace } from '@/shared/contract/traces';
 import { marksOf } from '@/shared/synthetic/marksOf';
 import type { Client } from './client';
 import type { PlannedCube, PlannedShell } from './plan';
@@ -22,7 +23,7 @@ export async function makeShell(planned: PlannedShell, place: ShellPlace): Promi
   const owner = person(planned.readings[0]!.by);
   const shell = await namedShell(owner, place.regionId, planned);
   for (const { by, style } of planned.readings) await markedBy(person(by), shell, planned, place, style);
-  if (planned.fit) await fitted(person(planned.fit.of), shell, planned.fit.adopt);
+  if (planned.fit) await fitted(person(planned.fit.of), shell, planned);
   if (planned.distance) {
     const entries = await owner.list<Distance>(`/shells/${shell.id}/distances`);
     if (entries.length === 0) await owner.send('POST', `/shells/${shell.id}/distances`, planned.distance);
@@ -52,21 +53,49 @@ async function markedBy(
   await who.send('PUT', `/shells/${id}/readings/mine`, { cubeId, marks, revision: mine.revision });
 }
 
-/** A fit of record that is done, run now where there is none, and adopted where it should be. */
-async function fitted(who: Client, { id, name }: Shell, adopt: boolean): Promise<void> {
-  const fits = await who.list<Fit>(`/shells/${id}/fits`);
-  const usable = fits.find((fit) => fit.status !== 'failed' && fit.status !== 'cancelled');
-  const { id: fitId } = usable ?? (await runFit(who, id));
-  const fit = await until(`the fit of ${name}`, async () => {
-    const now = await who.get<Fit>(`/fits/${fitId}`);
-    if (now.status === 'failed' || now.status === 'cancelled')
-      throw new Error(`the fit of ${name} ended as ${now.status}: ${now.problem?.detail ?? ''}`);
-    return now.status === 'done' ? now : null;
-  });
-  if (adopt && !fit.adopted) await who.send('PATCH', `/shells/${id}`, { adoptedFitId: fit.id });
+/** The fits of a plan: of the marks, of other models, of the traced rim. What is there already is not made again. */
+async function fitted(who: Client, { id, name }: Shell, { fit: plan, compare = {} }: PlannedShell) {
+  const { id: readingId } = await who.get<Reading>(`/shells/${id}/readings/mine`);
+  const first = await fitOf(who, id, { readingId: readingId!, model: 'sphere' });
+  if (plan!.adopt && !first.adopted) await who.send('PATCH', `/shells/${id}`, { adoptedFitId: first.id });
+  for (const model of compare.models ?? []) await fitOf(who, id, { readingId: readingId!, model });
+  if (!compare.traced) return;
+  const trace = await finished(
+    `the rim of ${name}`,
+    await usable<Trace>(who, `/shells/${id}/traces`, { fitId: first.id }),
+    (traceId) => who.get<Trace>(`/traces/${traceId}`),
+  );
+  await fitOf(who, id, { readingId: trace.readingId!, model: 'sphere' });
 }
 
-async function runFit(who: Client, shellId: string): Promise<Fit> {
-  const reading = await who.get<Reading>(`/shells/${shellId}/readings/mine`);
-  return who.send('POST', `/shells/${shellId}/fits`, { readingId: reading.id });
+/** A fit of that reading and model that is done. */
+const fitOf = async (who: Client, shellId: string, draft: { readingId: string; model: ModelName }) =>
+  finished(
+    `the ${draft.model} fit of ${shellId}`,
+    await usable<Fit>(who, `/shells/${shellId}/fits`, draft),
+    (fitId) => who.get<Fit>(`/fits/${fitId}`),
+  );
+
+interface Job {
+  id: string;
+  status: Fit['status'];
+  problem: { detail: string } | null;
 }
+
+/** The job of a list that was made from the draft and can still be used, or one begun now. */
+async function usable<T extends Job>(who: Client, list: string, draft: object): Promise<T> {
+  const same = (job: T) => Object.entries(draft).every(([key, value]) => job[key as keyof T] === value);
+  const there = await who.list<T>(list);
+  return (
+    there.find((job) => same(job) && job.status !== 'failed' && job.status !== 'cancelled') ??
+    who.send<T>('POST', list, draft)
+  );
+}
+
+const finished = <T extends Job>(what: string, { id }: T, look: (id: string) => Promise<T>): Promise<T> =>
+  until(what, async () => {
+    const now = await look(id);
+    if (now.status === 'failed' || now.status === 'cancelled')
+      throw new Error(`${what} ended as ${now.status}: ${now.problem?.detail ?? ''}`);
+    return now.status === 'done' ? now : null;
+  });
