@@ -17,8 +17,12 @@ export interface List<T> {
 }
 
 /** Reads one resource by its key; null reads nothing yet. */
-export function useRead<T>(key: string | null, options?: SWRConfiguration<T>): Read<T> {
-  const { data, error, isLoading, mutate } = useSWR<T>(key, (path: string) => api<T>(path), options);
+export function useRead<T>(
+  key: string | null,
+  options?: SWRConfiguration<T>,
+  read: (path: string) => Promise<T> = api,
+): Read<T> {
+  const { data, error, isLoading, mutate } = useSWR<T>(key, read, options);
   return {
     data,
     problem: error === undefined ? null : asProblem(error),

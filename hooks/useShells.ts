@@ -8,7 +8,21 @@ export const useShells = (regionId: string | null) => useRead<List<Shell>>(regio
 export const useShell = (id: string | null) => useRead<Shell>(id && keys.shell(id));
 /** The catalogue: `query` as in shared/contract/shells, without the question mark. */
 export const useCatalogue = (query: string | null) =>
-  useRead<List<Shell>>(query === null ? null : keys.catalogue(query), { keepPreviousData: true });
+  useRead<List<Shell>>(query === null ? null : keys.catalogue(query), { keepPreviousData: true }, everyPage);
+
+/** Most answers that are put together: 5000 shells at 500 a time. */
+const MOST_PAGES = 10;
+
+async function everyPage(path: string): Promise<List<Shell>> {
+  let page = await api<List<Shell>>(path);
+  const items = [...page.items];
+  for (let n = 1; page.next !== null && n < MOST_PAGES; n++) {
+    page = await api<List<Shell>>(`${path}&cursor=${encodeURIComponent(page.next)}`);
+    items.push(...page.items);
+  }
+  return { ...page, items };
+}
+
 export const useDistances = (shellId: string | null) =>
   useRead<List<Distance>>(shellId && keys.distances(shellId));
 

@@ -10,6 +10,7 @@ import { RecordGate } from '../frame/RecordGate';
 import { Screen } from '../frame/Screen';
 import { Button } from '../ui/Button';
 import { EmptyState } from '../ui/EmptyState';
+import { pageRows, Pager } from '../ui/Pager';
 import { Panel } from '../ui/Panel';
 import { SegmentedChoice } from '../ui/SegmentedChoice';
 import { Select } from '../ui/Select';
@@ -52,8 +53,17 @@ export function CataloguePage() {
   const params = useLocalSearchParams();
   const router = useRouter();
   const filters = useMemo(() => filtersOf(params), [params]);
-  const setFilters = useCallback((next: Filters) => router.setParams(addressOf(next)), [router]);
   const query = queryOf(filters);
+  const setFilters = useCallback(
+    (next: Filters) =>
+      // other shells, or another order: from the first page on
+      router.setParams({ ...addressOf(next), ...(queryOf(next) !== query && { page: undefined }) }),
+    [router, query],
+  );
+  const setPage = useCallback(
+    (page: number) => router.setParams({ page: page === 1 ? undefined : String(page) }),
+    [router],
+  );
   const shells = useCatalogue(query);
   const regions = useRegions();
   const order = useMemo(() => (regions.data?.items ?? []).map((r) => r.id), [regions.data]);
@@ -82,7 +92,14 @@ export function CataloguePage() {
           items.length === 0 ? (
             <Nothing narrowed={narrowing(filters) > 0} />
           ) : (
-            <Listed items={items} filters={filters} setFilters={setFilters} regionIndex={regionIndex} />
+            <Listed
+              items={items}
+              filters={filters}
+              setFilters={setFilters}
+              regionIndex={regionIndex}
+              asked={Number(params.page ?? 1)}
+              setPage={setPage}
+            />
           )
         }
       </RecordGate>
@@ -113,11 +130,16 @@ function Listed({
   filters,
   setFilters,
   regionIndex,
+  asked,
+  setPage,
 }: {
   items: readonly Shell[];
   filters: Filters;
   setFilters: (filters: Filters) => void;
   regionIndex: (regionId: string) => number;
+  /** The page that the address asks for, from 1. */
+  asked: number;
+  setPage: (page: number) => void;
 }) {
   const { wide, width } = useWide();
   const [view, setView] = useState<'list' | 'chart'>('list');
@@ -133,6 +155,8 @@ function Listed({
       height={wide ? space(104) : space(92)}
     />
   );
+  const { rows, page } = pageRows(items, asked);
+  const pager = <Pager what="shells" total={items.length} page={page} onPage={setPage} />;
   const bar = <PickBar picked={picked} onClear={clear} />;
 
   if (!wide)
@@ -177,7 +201,7 @@ function Listed({
           chart
         ) : (
           <View role="list" aria-label="Shells" style={{ gap: space(3) }}>
-            {items.map((s) => (
+            {rows.map((s) => (
               <ShellCard
                 key={s.id}
                 shell={s}
@@ -189,6 +213,7 @@ function Listed({
             ))}
           </View>
         )}
+        {view === 'list' && pager}
       </>
     );
 
@@ -204,12 +229,13 @@ function Listed({
           mayPick,
           ageFactor: items[0]?.adopted?.ageFactor ?? AGE_FACTOR,
         })}
-        rows={items}
+        rows={rows}
         rowKey={(s) => s.id}
         sort={{ key: filters.sort, order: filters.order }}
         onSort={(key) => setFilters(sortedBy(filters, key as SortKey))}
         selected={(s) => filters.pick.includes(s.id)}
       />
+      {items.length > rows.length && <View style={{ padding: space(2) }}>{pager}</View>}
     </Panel>
   );
   return (

@@ -1,13 +1,14 @@
 import type { Href } from 'expo-router';
-import { useEffect, useRef, type ReactNode } from 'react';
+import { useEffect, useRef, type ReactNode, type RefObject } from 'react';
 import { Platform, ScrollView, View } from 'react-native';
 import { useInboxCount } from '@/hooks/useInbox';
 import { useConnected } from '@/hooks/useLiveEvents';
 import { IconButton } from '../ui/Button';
 import { Sign } from '../ui/Icon';
+import { Press, type PressState } from '../ui/Press';
 import { Text } from '../ui/Text';
 import { useTheme } from '../ui/theme';
-import { hairline, layout, space } from '../ui/tokens';
+import { hairline, inset, layout, radius, space, touch } from '../ui/tokens';
 import { useWide } from '../ui/useWide';
 import { TabBar } from './TabBar';
 import { TopBar, type Crumb } from './TopBar';
@@ -62,7 +63,18 @@ export function Screen({
     </Text>
   );
   return (
-    <View style={{ flex: 1, backgroundColor: color.ground, minHeight: 0 }}>
+    <View
+      style={{
+        flex: 1,
+        backgroundColor: color.ground,
+        minHeight: 0,
+        paddingTop: inset('top'),
+        paddingLeft: inset('left'),
+        paddingRight: inset('right'),
+        paddingBottom: wide ? inset('bottom') : 0, // the phone's tabs keep clear themselves
+      }}
+    >
+      <SkipLink main={main} />
       {wide ? (
         <TopBar crumbs={crumbs ?? [{ label: title }]} aside={state} inbox={inbox} heading={full === true} />
       ) : (
@@ -93,6 +105,32 @@ export function Screen({
       </View>
       {!wide && <TabBar inbox={inbox} />}
     </View>
+  );
+}
+
+/** The first stop of the Tab key: past head and navigation; seen only while it has the focus. */
+function SkipLink({ main }: { main: RefObject<View | null> }) {
+  const { color } = useTheme();
+  return (
+    <Press
+      role="link"
+      onPress={() => (main.current as unknown as HTMLElement | null)?.focus({ preventScroll: true })}
+      style={({ focused }: PressState) => ({
+        position: 'absolute',
+        left: space(2),
+        top: focused ? space(1) : -layout.topBar * 2,
+        zIndex: 50,
+        minHeight: touch,
+        justifyContent: 'center',
+        paddingHorizontal: space(4),
+        borderRadius: radius.small,
+        backgroundColor: color.action,
+      })}
+    >
+      <Text weight="semibold" tone="onAction">
+        Skip to the content
+      </Text>
+    </Press>
   );
 }
 

@@ -4,7 +4,7 @@ import { Icon } from '../ui/Icon';
 import { Press } from '../ui/Press';
 import { Text } from '../ui/Text';
 import { useTheme } from '../ui/theme';
-import { hairline, layout, radius, space } from '../ui/tokens';
+import { hairline, inset, layout, radius, space } from '../ui/tokens';
 import { holds, sections } from './sections';
 
 /** The phone's navigation, under the thumb. */
@@ -21,7 +21,7 @@ export function TabBar({ inbox }: { inbox: number }) {
         backgroundColor: color.panel,
         borderTopWidth: hairline,
         borderTopColor: color.line,
-        paddingBottom: 'env(safe-area-inset-bottom)' as unknown as number,
+        paddingBottom: inset('bottom'),
       }}
     >
       {sections.map((section) => {

@@ -58,6 +58,7 @@ export function Button({
         {
           minHeight: touch,
           minWidth: touch,
+          maxWidth: '100%', // in a narrow column the label takes a second line
           paddingHorizontal: space(4),
           gap: space(2),
           flexDirection: 'row',
@@ -78,7 +79,7 @@ export function Button({
       ) : (
         icon && <Icon name={icon} size={18} tone={look.text} />
       )}
-      <Text weight="semibold" tone={look.text} numberOfLines={1}>
+      <Text weight="semibold" tone={look.text} numberOfLines={2} style={{ flexShrink: 1 }}>
         {label}
       </Text>
     </Press>

@@ -4,7 +4,7 @@ import { Backdrop } from './Backdrop';
 import { IconButton } from './Button';
 import { Text } from './Text';
 import { useTheme } from './theme';
-import { hairline, layout, radius, space } from './tokens';
+import { hairline, inset, layout, radius, space } from './tokens';
 import { useWide } from './useWide';
 
 export interface DialogProps {
@@ -37,6 +37,7 @@ export function Dialog({ title, onClose, children, actions, width = layout.dialo
             width: '100%',
             maxWidth: wide ? width : undefined,
             maxHeight: height * 0.92,
+            paddingBottom: wide ? 0 : inset('bottom'),
             backgroundColor: color.panel,
             borderColor: color.line,
             borderWidth: hairline,

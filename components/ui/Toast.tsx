@@ -12,7 +12,7 @@ import { View } from 'react-native';
 import { Button, IconButton } from './Button';
 import { Text } from './Text';
 import { useTheme } from './theme';
-import { hairline, layout, radius, space } from './tokens';
+import { hairline, inset, layout, radius, space } from './tokens';
 import { useWide } from './useWide';
 
 export interface ToastMessage {
@@ -51,7 +51,7 @@ export function ToastProvider({ children }: { children: ReactNode }) {
           position: 'fixed' as 'absolute',
           left: space(3),
           right: space(3),
-          bottom: wide ? space(4) : layout.tabBar + space(3),
+          bottom: inset('bottom', wide ? space(4) : layout.tabBar + space(3)),
           alignItems: 'center',
           gap: space(2),
           zIndex: 40,

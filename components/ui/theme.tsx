@@ -78,4 +78,7 @@ function paintDocument(name: ThemeName) {
     meta.name = 'theme-color';
   }
   meta.content = c.ground;
+  // phones with rounded corners and notches: the page reaches under them, its frame keeps clear (`inset`)
+  const lens = document.querySelector<HTMLMetaElement>('meta[name="viewport"]');
+  if (lens && !lens.content.includes('viewport-fit')) lens.content += ', viewport-fit=cover';
 }

@@ -95,6 +95,10 @@ export const fonts = {
 /** The 4-px grid: space(3) is 12. */
 export const space = (n: number): number => n * 4;
 
+/** What rounded corners, notches and bars of the system take from an edge; 0 elsewhere. */
+export const inset = (edge: 'top' | 'right' | 'bottom' | 'left', more = 0): number =>
+  `calc(env(safe-area-inset-${edge}, 0px) + ${more}px)` as unknown as number;
+
 export const radius = { small: 6, large: 10, round: 999 } as const;
 export const hairline = 1;
 /** The least side of anything to be hit by a finger. */
