@@ -2,10 +2,11 @@ import { evaluate } from '@/shared/shell/residuals';
 import { evaluation, recentred, type Evaluation, type Frame } from '@/shared/shell/frame';
 import { boundsOf, intoBounds } from '@/shared/shell/bounds';
 import type { MarkSet } from '@/shared/shell/markSet';
-import { accumulate, factorise, hold, substitute } from '@/shared/shell/normalEquations';
+import { dampedStep, descend, expectedGain, type Descended, type StepSpace } from '@/shared/shell/marquardt';
+import { accumulate, hold } from '@/shared/shell/normalEquations';
 import { intoKnown, isFixed, priorChi2, type Known } from '@/shared/shell/known';
 import { naturalJacobian, naturalValues } from '@/shared/shell/naturalParameters';
-import { addPriors, axisOf, stepWithin } from '@/shared/shell/stepWithin';
+import { addPriors, axisOf, stepWithin, type Natural } from '@/shared/shell/stepWithin';
 import { robustWeights } from '@/shared/shell/robust';
 import { LN_W, THETA, X, Y, parameterCount, type ModelName } from '@/shared/shell/shellModel';
 
@@ -33,18 +34,13 @@ export interface SolveOptions {
   variance?: Float64Array;
 }
 
-export interface Outcome extends ShellState {
-  iterations: number;
-  /** The step fell below the tolerance, or the fit sits on a kink and gains nothing more. */
-  settled: boolean;
-  /** Why it stopped: the step fell below the tolerance, no step lowered chi2 any more, or the iterations were used up. */
-  reason: 'settled' | 'no-progress' | 'iterations';
+export interface Outcome extends ShellState, Descended {
   /** The expansion velocity ran into the bound that the marks' span sets. */
   atBound: 'low' | 'high' | null;
 }
 
 /** Arrays of one solver, reused from fit to fit. */
-export interface Workspace {
+export interface Workspace extends StepSpace {
   now: Evaluation;
   trial: Evaluation;
   /** Working variance: the model's own, damped from step to step once it should have settled. */
@@ -52,11 +48,6 @@ export interface Workspace {
   robust: Float64Array;
   weight: Float64Array;
   scratch: Float64Array;
-  A: Float64Array;
-  damped: Float64Array;
-  g: Float64Array;
-  step: Float64Array;
-  scale: Float64Array;
   next: Float64Array;
 }
 
@@ -83,10 +74,6 @@ const HOLD_STEPS = 8; // from this iteration on the variance is the geometric me
 const ROBUST_EVERY = 3;
 const ROBUST_LAST = 15;
 const ROBUST_SETTLED = 17;
-const KINK_GAIN = 1e-6;
-const FAILURES_ALLOWED = 12;
-/** A refused step that promised to lower chi2/dof by more than this, a tenth of an error, was no kink. */
-const NO_PROGRESS = 0.01;
 
 /**
  * Damped Gauss-Newton (Marquardt 1963) on residuals over their effective standard deviations, the deviations being
@@ -109,55 +96,49 @@ export function solve(
 
   ws.robust.fill(1);
   evaluate(model, marks, frame, p, ws.now);
-  let damping = 1e-4;
-  let failures = 0;
-  let gainRefused = 0; // what the first of a row of refused steps promised
-  let settled = false;
-  let iteration = 0;
-  for (; iteration < maxIterations && !settled; iteration++) {
-    if (robust && iteration % ROBUST_EVERY === 0 && iteration <= ROBUST_LAST)
-      robustWeights(ws.now.residual, ws.now.variance, iteration >= ROBUST_EVERY, ws.scratch, ws.robust);
-    for (let i = 0; i < marks.count; i++) {
-      const fresh = options.variance?.[i] ?? ws.now.variance[i]!;
-      ws.variance[i] = iteration < HOLD_STEPS ? fresh : Math.sqrt(ws.variance[i]! * fresh);
-      ws.weight[i] = ws.robust[i]! / ws.variance[i]!;
-    }
-
-    let cost = accumulate(size, ws.now.residual, ws.now.jacobian, ws.weight, ws.A, ws.g);
-    const natural = informed
-      ? { values: naturalValues(model, state), G: naturalJacobian(model, state, axis) }
-      : null;
-    if (natural) cost += addPriors(known, natural, ws.A, ws.g);
-    if (p[LN_W]! >= bounds.lnWHigh && ws.g[LN_W]! < 0) hold(size, LN_W, ws.A, ws.g);
-
-    const solved = natural
-      ? stepWithin(known, natural, ws.A, ws.g, damping, ws.step)
-      : dampedStep(size, damping, ws);
-    let gain = 0; // expected fall of chi2 along the full step
-    for (let a = 0; a < size; a++) gain -= ws.g[a]! * ws.step[a]!;
-    let accepted = false;
-    if (solved) {
-      limitStep(p, ws.step);
-      for (let a = 0; a < size; a++) ws.next[a] = p[a]! + ws.step[a]!;
-      intoBounds(model, ws.next, bounds);
-      intoKnown(model, known, frame, ws.next);
-      evaluate(model, marks, frame, ws.next, ws.trial);
-      let trialCost = informed ? priorChi2(known, naturalValues(model, { frame, p: ws.next })) : 0;
-      for (let i = 0; i < marks.count; i++) trialCost += ws.weight[i]! * ws.trial.residual[i]! ** 2;
-      accepted = trialCost <= cost * (1 + 1e-9) + 1e-12;
-    }
-    const perDof = Math.max(1, cost / Math.max(marks.count - size, 1));
-    failures = accepted ? 0 : failures + 1;
-    if (failures === 1) gainRefused = gain / perDof;
-    if (!robust || iteration > ROBUST_SETTLED)
-      settled = (accepted && gain < tolerance * tolerance * perDof) || failures > FAILURES_ALLOWED;
-    if (iteration === maxIterations - 1) settled ||= gain < KINK_GAIN * perDof;
-    damping = accepted ? Math.max(damping * 0.15, 1e-10) : Math.min(damping * 6, 1e8);
-    if (accepted) {
-      p.set(ws.next);
-      [ws.now, ws.trial] = [ws.trial, ws.now];
-    }
-  }
+  let natural: Natural | null = null;
+  const descended = descend(
+    {
+      linearise: (iteration) => {
+        if (robust && iteration % ROBUST_EVERY === 0 && iteration <= ROBUST_LAST)
+          robustWeights(ws.now.residual, ws.now.variance, iteration >= ROBUST_EVERY, ws.scratch, ws.robust);
+        for (let i = 0; i < marks.count; i++) {
+          const fresh = options.variance?.[i] ?? ws.now.variance[i]!;
+          ws.variance[i] = iteration < HOLD_STEPS ? fresh : Math.sqrt(ws.variance[i]! * fresh);
+          ws.weight[i] = ws.robust[i]! / ws.variance[i]!;
+        }
+        let cost = accumulate(size, ws.now.residual, ws.now.jacobian, ws.weight, ws.A, ws.g);
+        if (informed) {
+          natural = { values: naturalValues(model, state), G: naturalJacobian(model, state, axis) };
+          cost += addPriors(known, natural, ws.A, ws.g);
+        }
+        if (p[LN_W]! >= bounds.lnWHigh && ws.g[LN_W]! < 0) hold(size, LN_W, ws.A, ws.g);
+        return cost;
+      },
+      step: (damping) => {
+        const solved = natural
+          ? stepWithin(known, natural, ws.A, ws.g, damping, ws.step)
+          : dampedStep(size, damping, ws);
+        return solved ? expectedGain(ws) : null;
+      },
+      trial: () => {
+        limitStep(p, ws.step);
+        for (let a = 0; a < size; a++) ws.next[a] = p[a]! + ws.step[a]!;
+        intoBounds(model, ws.next, bounds);
+        intoKnown(model, known, frame, ws.next);
+        evaluate(model, marks, frame, ws.next, ws.trial);
+        let cost = informed ? priorChi2(known, naturalValues(model, { frame, p: ws.next })) : 0;
+        for (let i = 0; i < marks.count; i++) cost += ws.weight[i]! * ws.trial.residual[i]! ** 2;
+        return cost;
+      },
+      accept: () => {
+        p.set(ws.next);
+        [ws.now, ws.trial] = [ws.trial, ws.now];
+      },
+      perDof: (cost) => Math.max(1, cost / Math.max(marks.count - size, 1)),
+    },
+    { tolerance, maxIterations, settlesFrom: robust ? ROBUST_SETTLED + 1 : 0 },
+  );
   const atBound = isFixed(known, LN_W)
     ? null
     : p[LN_W]! >= bounds.lnWHigh - 1e-3
@@ -165,9 +146,7 @@ export function solve(
       : p[LN_W]! <= bounds.lnWLow + 1e-3
         ? 'low'
         : null;
-  const stuck = failures > FAILURES_ALLOWED && gainRefused > NO_PROGRESS;
-  const reason = !settled ? 'iterations' : stuck ? 'no-progress' : 'settled';
-  return { frame, p, iterations: iteration, settled, reason, atBound };
+  return { frame, p, ...descended, atBound };
 }
 
 /**
@@ -193,21 +172,6 @@ export function solveAndRecentre(
     if (moved < 1e-6) break;
   }
   return outcome;
-}
-
-/** Solve the damped equations, each parameter in units of its own curvature. False when even damped they are singular. */
-function dampedStep(size: number, damping: number, ws: Workspace): boolean {
-  for (let a = 0; a < size; a++) ws.scale[a] = 1 / Math.sqrt(ws.A[a * size + a]! + 1e-300);
-  for (let a = 0; a < size; a++) {
-    for (let b = 0; b < size; b++)
-      ws.damped[a * size + b] = ws.A[a * size + b]! * ws.scale[a]! * ws.scale[b]!;
-    ws.damped[a * size + a] = ws.damped[a * size + a]! + damping + 1e-13;
-    ws.step[a] = -ws.g[a]! * ws.scale[a]!;
-  }
-  if (!factorise(size, ws.damped)) return false;
-  substitute(size, ws.damped, ws.step);
-  for (let a = 0; a < size; a++) ws.step[a] = ws.step[a]! * ws.scale[a]!;
-  return true;
 }
 
 /** No step may change ln w by more than 0.6, theta by half of itself, the centre by 0.3 rad. */
