@@ -1,7 +1,7 @@
-import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { loadConfig } from './config';
 import { makeApp } from './app';
+import { httpServer } from './httpServer';
 import { makeParts } from './services/parts';
 import { finishInterrupted } from './services/uploads';
 
@@ -9,9 +9,7 @@ async function main() {
   const parts = makeParts(loadConfig(), 'server');
   const { config, log } = parts;
   const app = await makeApp(parts);
-  const server = createServer(app.express);
-  // a cube takes minutes on a slow line: the time limit is on silence, not on the whole request
-  server.requestTimeout = 0;
+  const server = httpServer(app.express);
   await new Promise<void>((resolve, reject) => {
     server.once('error', reject);
     server.listen(config.port, config.host, resolve);

@@ -7,6 +7,7 @@ import { join } from 'node:path';
 import pino from 'pino';
 import supertest from 'supertest';
 import { makeApp, type App } from '@/server/app';
+import { httpServer } from '@/server/httpServer';
 import { loadConfig } from '@/server/config';
 import type { Parts } from '@/server/services/context';
 import { makeCubeStore } from '@/server/files/cubeStore';
@@ -64,7 +65,7 @@ export async function startProduct(env: Record<string, string> = {}): Promise<Pr
   const log = pino({ level: config.logLevel });
   const parts: Parts = { config, log, db: openDatabase(database.url), cubeFiles: makeCubeStore(config) };
   const app: App = await makeApp(parts);
-  const server: Server = createServer(app.express);
+  const server: Server = httpServer(app.express);
   await new Promise<void>((resolve) => server.listen(config.port, '127.0.0.1', resolve));
   const url = `http://127.0.0.1:${config.port}`;
   const workers: WorkerProcess[] = [];
@@ -120,6 +121,7 @@ export async function signInAt(url: string, login: string): Promise<SignedIn> {
     (method: Method) =>
     (path: string, body?: object): supertest.Test => {
       const request = agent[method](`/api/v1${path}`).set('X-CSRF-Token', me.csrfToken);
+      if (Buffer.isBuffer(body)) request.type('application/fits'); // a file as it is
       return (body === undefined ? request : request.send(body)) as supertest.Test;
     };
   return {
