@@ -12,7 +12,7 @@ const onPath = (name) =>
 
 /**
  * What the machine itself must have: how to see that it is there, and Debian's packages that bring it.
- * @type {Record<'postgresql' | 'chromium' | 'numpy', { name: string, present: () => boolean, packages: string[], otherwise: string }>}
+ * @type {Record<'postgresql' | 'chromium' | 'numpy' | 'scipy', { name: string, present: () => boolean, packages: string[], otherwise: string }>}
  */
 export const needs = {
   postgresql: {
@@ -34,6 +34,12 @@ export const needs = {
     // Debian's own, so that figures compare between machines: another Python may carry a numpy that sorts otherwise
     present: () => spawnSync('/usr/bin/python3', ['-c', 'import numpy'], { stdio: 'ignore' }).status === 0,
     packages: ['python3-numpy'],
+    otherwise: 'install it for /usr/bin/python3',
+  },
+  scipy: {
+    name: 'scipy for Python 3',
+    present: () => spawnSync('/usr/bin/python3', ['-c', 'import scipy'], { stdio: 'ignore' }).status === 0,
+    packages: ['python3-scipy'],
     otherwise: 'install it for /usr/bin/python3',
   },
 };
