@@ -5,6 +5,7 @@ import { useCommands } from '@/components/ui/commands/CommandsProvider';
 import { ProblemNotice } from '@/components/ui/ProblemNotice';
 import { useTheme } from '@/components/ui/theme';
 import { space } from '@/components/ui/tokens';
+import { Guide } from '@/components/guide/Guide';
 import { sections } from '@/components/frame/sections';
 import { useLiveEvents } from '@/hooks/useLiveEvents';
 import { useMe, useSessionWatch } from '@/hooks/useMe';
@@ -43,5 +44,10 @@ export default function SignedIn() {
       </View>
     );
   if (!me) return <View role="main" style={{ flex: 1, backgroundColor: color.ground }} />;
-  return <Slot />;
+  return (
+    <>
+      <Slot />
+      <Guide personId={me.id} />
+    </>
+  );
 }

@@ -9,7 +9,7 @@ import { useCubeSession } from '@/components/cube/useCubeSession';
 import { useStartPlace } from '@/components/cube/usePlace';
 import { useRecordFit } from '@/components/cube/useRecordFit';
 import { WideCube } from '@/components/cube/WideCube';
-import { SavePicture } from '@/components/figure/SavePicture';
+import { MoreOfCube } from '@/components/figure/MoreOfCube';
 import { RecordGate } from '@/components/frame/RecordGate';
 import { Screen } from '@/components/frame/Screen';
 import { IconButton } from '@/components/ui/Button';
@@ -107,7 +107,7 @@ function Instrument({ cube, axes, wcs }: { cube: Cube; axes: CubeAxes; wcs: Wcs 
         aside={
           <View style={{ flexDirection: 'row', alignItems: 'center', marginRight: -space(3) }}>
             <SaveState short={!wide} />
-            <SavePicture />
+            <MoreOfCube />
             <IconButton icon="info" label="About this cube" href={`/cubes/${cube.id}/about`} />
           </View>
         }

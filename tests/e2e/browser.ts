@@ -11,6 +11,8 @@ export interface Screen {
   height: number;
   touch: boolean;
   theme: 'dark' | 'light';
+  /** Offers the guide, as to a new person. */
+  guide?: boolean;
 }
 export const PHONE: Screen = { name: 'phone', width: 390, height: 844, touch: true, theme: 'dark' };
 export const WIDE: Screen = { name: 'wide', width: 1440, height: 900, touch: false, theme: 'light' };
@@ -40,6 +42,8 @@ export async function openStage(env: Record<string, string> = {}): Promise<Stage
         baseURL: product.url,
         acceptDownloads: true,
       });
+      // what is offered to new people stays away, except where it is what is tried
+      if (!screen.guide) await context.addInitScript(`localStorage.setItem('outswell.guide.all', 'seen')`);
       const page = await context.newPage();
       const errors: string[] = [];
       page.on('pageerror', (error) => errors.push(String(error)));

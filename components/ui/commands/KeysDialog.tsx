@@ -1,4 +1,5 @@
 import { View } from 'react-native';
+import { Button } from '../Button';
 import { Dialog } from '../Dialog';
 import { SectionTitle } from '../Panel';
 import { Text } from '../Text';
@@ -18,8 +19,20 @@ export function KeysDialog({ commands, onClose }: { commands: readonly Command[]
     ...(groups.get('Everywhere') ?? []),
     { name: 'keys', label: 'This list', keys: ['?'], perform: onClose },
   ]);
+  const help = commands
+    .filter((c) => !c.keys?.length && c.enabled !== false)
+    .map((c) => (
+      <Button
+        key={c.name}
+        label={c.label}
+        onPress={() => {
+          onClose();
+          c.perform();
+        }}
+      />
+    ));
   return (
-    <Dialog title="Keys" onClose={onClose}>
+    <Dialog title="Keys" onClose={onClose} actions={help.length > 0 && help}>
       {[...groups].map(([group, list]) => (
         <View key={group} style={{ gap: space(1) }}>
           <SectionTitle level={3}>{group}</SectionTitle>

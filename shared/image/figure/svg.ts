@@ -4,7 +4,6 @@ export type Attributes = Record<string, string | number | undefined>;
 /** Text as it may stand in an element or an attribute; characters that XML has no place for are left out. */
 export const escaped = (text: string): string =>
   text
-    // eslint-disable-next-line no-control-regex
     .replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]/g, '')
     .replace(/&/g, '&amp;')
     .replace(/</g, '&lt;')
