@@ -141,7 +141,7 @@ export async function signInAt(url: string, login: string): Promise<SignedIn> {
 export async function until<T>(
   look: () => Promise<T>,
   holds: (seen: T) => boolean,
-  timeoutMs = 15_000,
+  timeoutMs = 45_000,
 ): Promise<T> {
   const end = Date.now() + timeoutMs;
   for (;;) {
