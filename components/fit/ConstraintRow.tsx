@@ -17,16 +17,10 @@ const boxes: Record<Mode, readonly Box[]> = {
   prior: ['value', 'sd', 'low', 'high'],
 };
 
+/** Short, for the row names the parameter and a group carries its name. */
+const boxLabels: Record<Box, string> = { value: 'Mean', sd: 'Error', low: 'Lowest', high: 'Highest' };
 const boxLabel = (mode: Mode, box: Box): string =>
-  box === 'value'
-    ? mode === 'fixed'
-      ? 'held at'
-      : 'mean'
-    : box === 'sd'
-      ? 'its error'
-      : box === 'low'
-        ? 'not below'
-        : 'not above';
+  mode === 'fixed' && box === 'value' ? 'Held at' : boxLabels[box];
 
 /** What is said of one parameter before the fit, with the boxes that its choice needs. */
 export function ConstraintRow({
@@ -83,9 +77,9 @@ export function ConstraintRow({
       {boxes[form.mode].length > 0 && (
         <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space(2) }}>
           {boxes[form.mode].map((box) => (
-            <View key={box} style={{ flexGrow: 1, flexBasis: space(26), minWidth: space(26) }}>
+            <View key={box} style={{ flexGrow: 1, flexBasis: space(30), minWidth: space(30) }}>
               <Field
-                label={`${writtenName(name)} ${boxLabel(form.mode, box)}`}
+                label={boxLabel(form.mode, box)}
                 unit={unit || undefined}
                 mono
                 inputMode="text"
