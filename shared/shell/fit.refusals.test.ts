@@ -82,6 +82,27 @@ test.each([
   expect(problem.type).toBe('marks-degenerate');
 });
 
+test('an expansion beyond the span of the marks is fitted, with what bounds it said', () => {
+  const marks = [-3, -1.5, 0, 1.5, 3].flatMap((v) => ring(v, 2 * Math.sqrt(1 - (v / 60) ** 2)));
+  const fit = fitShell({ ...good, marks });
+  expect(fit.warnings.map((w) => w.code)).toContain('vexp-unconstrained');
+  expect(fit.parameters.vExp!.hi).toBeNull();
+  expect(fit.parameters.vExp!.lo!).toBeLessThan(60);
+});
+
+test('a hundred thousand marks are answered in seconds', () => {
+  const marks = Array.from({ length: 50 }, (_, k) => {
+    const v = -12 + k / 2;
+    return ring(v, 2 * Math.sqrt(1 - (v / 15) ** 2), 2000);
+  }).flat();
+  expect(marks).toHaveLength(100_000);
+  const from = process.cpuUsage();
+  const fit = fitShell({ ...good, channelWidth: 0.5, marks }, { optimiser: 'live', extras: true });
+  const { user } = process.cpuUsage(from);
+  expect(Math.abs(fit.parameters.vExp!.value - 15)).toBeLessThan(0.1);
+  expect(user / 1e6).toBeLessThan(20);
+}, 120_000);
+
 test('rings that grow away from v_sys are fitted with a warning, not an error', () => {
   const marks = [...ring(-8, 2.4), ...ring(-4, 2.1), ...ring(0, 2), ...ring(4, 2.1), ...ring(8, 2.4)];
   const fit = fitShell({ ...good, marks });

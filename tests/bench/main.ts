@@ -41,7 +41,7 @@ const parts: Record<
   ingest: { programs: ['postgresql', 'numpy'], run: benchIngest },
   planes: { programs: ['postgresql'], run: benchPlanes },
   size: { programs: ['postgresql'], run: benchSize },
-  fit: { programs: [], run: benchFit },
+  fit: { programs: ['scipy'], run: benchFit },
   coverage: { programs: [], run: benchCoverage },
   trace: { programs: [], run: benchTraceBias },
   screen: { programs: ['postgresql', 'chromium'], run: benchScreen },
