@@ -10,7 +10,7 @@ export function PictureNote() {
   const { stated, refused, seeing, view, planes, model, order } = useSession();
   const { color } = useTheme();
   const waiting = planes.plane?.standIn === true;
-  const words = [...stated, ...refused, ...(waiting ? ['thumbnail, the channel is coming'] : [])];
+  const words = [...stated, ...refused, ...(waiting ? ['a stand-in: the picture is coming'] : [])];
   const { other, setFlicking, flicking } = seeing;
   const flickable =
     view === 'channel' &&

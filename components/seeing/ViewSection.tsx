@@ -4,9 +4,11 @@ import { VIEW_ORDER, VIEWS } from '@/components/cube/views';
 import { LIE_WORDS, LIES, type Lie } from '@/components/seeing/seeing';
 import { SecondChoice } from '@/components/seeing/SecondChoice';
 import { SliceChoice } from '@/components/seeing/SliceChoice';
+import { Button } from '@/components/ui/Button';
 import { SegmentedChoice } from '@/components/ui/SegmentedChoice';
 import { Text } from '@/components/ui/Text';
 import { space } from '@/components/ui/tokens';
+import { separation } from '@/shared/sky/greatCircle';
 
 const HINTS: Record<Lie, string> = {
   image: 'The projection of the file.',
@@ -15,9 +17,17 @@ const HINTS: Record<Lie, string> = {
   stacked: 'The model’s channels laid on each other, each scaled to its ring.',
 };
 
+/** The model's centre, give or take this share of the view's reach: live fits move a little. */
+const NEAR = 2e-3;
+
 /** Which picture, and how the sky lies in it. */
 export function ViewSection() {
-  const { view, setView, seen, lieAs, model } = useSession();
+  const { view, setView, seen, seeing, lieAs, model } = useSession();
+  const { about } = seeing;
+  const centred =
+    model !== null &&
+    about !== null &&
+    separation(about, { lon: model.l, lat: model.b }) < about.reach * NEAR;
   return (
     <>
       <SegmentedChoice
@@ -40,8 +50,15 @@ export function ViewSection() {
           onChange={lieAs}
         />
         <Text size="small" tone="quiet">
-          {`${HINTS[seen.lie]}${seen.lie === 'image' ? '' : model ? ' About the model’s centre.' : ' About the middle of the image: there is no model yet.'}`}
+          {`${HINTS[seen.lie]}${seen.lie === 'image' ? '' : centred ? ' About the model’s centre.' : model ? ' About another place than the model’s centre.' : ' About the middle of the image: there is no model yet.'}`}
         </Text>
+        {seen.lie !== 'image' && model && !centred && (
+          <Button
+            label="Centre on the model"
+            onPress={() => lieAs(seen.lie)}
+            style={{ alignSelf: 'flex-start' }}
+          />
+        )}
       </View>
       <SliceChoice />
       <SecondChoice />

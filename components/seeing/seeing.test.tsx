@@ -11,7 +11,7 @@ test('an address brings back what is seen', () => {
     about: { lon: 118.2, lat: -3.1, reach: 2.4 },
     second: 'velocity',
     slice: { kind: 'ring', l: 12, b: 3, radius: 1.25 },
-    contours: { cube: '0b6ffd5e-6a35-4a0e-9f3b-0c5f1a2b3c4d', kind: 'total', count: 5, ends: [-2.5, 40] },
+    contours: { of: '0b6ffd5e-6a35-4a0e-9f3b-0c5f1a2b3c4d', kind: 'total', count: 5, ends: [-2.5, 40] },
   };
   expect(seeingOf(paramsOfSeeing(seen))).toEqual(seen);
   expect(seeingOf(paramsOfSeeing({ ...AS_IS, other: 'model' }))).toEqual({ ...AS_IS, other: 'model' });

@@ -23,15 +23,17 @@ export interface Seeing {
   about: (LonLat & { reach: number }) | null;
   /** On a second map, where there is room: a map of all channels, or the other channel. */
   second: MapKind | 'other' | null;
-  /** Contours of a map of a cube of the region. */
+  /** Contours of a map of a cube of the region, or of a companion image. */
   contours: ContourChoice | null;
   /** What is cut through velocity. */
   slice: Slice | null;
 }
 
+export type ContourKind = MapKind | 'image';
 export interface ContourChoice {
-  cube: string;
-  kind: MapKind;
+  /** The cube or the image. */
+  of: string;
+  kind: ContourKind;
   count: number;
   /** Lowest and highest level; null: as the map suggests. */
   ends: readonly [number, number] | null;
@@ -96,13 +98,13 @@ export function seeingOf(params: Params): Seeing {
 }
 
 function contoursOfText(text: string | null): ContourChoice | null {
-  const [cube, kindName, countText, lowText, highText] = (text ?? '').split(',');
-  const kind = MAPS.find((m) => m === kindName);
+  const [of, kindName, countText, lowText, highText] = (text ?? '').split(',');
+  const kind = ([...MAPS, 'image'] as const).find((m) => m === kindName);
   const count = Number(countText);
-  if (!cube || !/^[0-9a-f-]{36}$/i.test(cube) || !kind || !(count >= 1 && count <= MOST_LEVELS)) return null;
+  if (!of || !/^[0-9a-f-]{36}$/i.test(of) || !kind || !(count >= 1 && count <= MOST_LEVELS)) return null;
   const [low, high] = [Number(lowText), Number(highText)];
   return {
-    cube,
+    of,
     kind,
     count: Math.floor(count),
     ends: lowText && highText && low < high ? [low, high] : null,
@@ -129,7 +131,7 @@ export function paramsOfSeeing(s: Seeing): Record<string, string | undefined> {
     second: s.second ?? undefined,
     contours: contours
       ? [
-          contours.cube,
+          contours.of,
           contours.kind,
           contours.count,
           ...(contours.ends ? contours.ends.map((e) => short(e, 4)) : []),

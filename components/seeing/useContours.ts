@@ -1,15 +1,11 @@
 import { useMemo } from 'react';
 import type { Scene } from '@/components/map/scene';
 import type { ContourChoice } from '@/components/seeing/seeing';
+import { useContourSource } from '@/components/seeing/useContourSource';
 import type { SeenSky } from '@/components/seeing/useSeenSky';
-import { useMapPlane } from '@/hooks/planes/useMapPlane';
-import { useCube } from '@/hooks/useCubes';
-import type { Cube } from '@/shared/contract/cubes';
 import { contoursOf } from '@/shared/image/contours';
 import { dequantise } from '@/shared/image/quantise';
 import { windowOf } from '@/shared/image/windowPresets';
-import { buildWcs } from '@/shared/sky/wcs';
-import type { WcsSpec } from '@/shared/sky/wcsSpec';
 
 export interface Contours {
   lines: NonNullable<Scene['contours']>;
@@ -19,18 +15,12 @@ export interface Contours {
 }
 
 const NONE: Contours = { lines: [], levels: [], ends: null, problem: null };
-const NO_CUBE = { id: '', readyAt: null, overrides: null } as Pick<Cube, 'id' | 'readyAt' | 'overrides'>;
 /** The usual levels lie in the upper part of what a map spans: lower down they follow noise. */
 const LOWEST_SHARE = 0.35;
 
-/** Contours of a map of some cube of the region, laid where the picture shows the same sky. */
+/** Contours of another map or of a companion image, laid where the picture shows the same sky. */
 export function useContours(choice: ContourChoice | null, seen: SeenSky): Contours {
-  const { data: cube, problem: cubeProblem } = useCube(choice?.cube ?? null);
-  const { plane, problem } = useMapPlane(cube ?? NO_CUBE, cube?.status === 'ready' ? choice!.kind : null);
-  const wcs = useMemo(
-    () => (cube?.axes ? buildWcs(cube.axes.wcs as unknown as WcsSpec) : null),
-    [cube?.axes],
-  );
+  const { plane, sky: from, problem } = useContourSource(choice);
   const count = choice?.count ?? 0;
   const [low, high] = choice?.ends ?? [null, null];
   const found = useMemo(() => {
@@ -40,17 +30,19 @@ export function useContours(choice: ContourChoice | null, seen: SeenSky): Contou
     const levels = Array.from({ length: count }, (_, i) =>
       count === 1 ? ends[0] : ends[0] + ((ends[1] - ends[0]) * i) / (count - 1),
     );
-    return { ends, levels, contours: contoursOf(dequantise(plane), plane.width, plane.height, levels) };
+    const contours = contoursOf(dequantise(plane), plane.width, plane.height, levels);
+    return { ends, levels, contours, block: plane.block };
   }, [plane, count, low, high]);
   const { sky, nx, ny } = seen;
   const lines = useMemo<Contours['lines']>(() => {
-    if (!found || !wcs) return [];
+    if (!found || !from) return [];
+    const { block } = found;
     const jump = Math.max(nx, ny) / 4;
     return found.contours.map(({ lines: all }, i) => {
       const path = all.flatMap((line) => {
         const pieces: { x: number; y: number }[][] = [[]];
         for (const { x, y } of line) {
-          const at = wcs.pixelToGalactic(x, y);
+          const at = from.pixelToGalactic(ofReduced(x, block), ofReduced(y, block));
           const here = at && sky.galacticToPixel(at.l, at.b);
           const piece = pieces[pieces.length - 1]!;
           const before = piece[piece.length - 1];
@@ -61,15 +53,17 @@ export function useContours(choice: ContourChoice | null, seen: SeenSky): Contou
       });
       return { path, strong: i % 2 === 1 };
     });
-  }, [found, wcs, sky, nx, ny]);
+  }, [found, from, sky, nx, ny]);
   return useMemo(() => {
     if (!choice) return NONE;
-    const trouble = cubeProblem ?? problem;
     return {
       lines,
       levels: found?.levels ?? [],
       ends: found?.ends ?? null,
-      problem: trouble ? `${trouble.title}. ${trouble.detail}` : null,
+      problem: problem ? `${problem.title}. ${problem.detail}` : null,
     };
-  }, [choice, lines, found, cubeProblem, problem]);
+  }, [choice, lines, found, problem]);
 }
+
+/** Where a place in a plane reduced by block averages lies in the whole one; both count from 0 at pixel centres. */
+const ofReduced = (at: number, block: number) => block * (at + 0.5) - 0.5;

@@ -68,7 +68,7 @@ function SpectrumView({ slice, height }: { slice: Extract<Slice, { kind: 'spectr
   const pixel = useMemo(() => pixelDegrees(wcs, at), [wcs, at]);
   const inside = at && at.x > -0.5 && at.y > -0.5 && at.x < axes.nx - 0.5 && at.y < axes.ny - 0.5;
   const query = inside
-    ? `?x=${at.x.toFixed(1)}&y=${at.y.toFixed(1)}&radius=${(slice.radius / pixel).toFixed(1)}&inner=${(slice.inner / pixel).toFixed(1)}`
+    ? `x=${at.x.toFixed(1)}&y=${at.y.toFixed(1)}&radius=${(slice.radius / pixel).toFixed(1)}&inner=${(slice.inner / pixel).toFixed(1)}`
     : '';
   const { data, problem, reload } = useSpectrum(inside ? cube.id : null, query);
   const most = (Math.min(axes.nx, axes.ny) / 4) * pixel;

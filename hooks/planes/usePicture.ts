@@ -121,12 +121,17 @@ export function usePicture(
     }
   }, [key, recipe, wcs, plane?.channel]);
 
+  // the plane itself stands in for the first picture, where it lies alike
+  const standIn = useMemo(
+    () => (plane && !recipe.view ? { ...plane, standIn: true } : null),
+    [plane, recipe.view],
+  );
   return useMemo(() => {
     if (plain) return shown;
     const fits = made && sameShape(made.key, key);
     const problem = shown.problem ?? (failed && failed.key === key ? asProblem(failed.error) : null);
-    return { plane: fits ? made.plane : null, problem, retry: shown.retry };
-  }, [plain, shown, made, failed, key]);
+    return { plane: fits ? made.plane : problem ? null : standIn, problem, retry: shown.retry };
+  }, [plain, shown, made, failed, key, standIn]);
 }
 
 /** The newest made may be shown until the one asked for is there, unless it lies differently on the screen. */

@@ -1,5 +1,6 @@
 /** What is seen is where it belongs on the sky, is stated, and is held by the address. */
 import type { Page } from 'playwright-core';
+import { fitted, looking, toScreen } from '@/shared/image/viewport';
 import { buildWcs } from '@/shared/sky/wcs';
 import type { WcsSpec } from '@/shared/sky/wcsSpec';
 import { newRegion, newShell, readyCube, saveMarks } from '../api/fixture';
@@ -28,6 +29,18 @@ beforeAll(async () => {
   );
 });
 afterAll(() => stage.close());
+
+/** Until the picture asked for is on the map, and not what stands in for it. */
+const settled = (page: Page) =>
+  until(
+    () =>
+      page.evaluate<boolean>(`(() => {
+        const all = performance.getEntriesByName('outswell:channel-painted');
+        const raster = document.querySelector('[data-testid="raster"]');
+        return all.length > 0 && !all[all.length - 1].detail.standIn && raster.style.opacity === '1';
+      })()`),
+    (seen) => seen,
+  );
 
 /** Until a plane is on the map, not only its thumbnail. */
 const painted = (page: Page) =>
@@ -106,13 +119,10 @@ describe('a painted pixel lies where the sky says', () => {
     const sky = wcs.pixelToGalactic(SPOT.x, SPOT.y)!;
     expect(sky.l).toBeCloseTo(120 - (SPOT.x - 31.5) * PIXEL, 9);
     const place = wcs.galacticToPixel(sky.l, sky.b)!;
-    const scale = zoom * Math.min(seen.width / axes.nx, seen.height / axes.ny);
-    // as long as the middle is not held back by the image's edge
-    const middle = zoom === 1 ? { x: 31.5, y: 29.5 } : { x: 22.3, y: 42.1 };
-    const expected = {
-      x: seen.width / 2 + (place.x - middle.x) * scale,
-      y: seen.height / 2 - (place.y - middle.y) * scale,
-    };
+    // canvas pixels: the viewport that the address names, on a map of this size
+    const v = looking(fitted(axes.nx, axes.ny, seen.width, seen.height), 22.3, 42.1, zoom);
+    const { sx, sy } = toScreen(zoom === 1 ? fitted(axes.nx, axes.ny, seen.width, seen.height) : v, place);
+    const [expected, scale] = [{ x: sx, y: sy }, v.scale];
     expect(Math.abs(seen.x - expected.x) / scale).toBeLessThan(0.1);
     expect(Math.abs(seen.y - expected.y) / scale).toBeLessThan(0.1);
     await context.close();
@@ -130,6 +140,7 @@ test('averaging and smoothing are stated on the picture and held by the address'
   await page.waitForURL(/mean=7/);
   await page.reload();
   await note.getByText('mean of 7 channels').waitFor();
+  await settled(page);
   await shot(page, WIDE, 'seeing-smooth');
   expect(errors).toEqual([]);
   await context.close();
@@ -141,7 +152,10 @@ test('polar: the ring is a straight line, and the model lies on it', async () =>
   await page.getByRole('radio', { name: 'View', exact: true }).click();
   await page.getByRole('radio', { name: 'Polar' }).click();
   await page.waitForURL(/view=polar/);
-  await page.waitForTimeout(1200);
+  const centre = page.getByRole('button', { name: 'Centre on the model' });
+  if (await centre.isVisible()) await centre.click(); // the live fit came after the press
+  await settled(page);
+  await page.waitForTimeout(300);
   await shot(page, WIDE, 'seeing-polar');
   expect(await violations(page)).toEqual([]);
   const rows = (await page.evaluate(`(() => {
@@ -162,11 +176,11 @@ test('polar: the ring is a straight line, and the model lies on it', async () =>
   expect(Math.max(...rows) - Math.min(...rows)).toBeLessThan(0.06);
   await page.getByRole('radio', { name: 'Stereographic' }).click();
   await page.waitForURL(/view=stereographic/);
-  await page.waitForTimeout(800);
+  await settled(page);
   await shot(page, WIDE, 'seeing-stereographic');
   await page.getByRole('radio', { name: 'Stacked' }).click();
   await page.getByText(/channels stacked by scaled radius/).waitFor();
-  await page.waitForTimeout(1500);
+  await settled(page);
   await shot(page, WIDE, 'seeing-stacked');
   expect(errors).toEqual([]);
   await context.close();
@@ -186,6 +200,7 @@ test('comparing: remember a channel, flick while the key is held, take the diffe
   await page.keyboard.press('d');
   await note.getByText(/^minus channel 17/).waitFor();
   await page.waitForURL(/minus=1/);
+  await settled(page);
   await shot(page, WIDE, 'seeing-difference');
   expect(errors).toEqual([]);
   await context.close();
