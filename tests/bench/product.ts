@@ -43,7 +43,7 @@ const open = new Set<() => Promise<void>>();
 /** Stops whatever still runs and removes its files. */
 export const stopAll = () => Promise.all([...open].map((stop) => stop()));
 
-export async function startBenchProduct(): Promise<BenchProduct> {
+export async function startBenchProduct(login = 'bench'): Promise<BenchProduct> {
   const scratch = mkdtempSync(join(tmpdir(), 'outswell-bench-'));
   chmodSync(scratch, 0o711); // the database's account must pass through
   const clean = () => rmSync(scratch, { recursive: true, force: true, maxRetries: 5 });
@@ -71,7 +71,7 @@ export async function startBenchProduct(): Promise<BenchProduct> {
     }) as [Child, Child];
     const url = `http://127.0.0.1:${port}`;
     await healthy(url, [server, worker]);
-    const lead = await signInAt(url, 'bench');
+    const lead = await signInAt(url, login);
     const db = new Client(cluster.url);
     await db.connect();
     undo.push(() => db.end());

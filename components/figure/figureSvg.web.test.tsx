@@ -1,4 +1,3 @@
-/** @jest-environment jsdom */
 import type { Figure, FigureMark, Section } from '@/shared/image/figure/figure';
 import { colourBar } from '@/shared/image/figure/colourBar';
 import { wholeImage } from '@/shared/image/figure/figureLayout';
