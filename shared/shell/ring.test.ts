@@ -1,13 +1,16 @@
 import fc from 'fast-check';
 import reference from '@/tests/reference/circles.json';
 import { destination, separation } from '@/shared/sky/greatCircle';
-import { fitRing, ringRadius } from '@/shared/shell/ring';
+import { algebraicRing, fitRing, ringRadius } from '@/shared/shell/ring';
 
 const marksOf = (points: number[][]) => points.map(([l, b]) => ({ l: l!, b: b! }));
 
 describe('against scipy solutions polished to 40 digits', () => {
   test.each(reference.circles.map((c) => [c.id, c.note, c] as const))('%s %s', (_id, _note, c) => {
     const { ring } = fitRing(marksOf(c.points));
+    const plane = algebraicRing(marksOf(c.points))!;
+    expect(separation({ lon: plane.l, lat: plane.b }, { lon: c.plane.l, lat: c.plane.b })).toBeLessThan(1e-9);
+    expect(Math.abs(plane.theta - c.plane.radius)).toBeLessThan(1e-9);
     const g = c.geometric;
     const tolerance = Math.max(1e-6 * g.radius, 1e-4 * (g.seRadius ?? 0));
     expect(separation({ lon: ring!.l, lat: ring!.b }, { lon: g.l, lat: g.b })).toBeLessThan(tolerance);

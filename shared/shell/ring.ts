@@ -1,4 +1,4 @@
-import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
+import { Matrix, SingularValueDecomposition } from 'ml-matrix';
 import { DEGREE, eastNorth, lonLatOf, unitVector, type Vector } from '@/shared/sky/greatCircle';
 import { normalised } from '@/shared/shell/markSet';
 import { factorise, invert, substitute } from '@/shared/shell/normalEquations';
@@ -71,6 +71,19 @@ export function fitRing(marks: readonly RingMark[]): RingResult {
   };
 }
 
+/** The algebraic circle alone: the plane n.m = cos theta nearest to the marks, all alike; null where they coincide. */
+export function algebraicRing(marks: readonly RingMark[]): { l: number; b: number; theta: number } | null {
+  if (marks.length < 3) return null;
+  const q = marks.map(({ l, b }) => unitVector({ lon: l, lat: b }));
+  const plane = planeThrough(
+    q,
+    marks.map(() => 1),
+  );
+  if (plane === null) return null;
+  const { lon, lat } = lonLatOf(plane.centre);
+  return { l: lon, b: lat, theta: plane.planeTheta / DEGREE };
+}
+
 /**
  * Plain model radius in degrees at one velocity, sin theta = sin Theta sqrt(1 - u^2), for a curve without channels;
  * null beyond the caps. `modelRadius` in channelCurve.ts averages over a channel, as the fit does.
@@ -90,22 +103,20 @@ interface Circle {
 }
 
 /** Least-squares plane through the marks: the normal is the direction in which they vary least about their mean. */
-function planeThrough(q: Vector[], weight: number[]): Circle | null {
+function planeThrough(q: Vector[], weight: number[]): (Circle & { planeTheta: number }) | null {
   const total = weight.reduce((sum, w) => sum + w, 0);
   const mean = [0, 1, 2].map((a) => q.reduce((sum, v, i) => sum + weight[i]! * v[a]!, 0) / total);
   const off = q.map((v) => v.map((x, a) => x - mean[a]!));
   if (Math.max(...off.map((d) => Math.hypot(...d))) < ONE_POINT) return null;
-  const scatter = [0, 1, 2].map((a) =>
-    [0, 1, 2].map((b) => off.reduce((sum, d, i) => sum + weight[i]! * d[a]! * d[b]!, 0)),
-  );
-  const { realEigenvalues, eigenvectorMatrix } = new EigenvalueDecomposition(new Matrix(scatter), {
-    assumeSymmetric: true,
-  });
-  const least = realEigenvalues.indexOf(Math.min(...realEigenvalues));
-  const [x, y, z] = [0, 1, 2].map((a) => eigenvectorMatrix.get(a, least)) as [number, number, number];
+  // Of the rows themselves, not of their 3 x 3 products, which would lose half the digits.
+  const rows = off.map((d, i) => d.map((x) => x * Math.sqrt(weight[i]!)));
+  const { rightSingularVectors: V, diagonal } = new SingularValueDecomposition(new Matrix(rows));
+  const least = diagonal.indexOf(Math.min(...diagonal));
+  const [x, y, z] = [0, 1, 2].map((a) => V.get(a, least)) as [number, number, number];
   const side = x * mean[0]! + y * mean[1]! + z * mean[2]! < 0 ? -1 : 1;
   const centre = normalised(side * x, side * y, side * z);
-  return { centre, theta: meanAngle(q, weight, centre) };
+  const cosine = centre[0] * mean[0]! + centre[1] * mean[1]! + centre[2] * mean[2]!;
+  return { centre, theta: meanAngle(q, weight, centre), planeTheta: Math.acos(Math.min(cosine, 1)) };
 }
 
 /** Mean angle of the marks from a centre: the best radius for it. */
