@@ -1,7 +1,7 @@
 /** A shell open for marking, and hands on its map: positions in image pixels of the small cube. */
 import type { CDPSession, Page } from 'playwright-core';
 import { newShell } from '../api/fixture';
-import type { SignedIn } from '../api/harness';
+import { until, type SignedIn } from '../api/harness';
 import { PHONE, WIDE, type Screen, type Stage } from './browser';
 
 export const [NX, NY] = [64, 60];
@@ -47,8 +47,12 @@ export { PHONE, WIDE };
 
 /** Until a channel has been drawn in full. */
 export const painted = (page: Page) =>
-  page.waitForFunction(
-    `performance.getEntriesByName('outswell:channel-painted').some((e) => e.detail.block === 1)`,
+  until(
+    () =>
+      page.evaluate(
+        `performance.getEntriesByName('outswell:channel-painted').some((e) => e.detail.block === 1)`,
+      ),
+    (done) => done === true,
   );
 
 export interface Spot {
