@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useDeferredValue, useMemo } from 'react';
 import type { CubeAxes } from '@/shared/contract/cubes';
 import type { LiveFit } from '@/hooks/reading/useLiveFit';
 import { bestApart, whereNext, type NextChannel } from '@/shared/shell/suggest/whereNext';
@@ -9,11 +9,13 @@ const APART = 0.15;
 
 /** The unmarked channels where a ring would tell most, best first; none before there is a fit. */
 export function useWhereNext(
-  { fit, marks }: LiveFit,
+  live: LiveFit,
   axes: CubeAxes,
   wcs: Wcs,
   usualSigma: number | undefined,
 ): readonly NextChannel[] {
+  // Rings and fit follow the marks first.
+  const { fit, marks } = useDeferredValue(live);
   const velocities = useMemo(
     () => Array.from({ length: axes.channels }, (_, k) => wcs.velocityOf(k)),
     [axes.channels, wcs],
