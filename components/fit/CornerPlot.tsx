@@ -116,7 +116,7 @@ function axisOf(column: DrawColumn): Axis {
 const shareOf = (axis: Axis, value: number) => (value - axis.low) / (axis.high - axis.low);
 
 function ticksOf(axis: Axis, side: number): { label: string; share: number }[] {
-  const { values, decimals } = niceTicks(axis.low, axis.high, Math.max(side / 62, 1.2));
+  const { values, decimals } = niceTicks(axis.low, axis.high, Math.max(side / 48, 1.6));
   return values.map((v) => ({ label: labelOf(v, decimals), share: shareOf(axis, v) }));
 }
 

@@ -53,12 +53,14 @@ function Curve({ profile, width, fitted }: { profile: Profile; width: number; fi
   const right = width - MARGIN.right;
   const floor = HEIGHT - MARGIN.bottom;
   const x = (v: number) => MARGIN.left + ((v - low) / (high - low || 1)) * (right - MARGIN.left);
-  const y = (d: number) => floor - (Math.min(d, TOP) / TOP) * (floor - MARGIN.top);
+  const y = (d: number) => floor - (d / TOP) * (floor - MARGIN.top);
   const ticks = niceTicks(low, high, (right - MARGIN.left) / 80);
   const font = { fontFamily: fonts.mono, fontSize: typeScale.small[0], fill: color.quiet };
   const names = { ...font, fontFamily: fonts.regular };
+  // what rises out of the frame is left out, not drawn along its edge
   const path = values
-    .map((v, i) => `${i === 0 ? 'M' : 'L'}${x(v).toFixed(1)} ${y(deltaChi2[i]!).toFixed(1)}`)
+    .flatMap((v, i) => (deltaChi2[i]! <= TOP ? [`${x(v).toFixed(1)} ${y(deltaChi2[i]!).toFixed(1)}`] : []))
+    .map((place, i) => `${i === 0 ? 'M' : 'L'}${place}`)
     .join('');
   const label =
     `Profile of χ² along ${writtenName(parameter)}: ${below(profile, 1)}` +

@@ -76,5 +76,5 @@ const times = (x: number): string => `${ratio(x)} times`;
 function judged(mark: number): string {
   if (mark > 1.5) return ', so you were less sure than you said';
   if (mark < 0.65) return ', so you were surer than you said';
-  return ', as stated';
+  return mark > 0.85 && mark < 1.2 ? ', as stated' : '';
 }
