@@ -84,7 +84,7 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     start: start.seeing,
     store,
   });
-  const { seeing, seen, channelPlanes } = seenPicture;
+  const { seeing, seen, channelPlanes, ahead } = seenPicture;
   const contours = useContours(seeing.contours, seen);
   const own = live.readings.find((r) => r.channel === channel)?.ring ?? null;
   const suggestions = useSuggestions({
@@ -157,10 +157,12 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
   const showChannel = useCallback(
     (to: number) => {
       performance.mark?.('outswell:channel-asked', { detail: { channel: to } });
+      const plane = onMap ? null : ahead(to);
+      if (plane) store.early.set(plane); // seen before the page has followed
       setChannel(to);
       setView('channel'); // who moves along the strip wants to see channels
     },
-    [setView],
+    [setView, ahead, store, onMap],
   );
   const film = useFilm(order, channel, showChannel, model);
   const here = useRef({ channel, marks, order, image, store });

@@ -11,7 +11,7 @@ export type DrawLayer = (ctx: CanvasRenderingContext2D, viewport: Viewport, rati
 export function useCanvasLayer(
   viewport: ValueStore<Viewport | null>,
   draw: DrawLayer,
-): { canvas: RefObject<HTMLCanvasElement | null>; schedule: () => void } {
+): { canvas: RefObject<HTMLCanvasElement | null>; schedule: () => void; redraw: () => void } {
   const canvas = useRef<HTMLCanvasElement>(null);
   const latest = useRef(draw);
   const frame = useRef(0);
@@ -51,5 +51,5 @@ export function useCanvasLayer(
     },
     [],
   );
-  return { canvas, schedule };
+  return { canvas, schedule, redraw };
 }

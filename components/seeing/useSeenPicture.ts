@@ -10,7 +10,8 @@ import { useModelPlane } from '@/components/seeing/useModelPlane';
 import { useSeeing, type SeeingControl } from '@/components/seeing/useSeeing';
 import { useSeenSky, type SeenSky } from '@/components/seeing/useSeenSky';
 import type { StripOrder } from '@/components/strip/stripOrder';
-import { usePicture } from '@/hooks/planes/usePicture';
+import type { ChannelPlane } from '@/hooks/planes/decodePlane';
+import { isPlain, usePicture } from '@/hooks/planes/usePicture';
 import { usePlanes, type ChannelPlanes, type Planes } from '@/hooks/planes/usePlanes';
 import { useValue } from '@/hooks/valueStore';
 import type { Cube, CubeAxes } from '@/shared/contract/cubes';
@@ -39,6 +40,8 @@ export interface SeenPicture {
   channelPlanes: ChannelPlanes;
   /** Show the sky in another way, about the model's centre or the image's. */
   lieAs: (lie: Lie) => void;
+  /** The plane that a step to a channel will show, where that is no more than the plane itself; else null. */
+  ahead: (channel: number) => ChannelPlane | null;
 }
 
 export interface SeenInput {
@@ -137,6 +140,12 @@ export function useSeenPicture(input: SeenInput): SeenPicture {
     () => (modelPlane ? { ...picture, plane: modelPlane } : picture),
     [modelPlane, picture],
   );
+  const plain = isPlain(made.recipe) && !allChannels && !modelPlane;
+  const { store: planeStore, thumbnail } = channelPlanes;
+  const ahead = useCallback(
+    (to: number) => (plain ? (planeStore.best(to) ?? thumbnail(to)) : null),
+    [plain, planeStore, thumbnail],
+  );
   const { setLie } = seeing;
   const lieAs = useCallback(
     (to: Lie) => {
@@ -150,7 +159,7 @@ export function useSeenPicture(input: SeenInput): SeenPicture {
     : flicked
       ? [`channel ${channel + 1} instead`, ...made.said]
       : made.said;
-  return { seeing, seen, stated, refused: made.refused, planes, look, channelPlanes, lieAs };
+  return { seeing, seen, stated, refused: made.refused, planes, look, channelPlanes, lieAs, ahead };
 }
 
 /** Farthest a stereographic map reaches: at 180 degrees it would be infinitely large. */
