@@ -27,7 +27,7 @@ export function openApiDocument(version: string) {
   });
 }
 
-function toRoute({ method, path, summary, open, query, body, answer }: Endpoint): RouteConfig {
+function toRoute({ method, path, summary, open, query, body, binaryBody, answer }: Endpoint): RouteConfig {
   const names = [...path.matchAll(/:(\w+)/g)].map((m) => m[1]!);
   const params = z.object(
     Object.fromEntries(names.map((n) => [n, n === 'channel' ? z.int().min(0) : z.string()])),
@@ -42,6 +42,12 @@ function toRoute({ method, path, summary, open, query, body, answer }: Endpoint)
       ...(names.length > 0 && { params }),
       ...(query && { query }),
       ...(body && { body: { required: true, content: { 'application/json': { schema: body } } } }),
+      ...(binaryBody && {
+        body: {
+          required: true,
+          content: Object.fromEntries(binaryBody.map((type) => [type, { schema: BYTES }])),
+        },
+      }),
     },
     responses: {
       [answer.status]: {
@@ -50,7 +56,7 @@ function toRoute({ method, path, summary, open, query, body, answer }: Endpoint)
         ...((answer.schema || answer.binary) && {
           content: {
             [answer.binary ?? 'application/json']: {
-              schema: answer.schema ?? z.string().meta({ format: 'binary' }),
+              schema: answer.schema ?? BYTES,
             },
           },
         }),
@@ -63,6 +69,7 @@ function toRoute({ method, path, summary, open, query, body, answer }: Endpoint)
   };
 }
 
+const BYTES = z.string().meta({ format: 'binary' });
 const planeHeaders = z.object(
   Object.fromEntries(Object.values(PLANE_HEADERS).map((name) => [name, z.string()])),
 );

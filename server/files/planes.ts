@@ -1,7 +1,13 @@
 import { Problem } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
-import { decodePixels } from '@/shared/fits/decode';
-import { isChannelContiguous, pixelOffset, placeSlice, planeSlices } from '@/shared/fits/planeRange';
+import { decodePixels, type PixelFormat } from '@/shared/fits/decode';
+import {
+  isChannelContiguous,
+  pixelOffset,
+  placeSlice,
+  planeSlices,
+  type CubeLayout,
+} from '@/shared/fits/planeRange';
 import type { ByteSource } from './byteSource';
 
 /** Memory that planes read together may take when channels do not lie in one piece, bytes. */
@@ -46,7 +52,7 @@ export async function* readPlanes(
 /** Read one channel into an array of nx · ny values. @returns how many were infinite */
 export function readPlane(
   source: ByteSource,
-  head: CubeHead,
+  head: CubeLayout & PixelFormat,
   channel: number,
   out: Float32Array | Float64Array,
 ): Promise<number> {
@@ -68,7 +74,7 @@ export async function readPixel(
 
 async function readBlock(
   source: ByteSource,
-  head: CubeHead,
+  head: CubeLayout & PixelFormat,
   from: number,
   to: number,
   out: Float32Array | Float64Array,
@@ -95,7 +101,7 @@ async function readBlock(
 }
 
 /** True when the file's order within a channel is the plane's own, so that pixels need no placing. */
-function isStraight(head: CubeHead): boolean {
+function isStraight(head: CubeLayout): boolean {
   const { naxis, longitude, latitude } = head.layout;
   const between = naxis.slice(longitude + 1, latitude).concat(naxis.slice(0, longitude));
   return isChannelContiguous(head) && longitude < latitude && between.every((n) => n === 1);

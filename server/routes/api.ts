@@ -22,6 +22,7 @@ import { spectrumOf } from '../services/spectra';
 import * as tokens from '../services/tokens';
 import * as traces from '../services/traces';
 import { uploadsOfRegion } from '../services/uploads';
+import { imageRoutes } from './images';
 import { idOf, parse } from './problems';
 import { planeRoutes } from './planes';
 
@@ -127,6 +128,7 @@ export function apiRoutes(): Router {
     res.json(await spectrumOf(contextOf(req), idOf(req, 'cubeId'), parse(SpectrumQuery, req.query)));
   });
   planeRoutes(api, channelOf);
+  imageRoutes(api);
 
   api.get('/regions/:regionId/shells', async (req, res) => {
     res.json(list(await shells.shellsOfRegion(contextOf(req), idOf(req, 'regionId'))));

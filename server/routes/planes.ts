@@ -53,8 +53,11 @@ export function planeRoutes(api: Router, channelOf: (req: Request) => number): v
 }
 
 /** Name the version of the cube; true when the asker has it already, and has been told so. */
-async function isKept(req: Request, res: Response): Promise<boolean> {
-  const version = await versionOf(contextOf(req), idOf(req, 'cubeId'));
+const isKept = async (req: Request, res: Response): Promise<boolean> =>
+  isFresh(req, res, await versionOf(contextOf(req), idOf(req, 'cubeId')));
+
+/** Let the browser keep what is answered under this version; true when it has it already, and has been told so. */
+export function isFresh(req: Request, res: Response, version: string): boolean {
   res.set({ ETag: `"${version}"`, 'Cache-Control': KEEP });
   if (!req.fresh) return false;
   res.status(304).end();
@@ -64,7 +67,7 @@ async function isKept(req: Request, res: Response): Promise<boolean> {
 /** A header carries no other letters; units of a file may. */
 const printable = (text: string) => text.replace(/[^\x20-\x7e]/g, '?');
 
-function sendPlane(res: Response, plane: PlaneAnswer) {
+export function sendPlane(res: Response, plane: PlaneAnswer) {
   // every machine this runs on is little-endian, as the contract promises
   const { buffer, byteOffset, byteLength } = plane.values;
   res

@@ -1,5 +1,5 @@
 import { mkdir, rm, stat } from 'node:fs/promises';
-import { basename, extname, join } from 'node:path';
+import { join } from 'node:path';
 import type { UploadState } from '@/shared/contract/cubes';
 import { isProblem, Problem } from '@/shared/contract/problem';
 import type { CubeHead } from '@/shared/fits/cubeHead';
@@ -22,6 +22,7 @@ import { notFound } from './access';
 import { announce } from './announce';
 import type { Context, Parts } from './context';
 import { queueIngest } from './cubes';
+import { bareName, safeName } from './fileNames';
 import { regionFor } from './regions';
 
 /** Room that an upload must leave for the database and for what ingest writes. */
@@ -74,7 +75,7 @@ export async function beginUpload(
       id: draft.id,
       regionId: draft.regionId!,
       personId: ctx.actor.id,
-      fileName: safeName(draft.fileName),
+      fileName: safeName(draft.fileName, 'cube.fits'),
       sizeBytes: draft.size!,
     });
     await announce(trx, teamId, { subject: 'upload', id: draft.id, regionId: draft.regionId! });
@@ -82,12 +83,6 @@ export async function beginUpload(
 }
 
 const megabytes = (bytes: number) => `${(bytes / 1e6).toFixed(bytes < 1e7 ? 1 : 0)} MB`;
-
-/** A name to show, never a path: what the browser calls the file, without folders and control characters. */
-const safeName = (name: string | null | undefined) =>
-  basename((name ?? '').replaceAll('\\', '/'))
-    .replace(/[\u0000-\u001f\u007f]/g, '')
-    .slice(0, 200) || 'cube.fits';
 
 /** The person's own upload. A refused one answers with why it was refused. */
 export async function myUpload(ctx: Context, id: string): Promise<UploadRow> {
@@ -161,12 +156,6 @@ export async function finishUpload(parts: Parts, uploadId: string): Promise<stri
   }
 }
 
-/** The file's name without its endings: `field.fits.gz` is a cube called `field`. */
-function cubeName(fileName: string): string {
-  const bare = fileName.replace(/\.(gz|fz)$/i, '');
-  return basename(bare, extname(bare)) || fileName;
-}
-
 const fileKeyOf = (uploadId: string) => `cubes/${uploadId}.fits`;
 const sizeOf = async (path: string) => (await stat(path).catch(() => null))?.size ?? null;
 
@@ -193,7 +182,7 @@ async function recordCube(
       await insertCube(trx, {
         id,
         regionId: row.regionId,
-        name: cubeName(row.fileName),
+        name: bareName(row.fileName),
         fileName: row.fileName,
         fileKey: cube.fileKey,
         sizeBytes: row.sizeBytes,

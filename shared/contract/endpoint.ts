@@ -9,6 +9,8 @@ export interface Endpoint {
   open?: boolean;
   query?: z.ZodObject;
   body?: z.ZodType;
+  /** The body is a file as it is, of one of these media types. */
+  binaryBody?: readonly string[];
   /** Status and body of success; `binary` names a media type that is not JSON. */
   answer: { status: number; schema?: z.ZodType; binary?: string };
 }

@@ -4,9 +4,15 @@
  */
 import type { Endpoint } from './endpoint';
 import { CUBE_ENDPOINTS } from './endpointsCubes';
+import { IMAGE_ENDPOINTS } from './endpointsImages';
 import { SHELL_ENDPOINTS } from './endpointsShells';
 import { TEAM_ENDPOINTS } from './endpointsTeam';
 
 export type { Endpoint };
 
-export const ENDPOINTS: readonly Endpoint[] = [...TEAM_ENDPOINTS, ...CUBE_ENDPOINTS, ...SHELL_ENDPOINTS];
+export const ENDPOINTS: readonly Endpoint[] = [
+  ...TEAM_ENDPOINTS,
+  ...CUBE_ENDPOINTS,
+  ...IMAGE_ENDPOINTS,
+  ...SHELL_ENDPOINTS,
+];

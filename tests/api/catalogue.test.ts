@@ -10,7 +10,7 @@ import {
 import { marksOnRing } from './cubeFile';
 import { startProduct, type Product, type SignedIn } from './harness';
 
-type Fixture = Omit<Made, 'traceId'>;
+type Fixture = Omit<Made, 'traceId' | 'imageId'>;
 
 let product: Product;
 let lead: SignedIn;

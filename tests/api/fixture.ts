@@ -2,6 +2,7 @@
 import { randomUUID } from 'node:crypto';
 import { cubeFile, marksOnRing, noisyShell } from './cubeFile';
 import { until, type Product, type SignedIn } from './harness';
+import { imageFile } from './skyImageFile';
 import { upload } from './uploading';
 
 export interface Fixture {
@@ -11,6 +12,7 @@ export interface Fixture {
   readingId: string;
   fitId: string;
   traceId: string;
+  imageId: string;
 }
 
 export const MARKS = [10, 13, 16, 19, 22].flatMap((k) => marksOnRing(k));
@@ -35,6 +37,11 @@ export const newRegion = async (who: SignedIn, name = 'Trial field'): Promise<st
 
 export const newShell = async (who: SignedIn, regionId: string): Promise<string> =>
   (await who.post(`/regions/${regionId}/shells`, { name: 'Trial ring' }).expect(201)).body.id;
+
+/** An image whose bytes no region holds yet. */
+export const freshImage = () => imageFile({ OBJECT: `trial ${serial++}` });
+export const newImage = async (who: SignedIn, regionId: string): Promise<string> =>
+  (await who.post(`/regions/${regionId}/images`, freshImage()).expect(201)).body.id;
 
 export async function saveMarks(
   who: SignedIn,
@@ -76,7 +83,8 @@ export async function makeFixture(product: Product, who: SignedIn): Promise<Fixt
   const readingId = await saveMarks(who, shellId, cubeId);
   const fitId = await finishedFit(who, shellId, readingId);
   const traceId = await finishedTrace(who, shellId, fitId);
-  return { regionId, cubeId, shellId, readingId, fitId, traceId };
+  const imageId = await newImage(who, regionId);
+  return { regionId, cubeId, shellId, readingId, fitId, traceId, imageId };
 }
 
 /** Somebody who leads another team of the same installation. */

@@ -1,7 +1,16 @@
 /** Every route, asked by every role, by another team, by somebody in no team, and without sign-in. */
 import supertest from 'supertest';
 import { ENDPOINTS } from '@/shared/contract/endpoints';
-import { leadOfAnotherTeam, makeFixture, MARKS, newShell, readyCube, type Fixture } from './fixture';
+import {
+  freshImage,
+  leadOfAnotherTeam,
+  makeFixture,
+  MARKS,
+  newImage,
+  newShell,
+  readyCube,
+  type Fixture,
+} from './fixture';
 import { startProduct, type Product, type SignedIn } from './harness';
 
 type Who = 'lead' | 'analyst' | 'reviewer' | 'reader' | 'otherTeam' | 'stranger';
@@ -179,6 +188,36 @@ const CASES: Case[] = [
     route: 'get /cubes/:cubeId/spectrum',
     path: () => `/cubes/${f.cubeId}/spectrum?x=32&y=30&radius=2`,
     expected: READ,
+  },
+  { route: 'get /regions/:regionId/images', path: () => `/regions/${f.regionId}/images`, expected: READ },
+  {
+    route: 'post /regions/:regionId/images',
+    path: () => `/regions/${f.regionId}/images?fileName=trial.fits`,
+    body: () => freshImage(),
+    expected: [201, 201, 403, 403, 404, 403],
+  },
+  { route: 'get /images/:imageId', path: () => `/images/${f.imageId}`, expected: READ },
+  { route: 'get /images/:imageId/plane', path: () => `/images/${f.imageId}/plane?size=16`, expected: READ },
+  {
+    route: 'patch /images/:imageId',
+    path: () => `/images/${f.imageId}`,
+    body: () => ({ name: 'Renamed' }),
+    expected: WRITE,
+  },
+  {
+    route: 'delete /images/:imageId',
+    path: async () => `/images/${await newImage(lead(), f.regionId)}`,
+    expected: [204, 204, 403, 403, 404, 403],
+  },
+  {
+    route: 'post /images/:imageId/restore',
+    path: async () => {
+      const id = await newImage(lead(), f.regionId);
+      await lead().delete(`/images/${id}`).expect(204);
+      return `/images/${id}/restore`;
+    },
+    body: NONE,
+    expected: WRITE,
   },
   { route: 'get /regions/:regionId/shells', path: () => `/regions/${f.regionId}/shells`, expected: READ },
   {
