@@ -1,5 +1,6 @@
 import { API } from '@/hooks/api';
 import type { Cube } from '@/shared/contract/cubes';
+import type { SkyImage } from '@/shared/contract/images';
 
 /**
  * Address of one of a cube's pictures or planes. Browsers keep what they have of it for good; what is read again from
@@ -14,3 +15,7 @@ export const cubeImage = (
   const version = times.length > 0 ? `${path.includes('?') ? '&' : '?'}v=${Math.max(...times)}` : '';
   return `${API}/cubes/${cube.id}/${path}${version}`;
 };
+
+/** Address of the numbers of a companion image, at most `size` pixels on its longer side. Its bytes never change. */
+export const skyImagePlane = ({ id }: Pick<SkyImage, 'id'>, size: number): string =>
+  `${API}/images/${id}/plane?size=${size}`;

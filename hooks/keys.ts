@@ -9,6 +9,8 @@ export const keys = {
   uploads: (regionId: string) => `/regions/${regionId}/uploads`,
   cubes: (regionId: string) => `/regions/${regionId}/cubes`,
   cube: (id: string) => `/cubes/${id}`,
+  images: (regionId: string) => `/regions/${regionId}/images`,
+  image: (id: string) => `/images/${id}`,
   header: (cubeId: string) => `/cubes/${cubeId}/header`,
   channels: (cubeId: string) => `/cubes/${cubeId}/channels`,
   spectrum: (cubeId: string, query = '') => `/cubes/${cubeId}/spectrum${query && `?${query}`}`,

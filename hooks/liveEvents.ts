@@ -16,7 +16,7 @@ export function staleAfter(event: LiveEvent): Matcher {
   const shellKeys = [shellId && keys.shell(shellId), region && keys.shells(region)];
   switch (event.subject) {
     case 'region':
-      return exactly(keys.regions(), keys.region(event.id));
+      return exactly(keys.regions(), keys.region(event.id), keys.images(event.id));
     case 'upload':
       return exactly(...regionKeys, region && keys.uploads(region), region && keys.cubes(region));
     case 'cube':

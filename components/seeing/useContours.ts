@@ -4,6 +4,7 @@ import type { ContourChoice } from '@/components/seeing/seeing';
 import { useContourSource } from '@/components/seeing/useContourSource';
 import type { SeenSky } from '@/components/seeing/useSeenSky';
 import { contoursOf } from '@/shared/image/contours';
+import { linesAcross } from '@/shared/image/linesAcross';
 import { dequantise } from '@/shared/image/quantise';
 import { windowOf } from '@/shared/image/windowPresets';
 
@@ -36,23 +37,12 @@ export function useContours(choice: ContourChoice | null, seen: SeenSky): Contou
   const { sky, nx, ny } = seen;
   const lines = useMemo<Contours['lines']>(() => {
     if (!found || !from) return [];
-    const { block } = found;
     const jump = Math.max(nx, ny) / 4;
-    return found.contours.map(({ lines: all }, i) => {
-      const path = all.flatMap((line) => {
-        const pieces: { x: number; y: number }[][] = [[]];
-        for (const { x, y } of line) {
-          const at = from.pixelToGalactic(ofReduced(x, block), ofReduced(y, block));
-          const here = at && sky.galacticToPixel(at.l, at.b);
-          const piece = pieces[pieces.length - 1]!;
-          const before = piece[piece.length - 1];
-          if (!here || (before && Math.hypot(here.x - before.x, here.y - before.y) > jump)) pieces.push([]);
-          if (here) pieces[pieces.length - 1]!.push(here);
-        }
-        return pieces.filter((piece) => piece.length > 1);
-      });
-      return { path, strong: i % 2 === 1 };
-    });
+    const onPicture = ({ l, b }: { l: number; b: number }) => sky.galacticToPixel(l, b);
+    return found.contours.map(({ lines: all }, i) => ({
+      path: linesAcross(all, found.block, from, onPicture, jump),
+      strong: i % 2 === 1,
+    }));
   }, [found, from, sky, nx, ny]);
   return useMemo(() => {
     if (!choice) return NONE;
@@ -64,6 +54,3 @@ export function useContours(choice: ContourChoice | null, seen: SeenSky): Contou
     };
   }, [choice, lines, found, problem]);
 }
-
-/** Where a place in a plane reduced by block averages lies in the whole one; both count from 0 at pixel centres. */
-const ofReduced = (at: number, block: number) => block * (at + 0.5) - 0.5;

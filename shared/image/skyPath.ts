@@ -8,10 +8,14 @@ export type Project = (at: LonLat) => ImagePoint | null;
 export type Path = ImagePoint[][];
 
 /**
- * Draw a line on the sky in the image: a run of places becomes pieces, cut where the projection shows nothing and
+ * Draw a line on the sky (or of another image) in the image: a run of places becomes pieces, cut where the projection shows nothing and
  * where it jumps (the seam of an all-sky map): between neighbouring places further apart than `jump` pixels.
  */
-export function pathThrough(places: Iterable<LonLat>, project: Project, jump: number): Path {
+export function pathThrough<Place>(
+  places: Iterable<Place>,
+  project: (place: Place) => ImagePoint | null,
+  jump: number,
+): Path {
   const path: Path = [];
   let piece: ImagePoint[] = [];
   const close = () => {
