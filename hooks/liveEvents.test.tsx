@@ -24,6 +24,16 @@ test('a finished fit makes its shell, the lists and every view of the catalogue 
     expect([key, stale(key)]).toEqual([key, false]);
 });
 
+test('a changed region makes its companion images stale, and not its cubes', () => {
+  const stale = staleAfter(event({ subject: 'region', id: 'r' }));
+  expect([keys.region('r'), keys.images('r'), keys.images('q'), keys.cubes('r')].map(stale)).toEqual([
+    true,
+    true,
+    false,
+    false,
+  ]);
+});
+
 test('a saved reading does not make the reading itself stale: its writer holds the newest state', () => {
   const stale = staleAfter(event({ subject: 'reading', id: 'x', shellId: 's' }));
   expect(stale(keys.reading('s'))).toBe(false);

@@ -61,7 +61,8 @@ export function CompanionImages({
     }
   }
 
-  if (!may('cube.upload')) return null;
+  const mayAdd = may('cube.upload');
+  if (!mayAdd && !chosen) return null;
   return (
     <View style={{ gap: space(2) }}>
       {chosen && chosen.cautions.length > 0 && (
@@ -70,7 +71,9 @@ export function CompanionImages({
         </Text>
       )}
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space(2) }}>
-        <Button label="Add an image" icon="plus" busy={sent !== null} onPress={() => void addOne()} />
+        {mayAdd && (
+          <Button label="Add an image" icon="plus" busy={sent !== null} onPress={() => void addOne()} />
+        )}
         {chosen && may('cube.manage') && (
           <Button label="Take the image out" kind="quiet" onPress={() => void takeOut(chosen)} />
         )}
