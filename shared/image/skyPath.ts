@@ -36,7 +36,8 @@ export function pathThrough<Place>(
   return path;
 }
 
-const RING_POINTS = 144;
+/** So many that the chords stay within a twentieth of a pixel of a circle 5000 screen pixels in radius. */
+const RING_POINTS = 720;
 
 /**
  * A circle on the sky: every place at one great-circle distance from a centre. In the image it is round only as far

@@ -84,8 +84,8 @@ const centreOf = (
 
 const LOOKS: Looking[] = [
   { zoom: 1, x: 31.5, y: 29.5 },
-  { zoom: 2.5, x: 34, y: 31 },
-  { zoom: 4.5, x: 41.2, y: 38.4 },
+  { zoom: 2.5, x: 44, y: 42 },
+  { zoom: 4, x: 45.2, y: 42.4 },
 ];
 const params = ({ zoom, x, y }: Looking) => (zoom === 1 ? '' : `&zoom=${zoom}&x=${x}&y=${y}`);
 
@@ -139,8 +139,9 @@ test.each(LOOKS)(
     await page.getByTestId('handle-crown').waitFor();
     const { at, scale } = await placed(page, look);
     const canvas = (await page.getByTestId('map').boundingBox())!;
-    let seen = 0;
-    for (let angle = 1.25; angle < 360; angle += 7.5) {
+    const off: number[] = [];
+    // between the places that the line was drawn through, where it is furthest from the circle
+    for (let angle = 0.25; angle < 360; angle += 2.5) {
       const place = destination({ lon: value('l'), lat: value('b') }, angle, radius);
       const out = destination({ lon: value('l'), lat: value('b') }, angle, radius * 1.01);
       const [here, beyond] = [place, out].map(({ lon, lat }) => at(wcs.galacticToPixel(lon, lat)!));
@@ -158,7 +159,10 @@ test.each(LOOKS)(
       expect(Math.abs(across + bend)).toBeLessThan(0.1);
       seen++;
     }
-    expect(seen).toBeGreaterThan(3);
+    // labels and arrows are drawn over the line and cut a few of the looked-at pieces off on one side
+    off.sort((a, b) => a - b);
+    expect(off.length).toBeGreaterThan(6);
+    expect(off[Math.floor(0.8 * off.length)]).toBeLessThan(0.1);
     await context.close();
   },
 );
