@@ -29,6 +29,9 @@ export const scrubWatch = `{
   const rest = (ms) => new Promise((resolve) => setTimeout(resolve, ms));
   globalThis.scrubWatch = {
     paints,
+    async untilFull() {
+      while (!paints.some((p) => p.block === 1)) await rest(20);
+    },
     async scrub(channels, rate) {
       turns = [];
       const first = paints.length;

@@ -151,7 +151,7 @@ async function withPage(
 /** Milliseconds from navigation to the first picture, a thumbnail too, and to the plane in full. */
 async function open(page: Page, url: string): Promise<{ first: number; full: number }> {
   await page.goto(url, { waitUntil: 'commit' });
-  await page.waitForFunction(`scrubWatch.paints.some((p) => p.block === 1)`, null, { polling: 50 });
+  await page.evaluate(`scrubWatch.untilFull()`);
   return (await page.evaluate(
     `({ first: scrubWatch.paints[0].at, full: scrubWatch.paints.find((p) => p.block === 1).at })`,
   )) as { first: number; full: number };
