@@ -49,7 +49,9 @@ export function ProfilePanel({ fit }: { fit: DoneFit }) {
 function Curve({ profile, width, fitted }: { profile: Profile; width: number; fitted: number | undefined }) {
   const { color } = useTheme();
   const { parameter, values, deltaChi2 } = profile;
-  const [low, high] = [Math.min(...values), Math.max(...values)];
+  // a steep curve fills the frame too: only what lies below the top is framed
+  const framed = values.filter((_, i) => deltaChi2[i]! <= TOP);
+  const [low, high] = [Math.min(...framed), Math.max(...framed)];
   const right = width - MARGIN.right;
   const floor = HEIGHT - MARGIN.bottom;
   const x = (v: number) => MARGIN.left + ((v - low) / (high - low || 1)) * (right - MARGIN.left);

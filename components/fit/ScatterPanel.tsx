@@ -15,7 +15,7 @@ export function ScatterPanel({ fit }: { fit: DoneFit }) {
   const stated = frozen?.marks.some((m) => m.sigma !== null) ?? true;
   return (
     <Panel title="What the error bars are made of">
-      {scatterSources(scales, sigmaUsedDeg, stated).map((source) => (
+      {scatterSources(scales, sigmaUsedDeg, stated, fit.traceId !== null).map((source) => (
         <View key={source.key} style={{ gap: space(0.5) }}>
           <Text weight="semibold">{source.title}</Text>
           <Text>{source.sentence}</Text>

@@ -37,13 +37,9 @@ export const methodsText = ({ paragraph, references }: Methods): string =>
 
 function data(fit: DoneFit, name: string): string {
   const marks = count(fit.provenance.marks, fit.traceId ? 'point' : 'mark');
-  const channels = count(
-    channelsOf(fit),
-    fit.traceId ? 'block of channels' : 'velocity channel',
-    fit.traceId ? 'blocks of channels' : undefined,
-  );
+  const channels = count(channelsOf(fit), 'velocity channel');
   return fit.traceId
-    ? `The rim of ${name} was traced from the brightness by sectors of azimuth, which gave ${marks} in ${channels}.`
+    ? `The rim of ${name} was traced from the brightness by sectors of azimuth, which gave ${marks} in ${channels} (neighbouring ones share errors).`
     : `The rim of ${name} was marked by eye at ${count(fit.provenance.marks, 'point')} in ${channels}.`;
 }
 

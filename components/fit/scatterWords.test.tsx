@@ -28,3 +28,11 @@ test('marks without an error of their own are not told that they stated one', ()
   expect(all).toContain('no error of their own');
   expect(all).not.toContain('stated');
 });
+
+test('a traced rim is nobody’s marks', () => {
+  const all = scatterSources({ ...scales, mark: 0.01 }, 0.03, true, true)
+    .map((x) => x.sentence)
+    .join(' ');
+  expect(all).toContain('Traced rings differ in radius by 0.8 of the error of a traced point');
+  expect(all).not.toMatch(/your|stated|surer/i);
+});

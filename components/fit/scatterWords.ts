@@ -19,13 +19,17 @@ const NOTHING = 0.05;
  *               the estimated variance is
  * @param sigmaDeg the median error of a mark, degrees
  * @param stated false where the marks carried none, and it was taken from their scatter
+ * @param traced the marks are a traced rim, whose errors nobody stated
  */
 export function scatterSources(
   scales: NonNullable<FitExtra['scales']>,
   sigmaDeg: number,
   stated: boolean,
+  traced = false,
 ): ScatterSource[] {
-  const error = stated ? 'your stated error' : 'the error of a mark';
+  const error = traced ? 'the error of a traced point' : stated ? 'your stated error' : 'the error of a mark';
+  const rings = traced ? 'Traced rings' : 'Your rings';
+  const ofRings = traced ? 'traced rings' : 'your rings';
   const size = `${plainNumber(sigmaDeg, 2)}°`;
   const mark = Math.sqrt(Math.max(scales.mark, 0));
   const spread = Math.sqrt(Math.max(scales.spread, 0));
@@ -37,7 +41,7 @@ export function scatterSources(
       title: 'Single marks',
       ratio: stated ? mark : 1,
       sentence: stated
-        ? `Marks scatter about their own ring by ${times(mark)} ${error} of ${size}${judged(mark)}.`
+        ? `${traced ? 'Points' : 'Marks'} scatter about their own ring by ${times(mark)} ${error} of ${size}${traced ? '' : judged(mark)}.`
         : `The marks carry no error of their own. From their scatter about their rings it is ${size}.`,
     },
     {
@@ -55,8 +59,8 @@ export function scatterSources(
       ratio: ring > NOTHING ? ring : null,
       sentence:
         ring > NOTHING
-          ? `Your rings differ in radius by ${ratio(ring)} of ${error}. This is part of the error bars.`
-          : `Your rings agree in radius: no more difference is seen than single marks make.`,
+          ? `${rings} differ in radius by ${ratio(ring)} of ${error}. This is part of the error bars.`
+          : `${rings} agree in radius: no more difference is seen than single marks make.`,
     },
     {
       key: 'shift',
@@ -64,8 +68,8 @@ export function scatterSources(
       ratio: shift > NOTHING ? shift : null,
       sentence:
         shift > NOTHING
-          ? `The centres of your rings lie off by ${ratio(shift)} of ${error}. This is part of the error bars.`
-          : 'Your rings share one centre: no more shift is seen than single marks make.',
+          ? `The centres of ${ofRings} lie off by ${ratio(shift)} of ${error}. This is part of the error bars.`
+          : `${rings} share one centre: no more shift is seen than single marks make.`,
     },
   ];
 }
