@@ -22,7 +22,9 @@ test('a ring is cut where nothing is shown and where the map jumps', () => {
   const seen: Project = (p) => (p.lat > 4 ? null : project(p));
   const cut = ringPath({ lon: 3, lat: 4 }, 2.5, seen, 100);
   expect(cut.flat().every(({ y }) => y <= 140)).toBe(true);
-  expect(cut.flat().length).toBeLessThan(80);
+  expect(cut.flat().length).toBeLessThan(
+    0.55 * ringPath({ lon: 3, lat: 4 }, 2.5, project, 100).flat().length,
+  );
   const seam = ringPath({ lon: 180, lat: 0 }, 5, project, 1000);
   expect(seam.length).toBeGreaterThan(1);
 });
@@ -35,7 +37,7 @@ test('lines of round coordinates across longitude 0, with labels at the edges', 
   const lats = lines.filter((l) => l.axis === 'lat');
   expect(lats.map((l) => l.label)).toEqual(['−10°', '−5°', '0°', '5°', '10°']);
   expect(lats[2]!.labelAt).toEqual({ sx: 0, sy: 201 });
-  const zero = lines.find((l) => l.label === '0' && l.axis === 'lon')!;
+  const zero = lines.find((l) => l.label === '0°' && l.axis === 'lon')!;
   expect(zero.labelAt!.sx).toBeCloseTo(201, 6);
   expect(zero.labelAt!.sy).toBeCloseTo(402, 6);
 });
