@@ -117,7 +117,10 @@ const shareOf = (axis: Axis, value: number) => (value - axis.low) / (axis.high -
 
 function ticksOf(axis: Axis, side: number): { label: string; share: number }[] {
   const { values, decimals } = niceTicks(axis.low, axis.high, Math.max(side / 48, 1.6));
-  return values.map((v) => ({ label: labelOf(v, decimals), share: shareOf(axis, v) }));
+  const all = values.map((v) => ({ label: labelOf(v, decimals), share: shareOf(axis, v) }));
+  // at an edge the label would run into that of the next panel
+  const inside = all.filter((tick) => tick.share > 0.14 && tick.share < 0.86);
+  return inside.length > 0 ? inside : all.slice(0, 1);
 }
 
 function Marginal({ axis, side }: { axis: Axis; side: number }) {
