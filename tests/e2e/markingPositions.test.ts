@@ -156,8 +156,7 @@ test.each(LOOKS)(
       const across = (dx * (beyond!.sx - sx) + dy * (beyond!.sy - sy)) / length;
       expect(weight).toBeGreaterThan(500);
       const bend = REACH ** 2 / (6 * (radius / PIXEL) * scale); // how far the arc in the window lies inside of its tangent
-      expect(Math.abs(across + bend)).toBeLessThan(0.1);
-      seen++;
+      off.push(Math.abs(across + bend));
     }
     // labels and arrows are drawn over the line and cut a few of the looked-at pieces off on one side
     off.sort((a, b) => a - b);
