@@ -1,4 +1,4 @@
-import { plainNumber } from '@/shared/physics/quantity';
+import { decimals } from '../ui/format';
 import { ParameterName } from '../ui/Quantity';
 import { Table, type Column } from '../ui/Table';
 import { Text } from '../ui/Text';
@@ -41,7 +41,7 @@ export function PercentileTable({ columns }: { columns: readonly DrawColumn[] })
         const value = percentile(c.values, share);
         return (
           <Text mono size={value === null ? 'small' : 'body'} tone={value === null ? 'person' : 'text'}>
-            {value === null ? 'no bound' : plainNumber(value, 5)}
+            {value === null ? 'no bound' : decimals(value, placesOf(c))}
           </Text>
         );
       },
@@ -50,4 +50,11 @@ export function PercentileTable({ columns }: { columns: readonly DrawColumn[] })
   return (
     <Table dense label="Percentiles of the draws" columns={heads} rows={columns} rowKey={(c) => c.name} />
   );
+}
+
+/** Decimals that show two digits of half the central 68 %. */
+function placesOf({ values }: DrawColumn): number {
+  const [low, high] = [percentile(values, 0.1587), percentile(values, 0.8413)];
+  const half = low === null || high === null ? 0 : (high - low) / 2;
+  return half > 0 ? Math.min(Math.max(1 - Math.floor(Math.log10(half)), 0), 8) : 4;
 }
