@@ -24,8 +24,8 @@ export function placeCard(
   const right = target.left + target.width + GAP;
   const before = target.left - card.width - GAP;
   if (below + card.height + GAP <= page.height) return { left, top: below };
-  if (above >= GAP) return { left, top: above };
+  if (above >= GAP && above + card.height + GAP <= page.height) return { left, top: above };
   if (right + card.width + GAP <= page.width) return { left: right, top };
-  if (before >= GAP) return { left: before, top };
+  if (before >= GAP && before + card.width + GAP <= page.width) return { left: before, top };
   return { left, top: within(below, card.height, page.height) };
 }
