@@ -24,7 +24,7 @@ export function MarkNext() {
         </Text>
         <Button
           label="Show it"
-          aria-label={`Show channel ${best.channel + 1}, where marks would help most`}
+          aria-label={`Show it: channel ${best.channel + 1}, where marks would help most`}
           disabled={best.channel === channel}
           onPress={() => showChannel(best.channel)}
         />

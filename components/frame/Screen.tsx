@@ -113,7 +113,6 @@ function SkipLink({ main }: { main: RefObject<View | null> }) {
   const { color } = useTheme();
   return (
     <Press
-      role="link"
       onPress={() => (main.current as unknown as HTMLElement | null)?.focus({ preventScroll: true })}
       style={({ focused }: PressState) => ({
         position: 'absolute',

@@ -39,7 +39,7 @@ export function RegionList() {
     <Screen
       title="Regions"
       subtitle={items && items.length > 0 ? count(items.length, 'region') : undefined}
-      actions={items && items.length > 0 ? make : undefined}
+      actions={items?.length !== 0 && make}
     >
       <RecordGate
         read={regions}

@@ -70,7 +70,7 @@ test('the first Tab stop skips to the content; focus is seen; Escape closes the 
     while (!['Skip to the content', ''].includes(await focused(page))) await page.keyboard.press('Shift+Tab');
   }
   expect(await focused(page)).toBe('Skip to the content');
-  const link = page.getByRole('link', { name: 'Skip to the content' });
+  const link = page.getByRole('button', { name: 'Skip to the content' });
   expect((await link.boundingBox())!.y).toBeGreaterThanOrEqual(0);
   const outline = await page.evaluate('getComputedStyle(document.activeElement).outlineStyle');
   expect(outline).toBe('solid');
