@@ -1,4 +1,5 @@
-import { useMemo, useState } from 'react';
+import { useLocalSearchParams } from 'expo-router';
+import { useMemo, useRef, useState } from 'react';
 import { View } from 'react-native';
 import { CubeState } from '@/components/cube/CubeState';
 import { PhoneCube } from '@/components/cube/PhoneCube';
@@ -19,6 +20,7 @@ import { space } from '@/components/ui/tokens';
 import { useWide } from '@/components/ui/useWide';
 import { useCube } from '@/hooks/useCubes';
 import { useRegion } from '@/hooks/useRegions';
+import { useShells } from '@/hooks/useShells';
 import type { Cube, CubeAxes } from '@/shared/contract/cubes';
 import { buildWcs, type Wcs } from '@/shared/sky/wcs';
 import type { WcsSpec } from '@/shared/sky/wcsSpec';
@@ -31,7 +33,13 @@ export function CubeScreen({ cubeId }: { cubeId: string }) {
     () => (cube?.status === 'ready' && cube.axes ? build(cube.axes) : null),
     [cube?.status, cube?.axes],
   );
-  if (cube && built?.wcs && cube.axes) return <Instrument cube={cube} axes={cube.axes} wcs={built.wcs} />;
+  // with a shell in the address its name, tools and reading belong to the first picture: nothing moves when it comes
+  const { shell } = useLocalSearchParams<{ shell?: string }>();
+  const shells = useShells(shell && cube ? cube.regionId : null);
+  const known = useRef(false);
+  known.current ||= !shell || shells.data !== undefined || shells.problem !== null;
+  if (cube && built?.wcs && cube.axes && known.current)
+    return <Instrument cube={cube} axes={cube.axes} wcs={built.wcs} />;
   return (
     <Framed cube={cube}>
       <RecordGate
@@ -40,7 +48,15 @@ export function CubeScreen({ cubeId }: { cubeId: string }) {
         home={{ href: '/regions', label: 'To the regions' }}
         skeleton={<Waiting />}
       >
-        {(found) => (built?.problem ? <ProblemNotice problem={built.problem} /> : <CubeState cube={found} />)}
+        {(found) =>
+          built?.problem ? (
+            <ProblemNotice problem={built.problem} />
+          ) : built ? (
+            <Waiting />
+          ) : (
+            <CubeState cube={found} />
+          )
+        }
       </RecordGate>
     </Framed>
   );

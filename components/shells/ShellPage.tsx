@@ -81,7 +81,8 @@ function Content({ shell }: { shell: Shell }) {
   );
   const summary =
     fits.data === undefined ? (
-      !fits.problem && <SkeletonRows rows={3} height={120} />
+      // what is below it must not be in sight before it is there
+      !fits.problem && <SkeletonRows rows={3} height={wide ? 120 : 280} />
     ) : shown ? (
       <View style={{ gap: space(4) }}>
         {shown.id !== shell.adoptedFitId && (
