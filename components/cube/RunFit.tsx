@@ -25,7 +25,7 @@ export function RunFit({ record }: { record: RecordFit }) {
           disabled={record.obstacle !== null}
           busy={record.busy}
           onPress={() => void record.run()}
-          style={{ flexGrow: 1 }}
+          style={{ flexGrow: 1, flexShrink: 1 }}
         />
         <Button
           label="Options…"
