@@ -195,7 +195,10 @@ test('the other models give their shells back from marks without noise', () => {
   expect(ellipse.positionAngle!.value).toBeCloseTo(angle, 6);
 
   const held = fitShell({ ...sphere, vSys: { value: 10 } }, { model: 'cap' });
-  expect(held.parameters.vSys).toEqual({ value: 10, se: 0, lo: 10, hi: 10, unit: 'km/s' });
+  expect(held.parameters.vSys).toEqual({
+    ...{ value: 10, se: 0, lo: 10, hi: 10, unit: 'km/s' },
+    constraint: { fixed: 10 },
+  });
   expect(held.parameters.vExp!.value).toBeCloseTo(20, 7);
   expect(held.dof).toBe(sphere.marks.length - 4);
 });
