@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { View } from 'react-native';
 import { ConflictNotice } from '@/components/cube/ConflictNotice';
 import { GhostList } from '@/components/cube/GhostList';
@@ -19,9 +19,13 @@ import { Tools } from '@/components/cube/Tools';
 import type { RecordFit } from '@/components/cube/useRecordFit';
 import { Slices } from '@/components/slices/Slices';
 import { Sheet } from '@/components/ui/Sheet';
+import { SkeletonRows } from '@/components/ui/Skeleton';
 import { Text } from '@/components/ui/Text';
 import { layout, space } from '@/components/ui/tokens';
 import { useWide } from '@/components/ui/useWide';
+
+/** Longest that the lists wait for rings: marks off the sky never get any. */
+const LATE_MS = 2000;
 
 /** The map fills the width, the strip lies under the thumb, a sheet holds marks, fit and results. */
 export function PhoneCube({
@@ -31,7 +35,20 @@ export function PhoneCube({
   record: RecordFit;
   look: { open: boolean; toggle: () => void };
 }) {
-  const { shell, hasReading, modelSource } = useSession();
+  const { shell, hasReading, modelSource, reading, marks, live } = useSession();
+  // the marks of the first picture come together with their rings, so that the lists do not grow under the thumb
+  const settled = useRef(false);
+  const [late, setLate] = useState(false);
+  useEffect(() => {
+    const timer = setTimeout(() => setLate(true), LATE_MS);
+    return () => clearTimeout(timer);
+  }, []);
+  const { state, problem } = reading;
+  settled.current ||=
+    late ||
+    !hasReading ||
+    problem !== null ||
+    (state.ready && (marks.length === 0 || live.readings.length > 0));
   const { width, height } = useWide();
   const [tab, setTab] = useState('marks');
   const lying = width > height; // a phone on its side: the sheet goes beside the map
@@ -83,11 +100,17 @@ export function PhoneCube({
           content: (
             <>
               {notices}
-              {hasReading && <ReadingTable />}
-              {hasReading && <MarkDetails />}
-              {hasReading && <MarkList />}
-              {hasReading && <GhostList />}
-              <ShellChooser />
+              {settled.current ? (
+                <>
+                  {hasReading && <ReadingTable />}
+                  {hasReading && <MarkDetails />}
+                  {hasReading && <MarkList />}
+                  {hasReading && <GhostList />}
+                  <ShellChooser />
+                </>
+              ) : (
+                <SkeletonRows rows={5} label="Loading your marks" />
+              )}
             </>
           ),
         },
