@@ -91,6 +91,7 @@ function Framed({
     <Screen
       full
       title={title ?? name}
+      pageTitle={title && title !== name ? `${title} on ${name}` : name}
       subtitle={subtitle}
       back={home}
       aside={aside}

@@ -16,6 +16,8 @@ import { TopBar, type Crumb } from './TopBar';
 export interface ScreenProps {
   /** Heading of the screen and, with the product's name, title of the document. */
   title: string;
+  /** Title of the document where the heading alone would be that of another screen too. */
+  pageTitle?: string;
   subtitle?: string;
   /** Where one is, for the wide window; by default the title alone. */
   crumbs?: readonly Crumb[];
@@ -35,6 +37,7 @@ export interface ScreenProps {
 /** A screen in its frame: head, main landmark, the phone's tabs. */
 export function Screen({
   title,
+  pageTitle = title,
   subtitle,
   crumbs,
   back,
@@ -49,7 +52,7 @@ export function Screen({
   const inbox = useInboxCount();
   const connected = useConnected();
   const main = useRef<View>(null);
-  useDocumentTitle(title);
+  useDocumentTitle(pageTitle);
   useEffect(() => {
     // after a change of screen the focus would be lost: the next Tab begins in the new content
     if (Platform.OS !== 'web' || document.activeElement !== document.body) return;
