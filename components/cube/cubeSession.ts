@@ -11,6 +11,7 @@ import type { MapStore } from '@/components/map/mapStore';
 import type { Scene } from '@/components/map/scene';
 import type { ToolScene } from '@/components/map/toolScene';
 import type { Contours } from '@/components/seeing/useContours';
+import type { Layers } from '@/components/seeing/useLayers';
 import type { Film } from '@/components/seeing/useFilm';
 import type { Coordinates } from '@/components/seeing/useCoordinates';
 import type { SeenPicture } from '@/components/seeing/useSeenPicture';
@@ -40,6 +41,7 @@ export interface CubeSession extends ShownModel, SeenPicture, Marking, Suggestio
   unit: string | null;
   coordinates: Coordinates;
   contours: Contours;
+  layers: Layers;
   film: Film;
   store: MapStore;
   scene: Scene;

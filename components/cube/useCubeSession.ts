@@ -13,6 +13,7 @@ import { useWhereNext } from '@/components/cube/useWhereNext';
 import { useScene, type SceneModel } from '@/components/cube/useScene';
 import { useView } from '@/components/cube/useView';
 import { useContours } from '@/components/seeing/useContours';
+import { useLayers } from '@/components/seeing/useLayers';
 import { useFilm } from '@/components/seeing/useFilm';
 import { useCoordinates } from '@/components/seeing/useCoordinates';
 import { useSeenPicture } from '@/components/seeing/useSeenPicture';
@@ -26,9 +27,12 @@ import { useReading } from '@/hooks/reading/useReading';
 import { useMay, useMe } from '@/hooks/useMe';
 import { useShells } from '@/hooks/useShells';
 import type { Cube, CubeAxes } from '@/shared/contract/cubes';
+import type { Shell } from '@/shared/contract/shells';
 import { clamped, type ImagePoint, type Viewport } from '@/shared/image/viewport';
 import { modelRadius } from '@/shared/shell/channelCurve';
 import type { Wcs } from '@/shared/sky/wcs';
+
+const NO_SHELLS: readonly Shell[] = [];
 
 export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: CubePlace): CubeSession {
   const { data: me } = useMe();
@@ -130,6 +134,19 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
       ),
     [ghosts, addMarks],
   );
+  const layers = useLayers({
+    cubeId: cube.id,
+    shell,
+    shells: shells.data?.items ?? NO_SHELLS,
+    seen,
+    channel,
+    velocity: wcs.velocityOf(channel),
+    channelWidth: axes.spectral.channelWidth,
+    allChannels: onMap,
+    mayMark,
+    readingId: state.readingId,
+    choice: seeing,
+  });
   const scene = useScene({
     seen,
     frame: axes.frame,
@@ -147,6 +164,7 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     notation: coordinates.notation,
     distancePc: shell?.adopted?.distance?.pc ?? null,
     contours: contours.lines,
+    layers: layers.drawn,
   });
   const marksByChannel = useMemo(() => {
     const counts = new Map<number, number>();
@@ -232,6 +250,7 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     unit: unitOf(view, axes.unit),
     coordinates,
     contours,
+    layers,
     film,
     ...seenPicture,
     store,

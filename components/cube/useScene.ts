@@ -45,13 +45,14 @@ export interface SceneInput {
   /** Of the shell, for the scale bar; null: not known. */
   distancePc: number | null;
   contours?: Scene['contours'];
+  layers?: Scene['layers'];
 }
 
 /** What lies over the map, in image pixels; every ring is a circle on the sky, drawn where the projection puts it. */
 export function useScene(input: SceneInput): Scene {
   const { seen, order, channel, channelWidth, marks, selected, readings, model, beam, grid, notation } =
     input;
-  const { allChannels, frame, distancePc, contours, velocityOf } = input;
+  const { allChannels, frame, distancePc, contours, layers, velocityOf } = input;
   const { sky, nx, ny, lie, reach, fromImage } = seen;
   const jump = Math.max(nx, ny) / 2;
   const galactic = useMemo<Project>(
@@ -126,8 +127,9 @@ export function useScene(input: SceneInput): Scene {
       beam: outline,
       furniture,
       contours,
+      layers,
     }),
-    [lines, sceneMarks, modelRing, ownRing, centre, outline, furniture, contours],
+    [lines, sceneMarks, modelRing, ownRing, centre, outline, furniture, contours, layers],
   );
 }
 

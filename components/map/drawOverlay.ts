@@ -1,4 +1,5 @@
 import type { Scene, SceneColours, SceneMark } from '@/components/map/scene';
+import { drawLayers } from '@/components/map/drawLayers';
 import { drawFurniture } from '@/components/map/drawFurniture';
 import { disc, stroke, twice } from '@/components/map/strokes';
 import type { GraticuleLine } from '@/shared/image/graticule';
@@ -27,6 +28,7 @@ export function drawOverlay(
   ctx.restore();
   for (const line of scene.contours ?? [])
     stroke(ctx, line.path, v, colours.text, line.strong ? 1.6 : 1, 0.75);
+  if (scene.layers) drawLayers(ctx, scene.layers, v, colours);
   if (scene.ownRing) {
     ctx.setLineDash([5, 4]);
     edged(ctx, scene.ownRing, v, colours.person, 1.5, colours.edge);

@@ -1,5 +1,6 @@
 import { useSession } from '@/components/cube/session';
 import { frameWords } from '@/components/cube/words';
+import { LayerSection } from '@/components/seeing/LayerSection';
 import { ContourSection } from '@/components/seeing/ContourSection';
 import { SegmentedChoice } from '@/components/ui/SegmentedChoice';
 
@@ -29,6 +30,7 @@ export function LinesSection() {
         ]}
         onChange={setNotation}
       />
+      <LayerSection />
       <ContourSection />
     </>
   );

@@ -8,7 +8,7 @@ import { modelRadius, type RingParameters } from '@/shared/shell/channelCurve';
 import type { Wcs } from '@/shared/sky/wcs';
 
 export interface RecipeInput {
-  seeing: Omit<Seeing, 'second' | 'contours' | 'slice'>;
+  seeing: Omit<Seeing, 'second' | 'contours' | 'slice' | 'layers' | 'marksOf'>;
   seen: SeenSky;
   channel: number;
   /** The picture is a map of all channels. */

@@ -12,6 +12,8 @@ test('an address brings back what is seen', () => {
     second: 'velocity',
     slice: { kind: 'ring', l: 12, b: 3, radius: 1.25 },
     contours: { of: '0b6ffd5e-6a35-4a0e-9f3b-0c5f1a2b3c4d', kind: 'total', count: 5, ends: [-2.5, 40] },
+    layers: ['traced', 'shells'],
+    marksOf: '1c6ffd5e-6a35-4a0e-9f3b-0c5f1a2b3c4d',
   };
   expect(seeingOf(paramsOfSeeing(seen))).toEqual(seen);
   expect(seeingOf(paramsOfSeeing({ ...AS_IS, other: 'model' }))).toEqual({ ...AS_IS, other: 'model' });
@@ -25,6 +27,7 @@ test('what makes no sense is left out', () => {
   );
   expect(seeingOf({ view: 'polar', about: '10,95,3' })).toEqual(AS_IS);
   expect(seeingOf({ contours: 'not-an-id,total,5', second: 'all' })).toEqual(AS_IS);
+  expect(seeingOf({ layers: 'all', marksof: 'x' })).toEqual(AS_IS);
   expect(seeingOf({ mean: '4' }).mean).toBe(5); // an odd number has a middle
   expect(seeingOf({ minus: '1', other: 'model' }).minus).toBe(false);
 });

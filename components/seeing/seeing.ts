@@ -27,7 +27,15 @@ export interface Seeing {
   contours: ContourChoice | null;
   /** What is cut through velocity. */
   slice: Slice | null;
+  /** What else lies over the map. */
+  layers: readonly LayerName[];
+  /** The fit whose frozen marks are shown. */
+  marksOf: string | null;
 }
+
+/** Layers that are shown or not: the rim traced from the brightness, the rings of the region's other shells. */
+export const LAYERS = ['traced', 'shells'] as const;
+export type LayerName = (typeof LAYERS)[number];
 
 export type ContourKind = MapKind | 'image';
 export interface ContourChoice {
@@ -53,10 +61,14 @@ export const AS_IS: Seeing = {
   second: null,
   contours: null,
   slice: null,
+  layers: [],
+  marksOf: null,
 };
 
 /** Most channels that are averaged. */
 export const MOST_MEAN = 25;
+
+const UUID = /^[0-9a-f-]{36}$/i;
 
 type Params = Record<string, string | string[] | undefined>;
 
@@ -94,6 +106,8 @@ export function seeingOf(params: Params): Seeing {
     second: (['other', ...MAPS] as const).find((m) => m === text('second')) ?? null,
     contours: contoursOfText(text('contours')),
     slice: sliceOfText(text('cut')),
+    layers: LAYERS.filter((name) => text('layers')?.split(',').includes(name)),
+    marksOf: UUID.test(text('marksof') ?? '') ? text('marksof') : null,
   };
 }
 
@@ -101,7 +115,7 @@ function contoursOfText(text: string | null): ContourChoice | null {
   const [of, kindName, countText, lowText, highText] = (text ?? '').split(',');
   const kind = ([...MAPS, 'image'] as const).find((m) => m === kindName);
   const count = Number(countText);
-  if (!of || !/^[0-9a-f-]{36}$/i.test(of) || !kind || !(count >= 1 && count <= MOST_LEVELS)) return null;
+  if (!of || !UUID.test(of) || !kind || !(count >= 1 && count <= MOST_LEVELS)) return null;
   const [low, high] = [Number(lowText), Number(highText)];
   return {
     of,
@@ -128,6 +142,8 @@ export function paramsOfSeeing(s: Seeing): Record<string, string | undefined> {
         ? [short(about.lon, 7), short(about.lat, 7), short(about.reach, 4)].join(',')
         : undefined,
     cut: sliceText(s.slice),
+    layers: s.layers.length > 0 ? s.layers.join(',') : undefined,
+    marksof: s.marksOf ?? undefined,
     second: s.second ?? undefined,
     contours: contours
       ? [
