@@ -24,7 +24,7 @@ import { breakpoints, hairline, space } from '@/components/ui/tokens';
 import { useWide } from '@/components/ui/useWide';
 
 /** Side columns: comfortable from 1180 px on, narrow below, so that the map keeps the middle. */
-const COLUMNS = { from: 1180, roomy: 1380, full: 1800, wide: [272, 348], narrow: [224, 276] } as const;
+const COLUMNS = { from: 1180, roomy: 1560, full: 1800, wide: [272, 348], narrow: [224, 276] } as const;
 
 /** Three columns: shells and reading; map over strip; diagram, parameters and results. */
 export function WideCube({

@@ -26,7 +26,8 @@ export function useLiveFit(
   start: RingParameters | null = null,
 ): LiveFit {
   // The map follows the finger first; the fit follows when there is time.
-  const deferred = useDeferredValue(marks);
+  const later = useDeferredValue(marks);
+  const deferred = later.length === 0 ? marks : later; // the first marks, of a reading just loaded, at once
   return useMemo(() => {
     const onSky = skyMarks(deferred, wcs);
     const readings = readingByChannel(onSky);
