@@ -102,7 +102,7 @@ export const parts = {
     ]),
   e2e: async (place) => {
     await ensureClient(place.root, place.say);
-    // One file at a time: these measure times, and each drives a browser, a server and a worker.
-    return jest(place, 'e2e', ['--selectProjects', 'e2e', '--runInBand']);
+    // Two files at a time: each drives a browser, a server and a worker, and waits for the most part.
+    return jest(place, 'e2e', ['--selectProjects', 'e2e']);
   },
 };

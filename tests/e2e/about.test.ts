@@ -111,6 +111,8 @@ describe.each([PHONE, WIDE])('on a $name screen', (screen: Screen) => {
     const box = (await map.boundingBox())!;
     await page.mouse.click(box.x + box.width / 2, box.y + box.height * 0.7);
     await page.keyboard.press('w');
+    const part = (name: string) => page.getByRole('radio', { name, exact: true }).click();
+    await part('View');
     for (const name of ['Peak', 'Velocity', 'Dispersion']) {
       const before = await mapsPainted(page);
       await page.getByRole('radio', { name }).click();
@@ -118,6 +120,7 @@ describe.each([PHONE, WIDE])('on a $name screen', (screen: Screen) => {
       await paintedAfter(page, before);
     }
     await page.getByRole('radio', { name: 'Velocity' }).click();
+    await part('Colour');
     expect(await page.getByRole('radio', { name: 'Parting' }).getAttribute('aria-checked')).toBe('true');
     await shot(page, screen, 'velocity-map');
     expect(await violations(page)).toEqual([]);
