@@ -6,8 +6,8 @@ import { fillFrom } from './pixelFile';
 import { readPlanes } from './planes';
 
 /** Reads under way at a time, and the most bytes in one: neighbouring tiles come together. */
-const AT_ONCE = 8;
-const MOST_BYTES = 4 * 2 ** 20;
+const AT_ONCE = 4;
+const MOST_BYTES = 2 ** 20;
 
 /** Called with each wanted pixel and its spectrum, in any order; the array is used again for the next. */
 export type SpectrumVisitor = (pixel: number, spectrum: Float64Array) => void;

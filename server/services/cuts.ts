@@ -5,6 +5,7 @@ import { buildWcs, type PixelPoint } from '@/shared/sky/wcs';
 import type { Context } from './context';
 import { visitSpectra } from './cubePixels';
 import { readyCube } from './cubes';
+import { withFloats } from '../files/scratch';
 import type { PlaneAnswer } from './planes';
 
 export const INTERPOLATION =
@@ -37,22 +38,50 @@ export async function cutOf(ctx: Context, cubeId: string, asked: CutAsked): Prom
   if (uses.size === 0)
     throw new Problem('invalid-input', 'No part of this cut lies on the cube.', { field: 'l' });
   const width = path.pixels.length;
-  const alongSpectra = new Float32Array(width * channels).fill(NaN);
-  for (const parts of uses.values())
-    for (const { place } of parts) alongSpectra.fill(0, place * channels, (place + 1) * channels);
+  const plane = await withFloats(width * channels, async (alongSpectra) => {
+    await readAlong(ctx, row, uses, alongSpectra);
+    return turned(alongSpectra, width, channels);
+  });
+  return {
+    ...quantise(plane),
+    ...{ nx: width, ny: channels, block: 1, step: path.step, unit: row.head.unit ?? row.head.bunit },
+  };
+}
+
+type Uses = ReturnType<typeof pixelUses>;
+
+/** The spectra along a path, one after the other. */
+async function readAlong(
+  ctx: Context,
+  row: Awaited<ReturnType<typeof readyCube>>,
+  uses: Uses,
+  alongSpectra: Float32Array,
+): Promise<void> {
+  const { channels } = row.head.shape;
+  alongSpectra.fill(NaN);
+  const onCube = new Set<number>();
+  for (const parts of uses.values()) for (const { place } of parts) onCube.add(place);
+  for (const place of onCube) alongSpectra.fill(0, place * channels, (place + 1) * channels);
   await visitSpectra(ctx, row, uses.keys(), (pixel, spectrum) => {
     for (const { place, weight } of uses.get(pixel)!) {
       const at = place * channels;
       for (let k = 0; k < channels; k++) alongSpectra[at + k]! += weight * spectrum[k]!; // a blank stays a blank
     }
   });
+}
+
+/** Places and channels of a side that are turned together, so that both stay in the processor's cache. */
+const PATCH = 32;
+
+/** Channel by channel what was place by place. */
+function turned(alongSpectra: Float32Array, width: number, channels: number): Float32Array {
   const plane = new Float32Array(width * channels);
-  for (let place = 0; place < width; place++)
-    for (let k = 0; k < channels; k++) plane[k * width + place] = alongSpectra[place * channels + k]!;
-  return {
-    ...quantise(plane),
-    ...{ nx: width, ny: channels, block: 1, step: path.step, unit: row.head.unit ?? row.head.bunit },
-  };
+  for (let from = 0; from < width; from += PATCH)
+    for (let first = 0; first < channels; first += PATCH)
+      for (let place = from; place < Math.min(from + PATCH, width); place++)
+        for (let k = first; k < Math.min(first + PATCH, channels); k++)
+          plane[k * width + place] = alongSpectra[place * channels + k]!;
+  return plane;
 }
 
 function shapeOf({ l, b, toL, toB, radius }: CutAsked): CutShape {

@@ -5,8 +5,9 @@ import { dequantise, quantise, type Quantised } from '@/shared/image/quantise';
 import { buildWcs, type Wcs } from '@/shared/sky/wcs';
 import { fillFrom } from '../files/pixelFile';
 import { readPlane } from '../files/planes';
+import { withFloats } from '../files/scratch';
 import { findImage, findThumbnail } from '../store/channels';
-import { findCube, type CubeRow } from '../store/cubes';
+import { findCube } from '../store/cubes';
 import { notFound } from './access';
 import type { Context } from './context';
 import { withPlanes } from './cubePixels';
@@ -35,21 +36,16 @@ export async function planeOf(
   requireChannel(head, channel);
   const { nx, ny } = head.shape;
   const block = size === undefined ? 1 : blockFor(nx, ny, size);
-  const small =
-    row.reducedKey && row.layout?.reduced?.block === block
-      ? await readReduced(ctx, row.reducedKey, head, block, channel)
-      : blockAverage(await readWhole(ctx, { ...row, head }, channel), nx, ny, block);
-  return { ...quantise(small.plane, bits), nx: small.nx, ny: small.ny, block, unit: head.unit ?? head.bunit };
-}
-
-async function readWhole(
-  ctx: Context,
-  row: CubeRow & { head: CubeHead },
-  channel: number,
-): Promise<Float32Array> {
-  const plane = new Float32Array(row.head.shape.nx * row.head.shape.ny);
-  await withPlanes(ctx, row, (source, head) => readPlane(source, head, channel, plane));
-  return plane;
+  const answer = ({ plane, ...size }: Plane): PlaneAnswer => ({
+    ...quantise(plane, bits),
+    ...{ ...size, block, unit: head.unit ?? head.bunit },
+  });
+  if (row.reducedKey && row.layout?.reduced?.block === block)
+    return answer(await readReduced(ctx, row.reducedKey, head, block, channel));
+  return withFloats(nx * ny, async (plane) => {
+    await withPlanes(ctx, row, (source, stored) => readPlane(source, stored, channel, plane));
+    return answer(blockAverage(plane, nx, ny, block));
+  });
 }
 
 /** A plane that ingest has reduced to the same block. */

@@ -1,3 +1,4 @@
+import { execFileSync } from 'node:child_process';
 import { join } from 'node:path';
 import { seededRandom } from '@/shared/random';
 import { cookieOf } from '../api/uploading';
@@ -7,6 +8,7 @@ import { ORDERS, SIDE, writeIngestCube } from './ingestCubes';
 import { median, milliseconds, quantile, table, verdict } from './table';
 
 const TIMES = 200;
+const WARM = 50;
 const LIMIT = { plane: 40, cut: 80 };
 
 /** Random channels at full size, random cuts and random spectra of 512 x 512 x 512 pixels, one after the other. */
@@ -18,6 +20,7 @@ export async function benchPlanes(): Promise<void> {
       const file = join(product.scratch, `${order}.fits`);
       writeIngestCube(file, order);
       const { cubeId } = await product.ingestFile(file);
+      execFileSync('sync'); // what ingest wrote is on the disk before anything is timed
       const headers = { Cookie: cookieOf(product.lead, product.url) };
       const take = async (path: string) => {
         const answer = await fetch(`${product.url}/api/v1/cubes/${cubeId}/${path}`, { headers });
@@ -36,7 +39,7 @@ export async function benchPlanes(): Promise<void> {
         ['spectra', LIMIT.plane, () => `spectrum?x=${upTo(SIDE)}&y=${upTo(SIDE)}&radius=5`],
       ];
       for (const [name, limit, path] of asked) {
-        for (let i = 0; i < 10; i++) await take(path()); // the first requests compile the code
+        for (let i = 0; i < WARM; i++) await take(path()); // the first requests compile the code
         const times: number[] = [];
         for (let i = 0; i < TIMES; i++) times.push(await take(path()));
         const p95 = quantile(times, 0.95);
