@@ -58,7 +58,7 @@ export const scrubWatch = `{
         const began = performance.now();
         const drawn = new Promise((resolve) => (heard = resolve));
         press(key, selector ? document.querySelector(selector) : document.body);
-        await drawn;
+        await Promise.race([drawn, rest(5000).then(() => Promise.reject(new Error('The map was not painted anew.')))]);
         taken.push(paints[paints.length - 1].at - began);
         heard = null;
       }

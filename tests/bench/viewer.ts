@@ -90,7 +90,7 @@ export async function benchViewer(): Promise<void> {
       }
       await page.keyboard.press('w');
       await page.getByRole('slider', { name: 'Bright end' }).focus();
-      const times = await lookTimes(page, 'ArrowLeft', '[aria-label="Bright end"]');
+      const times = await lookTimes(page, 'ArrowLeft', '[role="slider"][aria-label="Bright end"]');
       say(
         'window change at 1024 x 1024',
         `median ${milliseconds(median(times))}, 95th ${milliseconds(quantile(times, 0.95))}`,
