@@ -26,9 +26,9 @@ const say = (msg: string) => console.log(JSON.stringify({ level: 30, time: Date.
 process.on('SIGTERM', () => { say('server closes'); process.exit(0); });
 `;
 const smallWorker = `
-console.log(JSON.stringify({ level: 40, time: Date.now(), msg: 'queue runs' }));
 const idle = setInterval(() => {}, 1000);
 process.on('SIGTERM', () => { console.log('worker closes'); clearInterval(idle); });
+console.log(JSON.stringify({ level: 40, time: Date.now(), msg: 'queue runs' }));
 `;
 
 let checkout: string;
