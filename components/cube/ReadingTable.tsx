@@ -10,6 +10,9 @@ import type { ChannelReading } from '@/hooks/reading/skyMarks';
 import { velocityLabel } from '@/shared/image/velocityDigits';
 import { formatQuantity } from '@/shared/physics/quantity';
 
+/** Share of the radius below which its error is not one of reading. */
+const LEAST_ERROR = 1e-4;
+
 const REASONS = { 'too-few': 'too few', 'same-point': 'one point', 'straight-line': 'a line' } as const;
 
 /** My reading by channel: velocity, how many marks, the ring they make. A row shows its channel. */
@@ -55,7 +58,9 @@ function Row(props: {
   const { reading, most, width, current, onPress } = props;
   const { color } = useTheme();
   const { ring } = reading;
-  const q = ring && formatQuantity({ value: ring.theta, se: ring.se, unit: 'deg' });
+  // marks made of one drawn circle do not scatter: their tiny error says nothing of the rim, so none is shown
+  const se = ring?.se && ring.se > LEAST_ERROR * ring.theta ? ring.se : null;
+  const q = ring && formatQuantity({ value: ring.theta, se, unit: 'deg' });
   return (
     <View role="listitem">
       <Press

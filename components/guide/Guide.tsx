@@ -19,11 +19,12 @@ export function Guide({ personId }: { personId: string }) {
   const say = useToast();
   const [offered, setOffered] = useState(() => !guideSeen(personId));
   const [step, setStep] = useState<number | null>(null);
+  const atCube = /^\/cubes\/[^/]+$/.test(path);
 
   async function begin() {
     setOffered(false);
     keepGuideSeen(personId);
-    if (/^\/cubes\/[^/]+$/.test(path)) return setStep(0);
+    if (atCube) return setStep(0);
     try {
       const cube = await readyCube();
       if (!cube)
@@ -47,7 +48,7 @@ export function Guide({ personId }: { personId: string }) {
         onClose={() => setStep(null)}
       />
     );
-  if (!offered) return null;
+  if (!offered || atCube) return null; // there it would lie on what a person works with
   return (
     <GuideOffer
       onBegin={() => void begin()}
