@@ -102,7 +102,8 @@ export const parts = {
     ]),
   e2e: async (place) => {
     await ensureClient(place.root, place.say);
-    // Two files at a time: each drives a browser, a server and a worker, and waits for the most part.
-    return jest(place, 'e2e', ['--selectProjects', 'e2e']);
+    // One file at a time: each drives a browser, a server and a worker, which keep two cores busy. What a browser
+    // leaves open must not keep the run from ending.
+    return jest(place, 'e2e', ['--selectProjects', 'e2e', '--runInBand', '--forceExit']);
   },
 };
