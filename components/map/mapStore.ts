@@ -1,6 +1,7 @@
 import type { RingDraft } from '@/shared/shell/suggest/ringDraft';
 import type { ChannelPlane } from '@/hooks/planes/decodePlane';
 import { valueStore, type ValueStore } from '@/hooks/valueStore';
+import type { Look } from '@/shared/image/tone';
 import type { ImagePoint, ScreenPoint, Viewport } from '@/shared/image/viewport';
 
 /** What moves with the pointer: kept outside React, one set a map. */
@@ -8,6 +9,8 @@ export interface MapStore {
   viewport: ValueStore<Viewport | null>;
   /** A plane to draw at once, before the page has caught up with the step to its channel. */
   early: ValueStore<ChannelPlane | null>;
+  /** A look to draw at once, in the same way. */
+  earlyLook: ValueStore<Look | null>;
   /** The image point under the pointer (or the crosshair). */
   hover: ValueStore<ImagePoint | null>;
   /** Where Enter places a mark; shown while the map has the keyboard. */
@@ -23,6 +26,7 @@ export interface MapStore {
 export const mapStore = (): MapStore => ({
   viewport: valueStore<Viewport | null>(null),
   early: valueStore<ChannelPlane | null>(null),
+  earlyLook: valueStore<Look | null>(null),
   hover: valueStore<ImagePoint | null>(null),
   crosshair: valueStore<ImagePoint | null>(null),
   aim: valueStore<ScreenPoint | null>(null),

@@ -26,13 +26,12 @@ const KM_S: ReadonlySet<Shown> = new Set(['velocity', 'dispersion']);
 
 /** Palette, tone and brightness window. */
 export function ColourSection() {
-  const { look, channelLook, planes, cube, view, unit } = useSession();
+  const { look, channelsLook, planes, cube, view, unit } = useSession();
   const gradient = useMemo(() => cssGradient(look.palette), [look.palette]);
-  const plain = look === channelLook;
   const [lowest, highest] = useMemo(() => {
-    if (plain) return [cube.statistics?.minimum ?? null, cube.statistics?.maximum ?? null];
+    if (channelsLook) return [cube.statistics?.minimum ?? null, cube.statistics?.maximum ?? null];
     return (planes.plane && windowOf(planes.plane, 1)) ?? [null, null];
-  }, [plain, cube.statistics, planes.plane]);
+  }, [channelsLook, cube.statistics, planes.plane]);
   const range = trackRange(look.window, lowest, highest);
   const preset = (share: number) => {
     const found = planes.plane && windowOf(planes.plane, share);

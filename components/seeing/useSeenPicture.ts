@@ -6,6 +6,7 @@ import type { OwnKind, ViewControl } from '@/components/cube/useView';
 import type { MapStore } from '@/components/map/mapStore';
 import { recipeOf, type Seen } from '@/components/seeing/recipe';
 import type { Lie, Seeing } from '@/components/seeing/seeing';
+import { drawnAhead } from '@/components/seeing/lookAhead';
 import { useModelPlane } from '@/components/seeing/useModelPlane';
 import { useSeeing, type SeeingControl } from '@/components/seeing/useSeeing';
 import { useSeenSky, type SeenSky } from '@/components/seeing/useSeenSky';
@@ -36,6 +37,8 @@ export interface SeenPicture {
   /** What the map shows. */
   planes: Planes;
   look: LookControl;
+  /** Whether that is the look which all channels share. */
+  channelsLook: boolean;
   /** The channel as it is. */
   channelPlanes: ChannelPlanes;
   /** Show the sky in another way, about the model's centre or the image's. */
@@ -123,7 +126,8 @@ export function useSeenPicture(input: SeenInput): SeenPicture {
         : allChannels
           ? (shownView.view as OwnKind)
           : null;
-  const look = useOwnLook(kind, picture.plane, channelLook) ?? channelLook;
+  const chosenLook = useOwnLook(kind, picture.plane, channelLook) ?? channelLook;
+  const look = useMemo(() => drawnAhead(chosenLook, store.earlyLook), [chosenLook, store]);
 
   const asModel = flicking && (other === 'model' || other === null) && model !== null && !allChannels;
   const modelPlane = useModelPlane(
@@ -159,7 +163,18 @@ export function useSeenPicture(input: SeenInput): SeenPicture {
     : flicked
       ? [`channel ${channel + 1} instead`, ...made.said]
       : made.said;
-  return { seeing, seen, stated, refused: made.refused, planes, look, channelPlanes, lieAs, ahead };
+  return {
+    seeing,
+    seen,
+    stated,
+    refused: made.refused,
+    planes,
+    look,
+    channelsLook: chosenLook === channelLook,
+    channelPlanes,
+    lieAs,
+    ahead,
+  };
 }
 
 /** Farthest a stereographic map reaches: at 180 degrees it would be infinitely large. */

@@ -47,8 +47,17 @@ function evenPath(stops: readonly string[]): (t: number) => Oklab {
   };
 }
 
-/** The palette's colours, dark end first, as `length` canvas pixels. */
+const ramps = new Map<string, Uint32Array>();
+
+/** The palette's colours, dark end first, as `length` canvas pixels; worked out once, so not to be written into. */
 export function rampOf(palette: Palette, length = RAMP_LENGTH): Uint32Array {
+  const key = `${palette} ${length}`;
+  const ramp = ramps.get(key) ?? newRamp(palette, length);
+  ramps.set(key, ramp);
+  return ramp;
+}
+
+function newRamp(palette: Palette, length: number): Uint32Array {
   const arms = STOPS[palette].arms.map(evenPath);
   const below = arms[0]!;
   const above = arms[1];

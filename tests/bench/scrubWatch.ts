@@ -27,6 +27,18 @@ export const scrubWatch = `{
   const press = (key, target) =>
     target.dispatchEvent(new KeyboardEvent('keydown', { key, bubbles: true, cancelable: true }));
   const rest = (ms) => new Promise((resolve) => setTimeout(resolve, ms));
+  /** Until the next frame has been handed over to be shown. */
+  const frame = () =>
+    new Promise((resolve) =>
+      requestAnimationFrame(() => {
+        const { port1, port2 } = new MessageChannel();
+        port1.onmessage = () => {
+          port1.close();
+          resolve();
+        };
+        port2.postMessage(0);
+      }),
+    );
   globalThis.scrubWatch = {
     paints,
     async untilFull() {
@@ -51,15 +63,17 @@ export const scrubWatch = `{
       await rest(300);
       return { turns, paints: paints.slice(first) };
     },
-    async looks(key, selector, times) {
+    async looks(keys, selector, times) {
       const taken = [];
       for (let i = 0; i < times; i++) {
         await rest(120);
         const began = performance.now();
         const drawn = new Promise((resolve) => (heard = resolve));
-        press(key, selector ? document.querySelector(selector) : document.body);
+        press(keys[i % keys.length], selector ? document.querySelector(selector) : document.body);
         await Promise.race([drawn, rest(5000).then(() => Promise.reject(new Error('The map was not painted anew.')))]);
-        taken.push(paints[paints.length - 1].at - began);
+        const painted = paints[paints.length - 1].at - began;
+        await frame();
+        taken.push({ painted, shown: performance.now() - began });
         heard = null;
       }
       return taken;
