@@ -34,7 +34,8 @@ function aboutMark(mark: PlacedMark, digits: number): string[] {
 
 /** The marks of the channel shown as a list: the map's marks for the keyboard and for the ear. */
 export function MarkList() {
-  const { marks, channel, velocity, chosen, select, nudge, removeMarks, canMark, wcs, axes } = useSession();
+  const { marks, channel, velocity, chosen, select, nudge, seen, removeMarks, canMark, wcs, axes } =
+    useSession();
   const { color } = useTheme();
   const own = marks.filter((m) => m.channel === channel);
   const perPixel = degreesPerPixel(axes, wcs);
@@ -49,7 +50,7 @@ export function MarkList() {
       if (!canMark || (!arrow && e.key !== 'Delete' && e.key !== 'Backspace')) return;
       e.preventDefault();
       e.stopPropagation();
-      if (arrow) nudge(arrow[0], arrow[1], e.shiftKey);
+      if (arrow) nudge(arrow[0], arrow[1], e.shiftKey, seen);
       else removeMarks([id]);
     };
 

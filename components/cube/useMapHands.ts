@@ -1,7 +1,7 @@
 import { useMemo } from 'react';
 import type { CubeSession } from '@/components/cube/cubeSession';
 import type { ChannelMapProps } from '@/components/map/ChannelMap';
-import type { ImagePoint } from '@/shared/image/viewport';
+import { pixelAt, type ImagePoint } from '@/shared/image/viewport';
 
 type Hands = Pick<
   ChannelMapProps,
@@ -16,7 +16,9 @@ const GHOST_PX = { mouse: 8, touch: 16 } as const;
  * marks belong to the image. A stack of all channels has no channel to mark.
  */
 export function useMapHands(s: CubeSession): Hands {
-  const { seen, tools, mapTool, takeGhosts, placeMark, moveMark, select, lasso, nudge, ring, store } = s;
+  const { seen, axes, tools, mapTool, takeGhosts, placeMark, moveMark, select, lasso, nudge, ring, store } =
+    s;
+  const { said } = s;
   return useMemo<Hands>(() => {
     const stacked = seen.lie === 'stacked';
     const reach = GHOST_PX[globalThis.matchMedia?.('(pointer: coarse)').matches ? 'touch' : 'mouse'];
@@ -28,7 +30,8 @@ export function useMapHands(s: CubeSession): Hands {
         const ghost = tools.ghosts.find((g) => Math.hypot(g.x - at.x, g.y - at.y) <= near);
         const there = seen.toImage(at);
         if (ghost) takeGhosts([ghost.id]);
-        else if (there) placeMark(there, by);
+        else if (there && pixelAt(axes, there)) placeMark(there, by);
+        else said.set('The image does not reach there.');
       },
       onSelect: select,
       onMove(id, at, gesture) {
@@ -36,9 +39,9 @@ export function useMapHands(s: CubeSession): Hands {
         if (there) moveMark(id, there, gesture);
       },
       onLasso: (line) => lasso(line.flatMap((at) => seen.toImage(at) ?? [])),
-      onNudge: nudge,
+      onNudge: (right, up, far) => nudge(right, up, far, seen),
       onRing: ring.onRing,
       onRingKey: ring.onRingKey,
     };
-  }, [seen, tools, mapTool, takeGhosts, placeMark, moveMark, select, lasso, nudge, ring, store]);
+  }, [seen, axes, tools, mapTool, takeGhosts, placeMark, moveMark, select, lasso, nudge, ring, store, said]);
 }

@@ -1,8 +1,9 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import { nudgeStep } from '@/components/cube/nudge';
+import { nudged, nudgeStep } from '@/components/cube/nudge';
 import { useSelection, type Selection } from '@/components/cube/useSelection';
 import { degrees } from '@/components/cube/words';
 import type { MapTool } from '@/components/map/gestures';
+import type { SeenSky } from '@/components/seeing/useSeenSky';
 import { count } from '@/components/ui/format';
 import { newMarkId, type MarkSaid, type PlacedMark } from '@/hooks/reading/placedMark';
 import type { ReadingAction } from '@/hooks/reading/readingState';
@@ -25,7 +26,8 @@ export interface Marking extends Selection {
   addMarks: (at: readonly (ImagePoint & { sigma?: number })[], placed: 'suggested' | 'ring') => void;
   /** Moves all selected marks when it is one of them. */
   moveMark: (id: string, at: ImagePoint, gesture: string) => void;
-  nudge: (right: number, up: number, far: boolean) => void;
+  /** By an arrow key, along the picture shown. */
+  nudge: (right: number, up: number, far: boolean, seen: Pick<SeenSky, 'fromImage' | 'toImage'>) => void;
   lasso: (line: readonly ImagePoint[]) => void;
   removeMarks: (ids: readonly string[]) => void;
   describeMarks: (ids: readonly string[], said: MarkSaid, gesture?: string) => void;
@@ -88,9 +90,9 @@ export function useMarking(input: Input): Marking {
     [dispatch, said, usualSigma],
   );
   const moveTo = useCallback(
-    (moved: readonly PlacedMark[], dx: number, dy: number, gesture: string) => {
+    (moved: readonly PlacedMark[], where: (mark: PlacedMark) => ImagePoint, gesture: string) => {
       const to = moved.map((m) => {
-        const at = within(here.current.axes, { x: m.x + dx, y: m.y + dy });
+        const at = within(here.current.axes, where(m));
         return { id: m.id, x: round(at.x), y: round(at.y) };
       });
       dispatch({ type: 'move', to, gesture });
@@ -102,19 +104,21 @@ export function useMarking(input: Input): Marking {
       const { marks: all, chosen: many } = here.current;
       const mark = all.find((m) => m.id === id);
       if (!mark) return;
-      moveTo(many.some((m) => m.id === id) ? many : [mark], at.x - mark.x, at.y - mark.y, gesture);
+      const [dx, dy] = [at.x - mark.x, at.y - mark.y];
+      const moved = many.some((m) => m.id === id) ? many : [mark];
+      moveTo(moved, (m) => ({ x: m.x + dx, y: m.y + dy }), gesture);
     },
     [moveTo],
   );
-  const nudge = useCallback(
-    (right: number, up: number, far: boolean) => {
+  const nudge = useCallback<Marking['nudge']>(
+    (right, up, far, seen) => {
       const { chosen: many, axes: image } = here.current;
       const now = performance.now();
       const who = many.map((m) => m.id).join();
       const again = burst.current.name.startsWith(who) && now - burst.current.time < ONE_STEP_MS;
       burst.current = { name: again ? burst.current.name : `${who} ${now}`, time: now };
       const step = nudgeStep(image, wcs, far);
-      moveTo(many, right * step, up * step, `nudge ${burst.current.name}`);
+      moveTo(many, (m) => nudged(m, [right, up], step, seen), `nudge ${burst.current.name}`);
       said.set(`${count(many.length, 'mark')} moved.`);
     },
     [moveTo, said, wcs],
