@@ -36,7 +36,11 @@ export function AboutPage({ cubeId }: { cubeId: string }) {
         { label: 'About' },
       ]}
       actions={
-        cube?.status === 'ready' && <Button label="Channel maps" icon="cube" href={cubeHome} kind="primary" />
+        !cube
+          ? null
+          : cube.status === 'ready' && (
+              <Button label="Channel maps" icon="cube" href={cubeHome} kind="primary" />
+            )
       }
     >
       <RecordGate read={read} what="cube" home={{ href: '/regions', label: 'To the regions' }}>

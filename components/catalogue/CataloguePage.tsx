@@ -75,15 +75,17 @@ export function CataloguePage() {
       crumbs={[{ label: 'Catalogue' }, { label: narrowing(filters) > 0 ? 'Filtered' : 'All regions' }]}
       subtitle={shells.data ? `${shells.data.items.length} of ${total}` : undefined}
       actions={
-        total > 0 && (
-          <Button
-            icon="download"
-            label="Download CSV"
-            href={`${API}/shells.csv?${query}` as '/'}
-            external
-            download="outswell-shells.csv"
-          />
-        )
+        !shells.data
+          ? null
+          : total > 0 && (
+              <Button
+                icon="download"
+                label="Download CSV"
+                href={`${API}/shells.csv?${query}` as '/'}
+                external
+                download="outswell-shells.csv"
+              />
+            )
       }
     >
       <FilterBar filters={filters} regions={regions.data?.items ?? []} onChange={setFilters} />

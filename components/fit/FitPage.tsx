@@ -37,12 +37,12 @@ export function FitPage({ shellId, fitId }: { shellId: string; fitId: string }) 
       ]}
       back={home}
       actions={
-        fit && (
+        fit ? (
           <>
             <State fit={fit} />
             {shell && isDone(fit) && <FitActions fit={fit} shell={shell} />}
           </>
-        )
+        ) : null
       }
     >
       <RecordGate read={read} what="fit" home={{ href: home, label: 'To the shell' }}>

@@ -25,7 +25,7 @@ export interface ScreenProps {
   back?: Href;
   /** Short state or small control in the head: 'All marks saved'. */
   aside?: ReactNode;
-  /** Buttons beside the heading in the page. */
+  /** Buttons beside the heading in the page; their room is kept while they are null. */
   actions?: ReactNode;
   /** The content takes all the room and scrolls by itself; no heading in the page. */
   full?: boolean;
@@ -98,7 +98,7 @@ export function Screen({
                 gap: space(4),
               }}
             >
-              {(wide || actions) && (
+              {(wide || (actions !== undefined && actions !== false)) && (
                 <PageHead title={title} subtitle={subtitle} actions={actions} wide={wide} />
               )}
               {children}
@@ -158,6 +158,7 @@ function PageHead({
         flexWrap: 'wrap',
         gap: space(3),
         justifyContent: 'space-between',
+        minHeight: actions === undefined ? undefined : touch,
       }}
     >
       {wide && (

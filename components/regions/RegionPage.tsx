@@ -70,12 +70,13 @@ export function RegionPage({ regionId }: { regionId: string }) {
       crumbs={[{ label: 'Regions', href: '/regions' }, { label: name }]}
       back="/regions"
       actions={
-        region.data && (
+        (mayAct('region.edit') || mayUpload) &&
+        (region.data ? (
           <>
             {mayAct('region.edit') && <Button icon="edit" label="Edit" onPress={() => setDialog('edit')} />}
             {upload}
           </>
-        )
+        ) : null)
       }
     >
       <RecordGate read={region} what="region" home={{ href: '/regions', label: 'To the regions' }}>

@@ -42,7 +42,7 @@ export function ShellPage({ shellId }: { shellId: string }) {
         { label: name },
       ]}
       back={data ? `/regions/${data.regionId}` : '/shells'}
-      actions={data && <Actions shell={data} />}
+      actions={data ? <Actions shell={data} /> : null}
     >
       <RecordGate read={shell} what="shell" home={{ href: '/shells', label: 'To the shells' }}>
         {(s) => <Content shell={s} />}
