@@ -55,6 +55,20 @@ describe('npm run fit', () => {
     });
   });
 
+  it('begins where it is told to, and ends at the same shell', async () => {
+    const { code, stdout } = await fit(
+      join(reference, 'cases/01-full-8x10.json'),
+      '--start=3,-30,20',
+      '--seed=1',
+    );
+    expect(code).toBe(0);
+    const found = JSON.parse(stdout);
+    expect(found.provenance.startValues).toMatchObject({ vSys: -30 });
+    expect(found.provenance.startValues.theta).toBeCloseTo(3, 9);
+    const { parameters } = (await load('cases/01-full-8x10.fit.json')).fit;
+    expect(found.parameters.theta.value).toBeCloseTo(parameters.theta.value, 6);
+  });
+
   it.each(cubeMarks.cubes.map((c) => [c.name, c] as const))(
     'reads marks off a cube: %s',
     async (name, cube) => {
@@ -160,6 +174,12 @@ describe('npm run fit', () => {
       async () => [join(reference, 'cases/02-few-4x6.json'), '--fix', 'size=3'],
       'invalid-input',
       'constraints.size',
+    ],
+    [
+      'half a start',
+      async () => [join(reference, 'cases/02-few-4x6.json'), '--start=3,-30'],
+      'invalid-input',
+      'start',
     ],
     [
       'half a prior',

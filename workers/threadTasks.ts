@@ -74,8 +74,12 @@ export interface FinishTask {
 export const finishFit = ({ task: { model, options, codeVersion }, solved, draws }: FinishTask) =>
   answer(() => engine.finishFit(solved, { ...engineOptions(model, options), codeVersion }, draws));
 
-const engineOptions = (model: ModelName, { bootstrap, seed, setAside }: FitOptions): engine.FitOptions => ({
-  ...{ model, bootstrap, seed, setAside },
+const engineOptions = (model: ModelName, options: FitOptions): engine.FitOptions => ({
+  model,
+  bootstrap: options.bootstrap,
+  seed: options.seed,
+  setAside: options.setAside,
+  ...(options.start && { start: options.start }),
   optimiser: 'record',
   extras: true,
 });

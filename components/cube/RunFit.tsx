@@ -14,7 +14,7 @@ const FitDialog = lazy(() => import('@/components/fit/FitDialog'));
  * says why.
  */
 export function RunFit({ record }: { record: RecordFit }) {
-  const { shell } = useSession();
+  const { shell, fitStart } = useSession();
   const [asking, setAsking] = useState(false);
   return (
     <View style={{ gap: space(1) }}>
@@ -43,7 +43,7 @@ export function RunFit({ record }: { record: RecordFit }) {
         <Suspense fallback={null}>
           <FitDialog
             shell={shell}
-            start={defaultForm(record.readingId)}
+            start={defaultForm(record.readingId, fitStart)}
             onRun={record.runAs}
             onClose={() => setAsking(false)}
           />

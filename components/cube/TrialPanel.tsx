@@ -1,5 +1,6 @@
 import { View } from 'react-native';
 import { useSession } from '@/components/cube/session';
+import { startWords } from '@/components/fit/parameterWords';
 import { Button } from '@/components/ui/Button';
 import { Text } from '@/components/ui/Text';
 import { space } from '@/components/ui/tokens';
@@ -29,7 +30,7 @@ export function TrialPanel() {
     return (
       <View style={row}>
         <Text size="small" tone="quiet">
-          {`Started from Θ ${fitStart.theta.toPrecision(3)}°, v_sys ${shown(fitStart.vSys)}, v_exp ${shown(fitStart.vExp)} km/s.`}
+          {`Started from ${startWords(fitStart)}; a fit of record will too.`}
         </Text>
         <Button kind="quiet" label="Usual start" onPress={() => endTrial(false)} />
       </View>

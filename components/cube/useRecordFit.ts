@@ -89,7 +89,7 @@ export function useRecordFit(s: CubeSession): RecordFit {
     run: () =>
       tried(async () => {
         if (!shell) return;
-        const usual = readFitForm(defaultForm(await savedMarks()));
+        const usual = readFitForm(defaultForm(await savedMarks(), s.fitStart));
         if ('draft' in usual) await actions.run(shell.id, usual.draft);
       }),
     runAs: async (draft) => {

@@ -23,7 +23,7 @@ import {
   type FitForm,
   type FitFormProblems,
 } from './fitForm';
-import { parametersOf } from './parameterWords';
+import { parametersOf, startWords } from './parameterWords';
 import { readingChoices } from './readingChoices';
 
 const models: Record<ModelName, { label: string; line: string }> = {
@@ -64,6 +64,7 @@ export default function FitDialog({
   const [failure, setFailure] = useState<ApiProblem | null>(null);
   const [busy, setBusy] = useState(false);
   const choices = readingChoices(shell, traces, form.readingId);
+  const begun = start?.start ?? null;
   const edit = (part: Partial<FitForm>) => setForm((f) => ({ ...f, ...part }));
 
   async function run() {
@@ -162,6 +163,14 @@ export default function FitDialog({
             : 'Plain least squares keeps every mark.'}
         </Text>
       </View>
+      {begun && (
+        <CheckBox
+          showLabel
+          label={`Begin with ${startWords(begun)}, set by hand`}
+          checked={form.start !== null}
+          onChange={(on) => edit({ start: on ? begun : null })}
+        />
+      )}
       <View style={{ flexDirection: 'row', gap: space(3) }}>
         <View style={{ flex: 1 }}>
           <Field

@@ -36,7 +36,11 @@ export function Provenance({ fit }: { fit: DoneFit }) {
             name: 'Outliers',
             value: text(options?.setAside === false ? 'every mark kept' : 'set aside by the rule'),
           },
-          { key: 'start', name: 'Start values', value: starts.join(', ') || '–' },
+          {
+            key: 'start',
+            name: 'Start values',
+            value: text(`${starts.join(', ') || '–'}${options?.start ? ' (set by hand)' : ''}`),
+          },
           { key: 'iterations', name: 'Iterations', value: String(p.iterations) },
           { key: 'seed', name: 'Random seed', value: String(p.seed ?? '–') },
           { key: 'code', name: 'Code version', value: p.codeVersion ?? '–' },

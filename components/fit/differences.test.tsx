@@ -36,6 +36,13 @@ test('only what differs is said, of each fit', () => {
   ]);
 });
 
+test('a start set by hand is said', () => {
+  const start = { theta: 1.25, vSys: -40, vExp: 12 };
+  const found = differences([fit('a'), fit('b', {}, { start })]);
+  expect(found.get('a')).toEqual(['sphere', 'usual start']);
+  expect(found.get('b')).toEqual(['sphere', 'begun with Θ 1.25°, v_sys −40 km/s, v_exp 12 km/s']);
+});
+
 test('constraints are said even where all fits share them', () => {
   const held = { constraints: { vSys: { fixed: -40 } } };
   expect(differences([fit('a', {}, held), fit('b', {}, held)]).get('a')).toEqual([

@@ -2,9 +2,9 @@ import type { Fit } from '@/shared/contract/fits';
 import type { Trace } from '@/shared/contract/traces';
 import { count } from '../ui/format';
 import { isDone, modelNames } from './fitFacts';
-import { constraintWords, inOrder, writtenName } from './parameterWords';
+import { constraintWords, inOrder, startWords, writtenName } from './parameterWords';
 
-type Kind = 'model' | 'source' | 'marks' | 'constraints' | 'setAside' | 'draws' | 'seed';
+type Kind = 'model' | 'source' | 'marks' | 'constraints' | 'start' | 'setAside' | 'draws' | 'seed';
 type Facts = Record<Kind, string>;
 
 /**
@@ -19,7 +19,7 @@ export function differences(fits: readonly Fit[], traces: readonly Trace[] = [])
     (kind === 'constraints' && f.constraints !== 'every parameter free') ||
     (kind === 'source' && fit.traceId !== null) ||
     differs(kind);
-  const kinds: Kind[] = ['model', 'source', 'marks', 'constraints', 'setAside', 'draws', 'seed'];
+  const kinds: Kind[] = ['model', 'source', 'marks', 'constraints', 'start', 'setAside', 'draws', 'seed'];
   return new Map(
     fits.map((fit, i) => [
       fit.id,
@@ -34,6 +34,7 @@ function factsOf(fit: Fit, traces: readonly Trace[]): Facts {
     source: sourceOf(fit, traces),
     marks: marksOf(fit),
     constraints: constraintsOf(fit),
+    start: fit.options.start ? `begun with ${startWords(fit.options.start)}` : 'usual start',
     setAside: setAsideOf(fit),
     draws: fit.options.bootstrap > 0 ? count(fit.options.bootstrap, 'draw') : 'no draws',
     seed: fit.options.bootstrap > 0 ? `seed ${fit.options.seed}` : '',

@@ -21,6 +21,16 @@ test('untouched, the form is the usual fit of record', () => {
   expect(isDefault(form({ setAside: false }))).toBe(false);
 });
 
+test('a start set by hand is sent, and comes back with the fit to be run again', () => {
+  const start = { theta: 1.2, vSys: -40, vExp: 12 };
+  const sent = draft(defaultForm('r', start));
+  expect(sent.options.start).toEqual(start);
+  expect(isDefault(defaultForm('r', start))).toBe(false);
+  const again = formOf({ readingId: 'r', model: 'sphere', options: sent.options });
+  expect(draft(again).options).toEqual(sent.options);
+  expect(draft({ ...again, start: null }).options).not.toHaveProperty('start');
+});
+
 test('each way to constrain is sent in the parameter’s unit, commas and true minus signs read', () => {
   const f = form({
     parameters: {

@@ -20,11 +20,14 @@ export interface ParameterForm {
   low: string;
   high: string;
 }
+export type FitStart = NonNullable<Fit['options']['start']>;
 export interface FitForm {
   readingId: string | null;
   model: ModelName;
   parameters: Partial<Record<ParameterName, ParameterForm>>;
   setAside: boolean;
+  /** Set by hand, to begin from; null: worked out from the marks. */
+  start: FitStart | null;
   draws: string;
   seed: string;
 }
@@ -34,11 +37,12 @@ export type FitFormProblems = Record<string, string>;
 export const FREE: ParameterForm = { mode: 'free', value: '', sd: '', low: '', high: '' };
 export const DRAWS = 500;
 
-export const defaultForm = (readingId: string | null): FitForm => ({
+export const defaultForm = (readingId: string | null, start: FitStart | null = null): FitForm => ({
   readingId,
   model: 'sphere',
   parameters: {},
   setAside: true,
+  start,
   draws: String(DRAWS),
   seed: '1',
 });
@@ -60,6 +64,7 @@ export function formOf(fit: Pick<Fit, 'readingId' | 'model' | 'options'>): FitFo
     model: fit.model,
     parameters,
     setAside: options.setAside,
+    start: options.start ?? null,
     draws: String(options.bootstrap),
     seed: String(options.seed),
   };
@@ -88,6 +93,7 @@ export const isDefault = (form: FitForm): boolean => {
   return (
     form.model === plain.model &&
     form.setAside === plain.setAside &&
+    form.start === null &&
     form.draws === plain.draws &&
     form.seed === plain.seed &&
     Object.values(form.parameters).every((p) => p.mode === 'free')
@@ -121,6 +127,7 @@ export function readFitForm(form: FitForm): { draft: FitDraft } | { problems: Fi
       model: form.model,
       options: {
         setAside: form.setAside,
+        ...(form.start && { start: form.start }),
         bootstrap: draws!,
         seed: seed!,
         ...(Object.keys(constraints).length > 0 && { constraints }),

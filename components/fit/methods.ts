@@ -2,7 +2,7 @@ import { formatQuantity } from '@/shared/physics/quantity';
 import { count } from '../ui/format';
 import { channelsOf, extraOf } from './fitExtra';
 import { modelNames, type DoneFit } from './fitFacts';
-import { constraintWords, inOrder, writtenName } from './parameterWords';
+import { constraintWords, inOrder, startWords, writtenName } from './parameterWords';
 
 const WORKS = {
   'Beaton & Tukey 1974': 'Beaton, A. E., & Tukey, J. W. 1974, Technometrics, 16, 147',
@@ -70,7 +70,8 @@ function minimum(fit: DoneFit): string {
       ? 'Every point was kept.'
       : `After a robust pass with Tukey’s biweight (Beaton & Tukey 1974), points more than 4.5 robust deviations off ` +
         `the ring of their own channel were set aside: ${setAside} of ${fit.provenance.marks}.`;
-  return `${rule} The sum of squares was minimised by the Levenberg–Marquardt method (Marquardt 1963), with the weights renewed until they no longer changed.`;
+  const start = fit.options?.start ? ` The fit began with ${startWords(fit.options.start)}.` : '';
+  return `${rule}${start} The sum of squares was minimised by the Levenberg–Marquardt method (Marquardt 1963), with the weights renewed until they no longer changed.`;
 }
 
 function errors(fit: DoneFit): string {

@@ -35,6 +35,12 @@ const withUnit = (number: string, name: string) => {
 /** '−40 km/s', '1.5°'. */
 export const writtenValue = (name: string, value: number): string => withUnit(plainNumber(value, 6), name);
 
+/** Where a fit begins: 'Θ 1.2°, v_sys −40 km/s, v_exp 12 km/s'. */
+export const startWords = (start: { theta: number; vSys: number; vExp: number }): string =>
+  (['theta', 'vSys', 'vExp'] as const)
+    .map((name) => `${writtenName(name)} ${withUnit(plainNumber(start[name], 3), name)}`)
+    .join(', ');
+
 /** What was said of a parameter before the fit: 'held at −40 km/s', 'prior −40 ± 2 km/s, not above 0 km/s'. */
 export function constraintWords(name: string, { fixed, prior, low, high }: Constraint): string {
   if (fixed !== undefined) return `held at ${writtenValue(name, fixed)}`;

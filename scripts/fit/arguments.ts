@@ -11,6 +11,7 @@ export const USAGE = `npm run fit -- [cube.fits] marks.json [options]
   --fix name=value        hold a parameter: l, b, theta, vSys, vExp, driftL, driftB, axisRatio, positionAngle
   --prior name=mean,sd    give it a Gaussian prior, which counts as a datum
   --bound name=low,high   keep it between bounds; either may be left empty
+  --start theta,vSys,vExp begin there (degrees, km/s) instead of with values worked out from the marks
   --trace ridge|inner     with a cube: trace the rim around the fit of the marks, and print the fit of the traced rim`;
 
 export interface Request {
@@ -45,6 +46,7 @@ export function parse(args: readonly string[]): Request {
     else if (name === '--bootstrap') options.bootstrap = whole(name, value);
     else if (name === '--seed') options.seed = whole(name, value);
     else if (name === '--robust') options.setAside = oneOf(name, value, ['on', 'off']) === 'on';
+    else if (name === '--start') options.start = started(name, value);
     else if (name === '--fix') add(constraints, name, value, 1, ([fixed]) => ({ fixed }));
     else if (name === '--prior')
       add(constraints, name, value, 2, ([mean, sd]) => ({ prior: { mean: mean!, sd: sd! } }));
@@ -89,6 +91,14 @@ const bounds = ([low, high]: Numbers): Constraint => ({
   ...(low === undefined ? {} : { low }),
   ...(high === undefined ? {} : { high }),
 });
+
+function started(name: string, text: string): NonNullable<FitOptions['start']> {
+  const parts = text.split(',').map((part) => (part.trim() === '' ? NaN : Number(part)));
+  const [theta, vSys, vExp] = parts;
+  if (parts.length !== 3 || !parts.every(Number.isFinite))
+    throw wrong(name, `${name} is given as theta,vSys,vExp, with numbers, not "${text}"`);
+  return { theta: theta!, vSys: vSys!, vExp: vExp! };
+}
 
 function whole(name: string, text: string): number {
   if (!/^\d+$/.test(text)) throw wrong(name, `${name} needs a whole number, not "${text}"`);

@@ -52,6 +52,12 @@ export const FitOptions = z
       .partialRecord(z.enum(PARAMETERS), Constraint)
       .optional()
       .describe('parameters held, bounded or under a prior; the cap model needs vSys held or under a prior'),
+    start: z
+      .strictObject({ theta: z.number().positive().lt(90), vSys: z.number(), vExp: z.number().positive() })
+      .optional()
+      .describe(
+        'begin here, such as with a model set by hand; by default the start is worked out from the marks',
+      ),
     setAside: z.boolean().default(true).describe('set marks aside that lie off their own ring'),
     bootstrap: z
       .number()

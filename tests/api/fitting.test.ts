@@ -54,6 +54,25 @@ test('500 draws are the rule; they are the same bits as on one thread, and the i
   expect(fit.parameters!.theta!.hi).toBe(theta[Math.round(0.8413 * 499)]);
 });
 
+test('a fit begins where it is told to, keeps that, and finds the same shell', async () => {
+  const start = { theta: 1.6, vSys: -44, vExp: 17 };
+  const [usual, begun] = [
+    await fitted({ options: { bootstrap: 0 } }),
+    await fitted({ options: { bootstrap: 0, start } }),
+  ];
+  expect(begun.options.start).toEqual(start);
+  expect(begun.provenance!.startValues.vSys).toBe(-44);
+  expect(usual.options.start).toBeUndefined();
+  expect(usual.provenance!.startValues.vSys).not.toBe(-44);
+  expect(begun.parameters!.theta!.value).toBeCloseTo(usual.parameters!.theta!.value, 6);
+  for (const wrong of [{ theta: 0 }, { theta: 90 }, { vExp: -1 }]) {
+    const refused = await lead
+      .post(`/shells/${shellId}/fits`, { readingId, options: { start: { ...start, ...wrong } } })
+      .expect(400);
+    expect(refused.body.field).toBe(`options.start.${Object.keys(wrong)[0]}`);
+  }
+});
+
 test('where there are no draws the answer says why and what to do', async () => {
   const plain = await fitted({ options: { bootstrap: 0 } });
   expect(plain.errorBars).toBe('covariance');
