@@ -18,6 +18,10 @@ export interface CaptionFacts {
   marks: number;
   unsure: boolean;
   ownRing: boolean;
+  /** What the layers show. */
+  traced: boolean;
+  frozenBy: string | null;
+  otherShells: boolean;
   model: { source: 'trial' | 'live' | 'record'; theta: number; vSys: number; vExp: number } | null;
   beam: { major: number; minor: number } | null;
 }
@@ -53,6 +57,10 @@ export function captionWords(f: CaptionFacts): string {
     sentences.push(
       `Ring: ${SOURCES[f.model.source]}, Θ = ${f.model.theta.toPrecision(3)}°, v_sys = ${v(f.model.vSys)} km/s, v_exp = ${v(f.model.vExp)} km/s.`,
     );
+  if (f.traced)
+    sentences.push('Lozenges: rim traced in the brightness; small crosses: looked for there, not found.');
+  if (f.frozenBy) sentences.push(`Squares: marks of ${f.frozenBy}.`);
+  if (f.otherShells) sentences.push('Dotted: rings of other adopted shells.');
   if (f.beam)
     sentences.push(`Beam ${angleWords(60 * f.beam.major)} × ${angleWords(60 * f.beam.minor)}, lower right.`);
   return sentences.join(' ');

@@ -71,6 +71,9 @@ const facts: CaptionFacts = {
   marks: 5,
   unsure: false,
   ownRing: true,
+  traced: false,
+  frozenBy: null,
+  otherShells: false,
   model: { source: 'record', theta: 1.234, vSys: -41.2, vExp: 14.1 },
   beam: { major: 0.15, minor: 0.15 },
 };
@@ -80,6 +83,19 @@ test('the caption says what is seen, in plain sentences', () => {
     'Quiet reach, Far meadow. Channel 24 at −42.3 km/s (LSRK), 1.03 km/s wide. Palette Ember, tone root, ' +
       'window 0–12 K. Dots: rim marks of North arc. Dashed: circle through the marks of the channel. ' +
       'Ring: fit of record, Θ = 1.23°, v_sys = −41.2 km/s, v_exp = 14.1 km/s. Beam 9.0′ × 9.0′, lower right.',
+  );
+});
+
+test('a caption explains the signs of the layers that are drawn', () => {
+  const words = captionWords({
+    ...facts,
+    traced: true,
+    frozenBy: 'a fit of Wren, 2031-05-02',
+    otherShells: true,
+  });
+  expect(words).toContain(
+    'Lozenges: rim traced in the brightness; small crosses: looked for there, not found. ' +
+      'Squares: marks of a fit of Wren, 2031-05-02. Dotted: rings of other adopted shells. Beam',
   );
 });
 

@@ -50,6 +50,7 @@ export function seenPanel(s: CubeSession): FigurePanel {
     ownRing: scene.ownRing,
     centre: scene.centre,
     contours: scene.contours,
+    layers: scene.layers,
   };
 }
 
@@ -118,12 +119,27 @@ export function captionOf(s: CubeSession, region: string | null, channels: reado
     palette: look.palette,
     tone: look.tone,
     window: windowWords(look.window, channels ? axes.unit : s.unit),
-    stated: channels ? [] : s.stated,
+    stated: channels ? [] : [...s.stated, ...(s.contours.words ? [s.contours.words] : [])],
     shell: shell?.name ?? null,
     marks: marks.length,
     unsure: marks.some((m) => m.unsure),
     ownRing: s.live.readings.some((r) => r.ring && shown.includes(r.channel)),
+    ...layersOf(channels ? null : s),
     model: model && modelSource ? { source: modelSource, ...model } : null,
     beam: s.seen.lie === 'polar' || s.seen.lie === 'stacked' ? null : axes.beam,
   });
+}
+
+/** What a caption says of the layers; sheets and loops show none. */
+function layersOf(s: CubeSession | null) {
+  const drawn = s?.scene.layers;
+  const fit = s?.layers.fits.find(({ id }) => id === s.seeing.marksOf);
+  return {
+    traced: drawn ? drawn.traced.length + drawn.missed.length > 0 : false,
+    frozenBy:
+      fit && drawn && drawn.frozen.length > 0
+        ? `a fit of ${[fit.createdBy?.name, fit.createdAt.slice(0, 10)].filter(Boolean).join(', ')}`
+        : null,
+    otherShells: (drawn?.shells.length ?? 0) > 0,
+  };
 }

@@ -146,6 +146,30 @@ test.each<[string, Partial<Figure> & { raster?: Section }]>([
   }
 });
 
+test('the layers of the map are in the figure, their signs about the places of marks', () => {
+  const panel = figure().panels[0]!;
+  const layers = {
+    traced: marks.slice(0, 3),
+    missed: [],
+    shells: [{ name: 'East & wide', path: ringPath(centre, 0.8, project, nx), at: project(centre) }],
+    frozen: marks.slice(3, 5),
+  };
+  const { all, number } = read(figureSvg(figure({ panels: [{ ...panel, layers }] })));
+  const begun = (selector: string) =>
+    Array.from(
+      all(selector)[0]!
+        .getAttribute('d')!
+        .matchAll(/M([\d.]+) ([\d.]+)/g),
+      ([, x, y]) => [Number(x), Number(y)],
+    );
+  const circles = all('circle.mark').map((c) => [number(c, 'cx'), number(c, 'cy')]);
+  expect(begun('path.layer-traced')).toEqual(circles.slice(0, 3));
+  expect(begun('path.layer-frozen')).toEqual(circles.slice(3, 5));
+  expect(all('path.layer-missed')).toEqual([]);
+  expect(all('path.ring-other')).toHaveLength(1);
+  expect(all('text').map((t) => t.textContent)).toContain('East & wide');
+});
+
 test('axes, colour bar, beam, scale bar, source and caption are there, and inside the page', () => {
   const { page, all, number } = read(figureSvg(figure()));
   const texts = all('text').map((t) => t.textContent);

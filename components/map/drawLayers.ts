@@ -1,5 +1,6 @@
-import type { SceneColours, SceneLayers } from '@/components/map/scene';
+import type { SceneColours } from '@/components/map/scene';
 import { stroke, twice } from '@/components/map/strokes';
+import type { PictureLayers } from '@/shared/image/pictureLayers';
 import { toScreen, type ImagePoint, type Viewport } from '@/shared/image/viewport';
 
 type Draw = (ctx: CanvasRenderingContext2D, sx: number, sy: number) => void;
@@ -10,7 +11,7 @@ type Draw = (ctx: CanvasRenderingContext2D, sx: number, sy: number) => void;
  */
 export function drawLayers(
   ctx: CanvasRenderingContext2D,
-  layers: SceneLayers,
+  layers: PictureLayers,
   v: Viewport,
   c: SceneColours,
 ): void {

@@ -1,5 +1,6 @@
 import type { Furniture } from '@/components/map/furniture';
 import type { GraticuleLine } from '@/shared/image/graticule';
+import type { PictureLayers } from '@/shared/image/pictureLayers';
 import type { Path } from '@/shared/image/skyPath';
 import type { ImagePoint, Viewport } from '@/shared/image/viewport';
 
@@ -28,18 +29,7 @@ export interface Scene {
   furniture?: ((viewport: Viewport) => Furniture) | null;
   /** Contours of another picture of the same sky. */
   contours?: readonly { path: Path; strong: boolean }[];
-  layers?: SceneLayers;
-}
-
-/** What others, other shells and the brightness itself say, under the person's own marks. */
-export interface SceneLayers {
-  /** Places on the rim that were found in the brightness, and where it was looked for and not found. */
-  traced: readonly ImagePoint[];
-  missed: readonly ImagePoint[];
-  /** Rings of other shells on this channel. */
-  shells: readonly { name: string; path: Path; at: ImagePoint | null }[];
-  /** Marks that a fit froze. */
-  frozen: readonly ImagePoint[];
+  layers?: PictureLayers;
 }
 
 /** The colours of what lies over an image; the same in both themes, since image panels are dark in both. */

@@ -70,7 +70,7 @@ export function ContourSection() {
           <Text size="small" tone={contours.problem ? 'error' : 'quiet'}>
             {contours.problem ??
               (contours.levels.length > 0
-                ? `At ${[contours.levels.map(brightness).join(', '), image?.unit].filter(Boolean).join(' ')}`
+                ? `At ${[contours.levels.map(brightness).join(', '), contours.unit].filter(Boolean).join(' ')}`
                 : 'The map is being read.')}
           </Text>
         </>

@@ -7,10 +7,11 @@ import { radius, space, touch } from '@/components/ui/tokens';
 
 /** What was done to the picture, stated on it, with a button to hold for what it is compared with. */
 export function PictureNote() {
-  const { stated, refused, seeing, view, planes, model, order } = useSession();
+  const { stated, refused, contours, seeing, view, planes, model, order } = useSession();
   const { color } = useTheme();
   const waiting = planes.plane?.standIn === true;
-  const words = [...stated, ...refused, ...(waiting ? ['a stand-in: the picture is coming'] : [])];
+  const lines = contours.of ? [contours.of] : [];
+  const words = [...stated, ...lines, ...refused, ...(waiting ? ['a stand-in: the picture is coming'] : [])];
   const { other, setFlicking, flicking } = seeing;
   const flickable =
     view === 'channel' &&

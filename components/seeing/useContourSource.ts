@@ -1,11 +1,13 @@
 import { useMemo } from 'react';
+import { unitOf, VIEWS } from '@/components/cube/views';
 import type { ContourChoice } from '@/components/seeing/seeing';
 import type { ApiProblem } from '@/hooks/api';
 import type { ChannelPlane } from '@/hooks/planes/decodePlane';
 import { useImagePlane, useMapPlane } from '@/hooks/planes/useMapPlane';
 import { useCube } from '@/hooks/useCubes';
 import { useImage } from '@/hooks/useImages';
-import type { Cube } from '@/shared/contract/cubes';
+import type { Cube, MapKind } from '@/shared/contract/cubes';
+import type { SkyImage } from '@/shared/contract/images';
 import { buildSky, type Sky } from '@/shared/sky/wcs';
 import type { SkySpec, WcsSpec } from '@/shared/sky/wcsSpec';
 
@@ -13,6 +15,9 @@ import type { SkySpec, WcsSpec } from '@/shared/sky/wcsSpec';
 export interface ContourSource {
   plane: ChannelPlane | null;
   sky: Sky | null;
+  /** What it is a map of, for people, and its unit; null until it is known. */
+  name: string | null;
+  unit: string | null;
   problem: ApiProblem | null;
 }
 
@@ -30,5 +35,15 @@ export function useContourSource(choice: ContourChoice | null): ContourSource {
   const spec = ofImage ? image.data?.sky : axes && (axes.wcs as unknown as WcsSpec).sky;
   const sky = useMemo(() => (spec ? buildSky(spec as unknown as SkySpec) : null), [spec]);
   const { plane, problem } = ofImage ? numbers : map;
-  return { plane, sky, problem: (ofImage ? image : cube).problem ?? problem };
+  const { name, unit } = ofImage ? nameOfImage(image.data) : nameOfMap(cube.data, kind);
+  return { plane, sky, name, unit, problem: (ofImage ? image : cube).problem ?? problem };
 }
+
+const nameOfImage = (image: SkyImage | undefined) => ({
+  name: image?.name ?? null,
+  unit: image?.unit ?? null,
+});
+const nameOfMap = (cube: Cube | undefined, kind: MapKind | null) => ({
+  name: cube && kind ? `${VIEWS[kind].long.toLowerCase()} of ${cube.name}` : null,
+  unit: kind ? unitOf(kind, cube?.axes?.unit ?? null) : null,
+});

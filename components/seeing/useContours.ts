@@ -1,4 +1,5 @@
 import { useMemo } from 'react';
+import { brightness } from '@/components/cube/words';
 import type { Scene } from '@/components/map/scene';
 import type { ContourChoice } from '@/components/seeing/seeing';
 import { useContourSource } from '@/components/seeing/useContourSource';
@@ -12,16 +13,21 @@ export interface Contours {
   lines: NonNullable<Scene['contours']>;
   levels: readonly number[];
   ends: readonly [number, number] | null;
+  unit: string | null;
+  /** What they are contours of, to be stated on the picture; null: there are none. */
+  of: string | null;
+  /** The same with the levels. */
+  words: string | null;
   problem: string | null;
 }
 
-const NONE: Contours = { lines: [], levels: [], ends: null, problem: null };
+const NONE: Contours = { lines: [], levels: [], ends: null, unit: null, of: null, words: null, problem: null };
 /** The usual levels lie in the upper part of what a map spans: lower down they follow noise. */
 const LOWEST_SHARE = 0.35;
 
 /** Contours of another map or of a companion image, laid where the picture shows the same sky. */
 export function useContours(choice: ContourChoice | null, seen: SeenSky): Contours {
-  const { plane, sky: from, problem } = useContourSource(choice);
+  const { plane, sky: from, name, unit, problem } = useContourSource(choice);
   const count = choice?.count ?? 0;
   const [low, high] = choice?.ends ?? [null, null];
   const found = useMemo(() => {
@@ -46,11 +52,15 @@ export function useContours(choice: ContourChoice | null, seen: SeenSky): Contou
   }, [found, from, sky, nx, ny]);
   return useMemo(() => {
     if (!choice) return NONE;
+    const at = found?.levels.map(brightness).join(', ');
     return {
       lines,
+      unit,
+      of: found && name ? `contours: ${name}` : null,
+      words: found && name ? `contours: ${name} at ${[at, unit].filter(Boolean).join(' ')}` : null,
       levels: found?.levels ?? [],
       ends: found?.ends ?? null,
       problem: problem ? `${problem.title}. ${problem.detail}` : null,
     };
-  }, [choice, lines, found, problem]);
+  }, [choice, lines, found, name, unit, problem]);
 }

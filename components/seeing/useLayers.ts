@@ -1,5 +1,4 @@
 import { useMemo } from 'react';
-import type { SceneLayers } from '@/components/map/scene';
 import type { Seeing } from '@/components/seeing/seeing';
 import type { SeenSky } from '@/components/seeing/useSeenSky';
 import { isDone, type DoneFit } from '@/components/fit/fitFacts';
@@ -7,11 +6,12 @@ import { useFitMarks, useFits } from '@/hooks/useFits';
 import { useTraces } from '@/hooks/useTraces';
 import type { Shell } from '@/shared/contract/shells';
 import type { Trace } from '@/shared/contract/traces';
+import type { PictureLayers } from '@/shared/image/pictureLayers';
 import { ringPath } from '@/shared/image/skyPath';
 import { modelRadius } from '@/shared/shell/channelCurve';
 
 export interface Layers {
-  drawn: SceneLayers;
+  drawn: PictureLayers;
   /** Fits on this cube whose marks may be shown, newest first. */
   fits: readonly DoneFit[];
   /** The newest rim that was traced on this cube. */
@@ -34,7 +34,7 @@ interface Input {
   choice: Pick<Seeing, 'layers' | 'marksOf'>;
 }
 
-const NOTHING: SceneLayers = { traced: [], missed: [], shells: [], frozen: [] };
+const NOTHING: PictureLayers = { traced: [], missed: [], shells: [], frozen: [] };
 
 /**
  * What others marked, what was traced, and other shells, on the channel shown. A second reading is made without seeing
@@ -89,7 +89,7 @@ export function useLayers(input: Input): Layers {
     });
   }, [withShells, lie, shells, shell?.id, sky, nx, ny, allChannels, velocity, channelWidth]);
 
-  const drawn = useMemo<SceneLayers>(() => {
+  const drawn = useMemo<PictureLayers>(() => {
     const marks = allChannels ? [] : (frozen?.marks ?? []);
     const found = marks.flatMap((m) => (m.channel === channel ? (fromImage(m) ?? []) : []));
     if (rim.length === 0 && rings.length === 0 && found.length === 0) return NOTHING;

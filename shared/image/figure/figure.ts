@@ -1,4 +1,5 @@
 import type { GraticuleLine } from '@/shared/image/graticule';
+import type { PictureLayers } from '@/shared/image/pictureLayers';
 import type { Path } from '@/shared/image/skyPath';
 import type { ImagePoint, Viewport } from '@/shared/image/viewport';
 
@@ -39,6 +40,7 @@ export interface FigurePanel {
   ownRing: Path | null;
   centre: ImagePoint | null;
   contours?: readonly { path: Path; strong: boolean }[];
+  layers?: PictureLayers;
 }
 
 export interface FigureColours {

@@ -1,8 +1,9 @@
 import type { Figure, FigureColours, FigurePanel } from '@/shared/image/figure/figure';
 import { LETTER, type FigureLayout } from '@/shared/image/figure/figureLayout';
-import { element, short, words, type Attributes } from '@/shared/image/figure/svg';
+import { layerParts } from '@/shared/image/figure/layerParts';
+import { edged, line, onImage } from '@/shared/image/figure/strokes';
+import { element, short } from '@/shared/image/figure/svg';
 import { textWidth } from '@/shared/image/figure/textWidth';
-import type { Path } from '@/shared/image/skyPath';
 import { toScreen, type ImagePoint, type Viewport } from '@/shared/image/viewport';
 
 /** From this many units a pixel on, pixels are shown as what they are. */
@@ -23,6 +24,7 @@ export function panelParts(
     parts.push(line(path, v, { stroke: colours.onImage, 'stroke-width': 0.6, opacity: 0.2 }));
   for (const { path, strong } of panel.contours ?? [])
     parts.push(line(path, v, { stroke: colours.onImage, 'stroke-width': strong ? 1.3 : 0.8, opacity: 0.8 }));
+  if (panel.layers) parts.push(...layerParts(panel.layers, v, colours));
   if (panel.ownRing)
     parts.push(
       ...edged(panel.ownRing, v, colours, {
@@ -80,27 +82,6 @@ function picture({ raster }: FigurePanel, v: Viewport): string {
   });
 }
 
-const trace = (path: Path, v: Viewport): string =>
-  path
-    .map((piece) =>
-      piece
-        .map((point, i) => {
-          const { sx, sy } = toScreen(v, point);
-          return `${i === 0 ? 'M' : 'L'}${short(sx)} ${short(sy)}`;
-        })
-        .join(''),
-    )
-    .join('');
-
-const line = (path: Path, v: Viewport, look: Attributes): string =>
-  element('path', { d: trace(path, v), fill: 'none', 'stroke-linejoin': 'round', ...look });
-
-/** A line over a dark edge, which holds on bright gas. */
-const edged = (path: Path, v: Viewport, { image }: FigureColours, look: Attributes): string[] => [
-  line(path, v, { stroke: image, 'stroke-width': Number(look['stroke-width']) + 1.8, opacity: 0.55 }),
-  line(path, v, look),
-];
-
 function centre(at: ImagePoint, v: Viewport, { model, image }: FigureColours): string {
   const { sx, sy } = toScreen(v, at);
   const d = `M${short(sx - 5)} ${short(sy)}h10M${short(sx)} ${short(sy - 5)}v10`;
@@ -109,17 +90,6 @@ function centre(at: ImagePoint, v: Viewport, { model, image }: FigureColours): s
     element('path', { d, stroke: model, 'stroke-width': 1.2 })
   );
 }
-
-/** Letters on a picture, with an edge that keeps them legible on any ground. */
-const onImage = (text: string, x: number, y: number, c: FigureColours, more: Attributes = {}): string =>
-  words(text, x, y, {
-    fill: c.onImage,
-    stroke: c.image,
-    'stroke-width': 2.6,
-    'stroke-linejoin': 'round',
-    'paint-order': 'stroke',
-    ...more,
-  });
 
 /** Beam, scale bar and directions along the lower edge of the last panel. */
 function corner({ beam, furniture, colours }: Figure, v: Viewport): string[] {
