@@ -1,5 +1,4 @@
 /** What is painted over the map lies where shared/sky puts it, at every zoom: the canvas is read back. */
-import type { Page } from 'playwright-core';
 import { marksOnRing, PIXEL } from '../api/cubeFile';
 import { newRegion, newShell, readyCube, saveMarks } from '../api/fixture';
 import { until, type SignedIn } from '../api/harness';
@@ -10,7 +9,8 @@ import { destination } from '@/shared/sky/greatCircle';
 import { buildWcs, type Wcs } from '@/shared/sky/wcs';
 import type { WcsSpec } from '@/shared/sky/wcsSpec';
 import { openStage, WIDE, type Stage } from './browser';
-import { NX, NY, painted } from './markingHands';
+import { centreOf, placed, type Looking } from './canvasBack';
+import { painted } from './markingHands';
 
 jest.setTimeout(120_000);
 let stage: Stage;
@@ -32,55 +32,6 @@ afterAll(() => stage.close());
 
 /** About a point of a line this much of it is looked at, CSS pixels. */
 const REACH = 6;
-
-interface Looking {
-  zoom: number;
-  x: number;
-  y: number;
-}
-/** Where an image point is on the overlay, CSS pixels from its upper left corner. */
-async function placed(page: Page, { zoom, x: x0, y: y0 }: Looking) {
-  const box = (await page.getByTestId('map').boundingBox())!;
-  const scale = zoom * Math.min(box.width / NX, box.height / NY);
-  return {
-    scale,
-    at: ({ x, y }: { x: number; y: number }) => ({
-      sx: box.width / 2 + (x - x0) * scale,
-      sy: box.height / 2 - (y - y0) * scale,
-    }),
-  };
-}
-
-/**
- * Centre of what is painted in a colour about a place: of a disc both ways, of a line across. Weight is how much of the
- * colour's warm or cold part a pixel has, so that dark edges and white lines count for nothing.
- */
-const centreOf = (
-  page: Page,
-  sx: number,
-  sy: number,
-  warm: boolean,
-  reach: number,
-): Promise<[number, number, number]> =>
-  page.evaluate(`(() => {
-    const canvas = document.querySelector('[data-testid=overlay]');
-    const ratio = canvas.width / canvas.clientWidth;
-    const [cx, cy, r] = [${sx} * ratio, ${sy} * ratio, ${reach} * ratio];
-    const [left, top] = [Math.floor(cx - r), Math.floor(cy - r)];
-    const side = Math.ceil(2 * r) + 1;
-    const { data } = canvas.getContext('2d').getImageData(left, top, side, side);
-    let [w, x, y] = [0, 0, 0];
-    for (let j = 0; j < side; j++)
-      for (let i = 0; i < side; i++) {
-        const at = 4 * (j * side + i);
-        const [dx, dy] = [left + i + 0.5 - cx, top + j + 0.5 - cy];
-        if (Math.hypot(dx, dy) > r) continue;
-        const contrast = ${warm} ? data[at] - data[at + 2] : data[at + 2] - data[at];
-        const weight = (Math.max(contrast, 0) * data[at + 3]) / 255;
-        w += weight; x += weight * dx; y += weight * dy;
-      }
-    return [x / w / ratio, y / w / ratio, w];
-  })()`) as Promise<[number, number, number]>;
 
 const LOOKS: Looking[] = [
   { zoom: 1, x: 31.5, y: 29.5 },
@@ -113,7 +64,7 @@ test.each(LOOKS)(
     for (const pixel of pixels) {
       const { sx, sy } = at(pixel);
       const [dx, dy] = await until(
-        () => centreOf(page, sx, sy, true, 8),
+        () => centreOf(page, { sx, sy }, 'warm', 8),
         ([, , weight]) => weight > 1000,
       );
       expect(Math.hypot(dx, dy)).toBeLessThan(0.1);
@@ -148,7 +99,7 @@ test.each(LOOKS)(
       const { sx, sy } = here!;
       if (sx < 20 || sy < 60 || sx > canvas.width - 260 || sy > canvas.height - 90) continue; // under readout and bars
       const [dx, dy, weight] = await until(
-        () => centreOf(page, sx, sy, false, REACH),
+        () => centreOf(page, { sx, sy }, 'cold', REACH),
         ([, , w]) => w > 500,
       );
       // across the line only: along it the window cuts it off
