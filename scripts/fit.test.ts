@@ -2,13 +2,17 @@ import { execFile } from 'node:child_process';
 import { mkdtemp, readFile, rm, truncate, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { fitCommand } from './fit/command';
+import { outcomeOf, type Outcome } from './headless';
 import cubeMarks from '@/tests/reference/cube-marks.json';
 
 const root = join(__dirname, '..');
 const reference = join(root, 'tests/reference/shells');
 const load = async (path: string) => JSON.parse(await readFile(join(reference, path), 'utf8'));
 
-const fit = (...args: string[]): Promise<{ code: number; stdout: string; stderr: string }> =>
+/** In this process; starting one takes a second. */
+const fit = (...args: string[]) => outcomeOf(fitCommand, args);
+const asProgram = (...args: string[]): Promise<Outcome> =>
   new Promise((resolve) => {
     execFile(
       process.execPath,
@@ -31,6 +35,15 @@ const KEYS =
   'model status parameters correlation chi2 dof aicc bic errorBars warnings residuals provenance extra rings';
 
 describe('npm run fit', () => {
+  it('as a program prints the same, and ends with the same code', async () => {
+    const marks = join(reference, 'cases/01-full-8x10.json');
+    for (const args of [
+      [marks, '--bootstrap=20'],
+      [marks, '--model=cube'],
+    ])
+      expect(await asProgram(...args)).toEqual(await fit(...args));
+  });
+
   it('prints one fit of marks on the sky and nothing else', async () => {
     const { code, stdout, stderr } = await fit(join(reference, 'cases/01-full-8x10.json'));
     expect({ code, stderr }).toEqual({ code: 0, stderr: '' });

@@ -2,31 +2,42 @@ import { execFile } from 'node:child_process';
 import { mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { outcomeOf, type Outcome } from './headless';
+import { inspectCommand } from './inspect/command';
 import { headerBytesOf } from '@/tests/reference/headerBytes';
 
 const root = join(__dirname, '..');
 const corpus = join(root, 'tests/reference/fits-corpus');
 
-interface Outcome {
-  code: number;
-  stdout: string;
-  stderr: string;
-}
-
 const work = mkdtempSync(join(tmpdir(), 'inspect-'));
-afterAll(() => rmSync(work, { recursive: true }));
+const { TMPDIR } = process.env;
+beforeAll(() => {
+  process.env.TMPDIR = work;
+});
+afterAll(() => {
+  if (TMPDIR === undefined) delete process.env.TMPDIR;
+  else process.env.TMPDIR = TMPDIR;
+  rmSync(work, { recursive: true });
+});
 
-const inspect = (...args: string[]): Promise<Outcome> =>
+/** In this process; starting one takes a second. */
+const inspect = (...args: string[]) => outcomeOf(inspectCommand, args);
+const asProgram = (...args: string[]): Promise<Outcome> =>
   new Promise((resolve) => {
     execFile(
       process.execPath,
       ['--import', 'tsx', 'scripts/inspect.ts', ...args],
-      { cwd: root, env: { ...process.env, TMPDIR: work } },
+      { cwd: root },
       (error, stdout, stderr) => resolve({ code: Number(error?.code ?? 0), stdout, stderr }),
     );
   });
 
 describe('npm run inspect', () => {
+  it('as a program prints the same, and ends with the same code', async () => {
+    for (const args of [[join(corpus, 'bitpix8.fits'), '--at=2,0,1'], [join(corpus, 'bitpix-12.fits')]])
+      expect(await asProgram(...args)).toEqual(await inspect(...args));
+  });
+
   it('prints one object about a cube, its places and its channels', async () => {
     const file = join(corpus, 'bitpix8.fits');
     const { code, stdout, stderr } = await inspect(
