@@ -165,7 +165,7 @@ export function PhoneCube({
     return (
       <View style={{ flex: 1, flexDirection: 'row', minHeight: 0 }}>
         {map}
-        <View style={{ width: Math.max(width * 0.44, 300), minHeight: 0 }}>
+        <View style={{ width: Math.max(width * 0.48, 300), minHeight: 0 }}>
           {strip}
           {sheet}
         </View>

@@ -4,20 +4,23 @@ import { Icon } from '../ui/Icon';
 import { Press } from '../ui/Press';
 import { Text } from '../ui/Text';
 import { useTheme } from '../ui/theme';
-import { hairline, inset, layout, radius, space } from '../ui/tokens';
+import { hairline, inset, layout, radius, space, touch } from '../ui/tokens';
+import { useWide } from '../ui/useWide';
 import { holds, sections } from './sections';
 
 /** The phone's navigation, under the thumb. */
 export function TabBar({ inbox }: { inbox: number }) {
   const { color } = useTheme();
   const path = usePathname();
+  const { low } = useWide();
+  const minHeight = low ? touch : layout.tabBar;
   return (
     <View
       role="navigation"
       aria-label="Main"
       style={{
         flexDirection: 'row',
-        minHeight: layout.tabBar,
+        minHeight,
         backgroundColor: color.panel,
         borderTopWidth: hairline,
         borderTopColor: color.line,
@@ -35,10 +38,11 @@ export function TabBar({ inbox }: { inbox: number }) {
             {...(current && ({ 'aria-current': 'page' } as object))}
             style={{
               flex: 1,
+              flexDirection: low ? 'row' : 'column',
               alignItems: 'center',
               justifyContent: 'center',
-              gap: space(1),
-              minHeight: layout.tabBar,
+              gap: space(low ? 2 : 1),
+              minHeight,
             }}
           >
             <View>

@@ -103,8 +103,8 @@ export const radius = { small: 6, large: 10, round: 999 } as const;
 export const hairline = 1;
 /** The least side of anything to be hit by a finger. */
 export const touch = 44;
-/** Columns from `wide` on, room for a second map from `roomy` on; widths in px. */
-export const breakpoints = { wide: 900, roomy: 1440 } as const;
+/** Columns from `wide` on, room for a second map from `roomy` on; a phone on its side below the height `low`; px. */
+export const breakpoints = { wide: 900, roomy: 1440, low: 480 } as const;
 /** Milliseconds; used only where motion explains, and not under reduced motion. */
 export const motion = { quick: 150, slow: 200 } as const;
 export const layout = {

@@ -1,8 +1,19 @@
 import { useWindowDimensions } from 'react-native';
 import { breakpoints } from './tokens';
 
-/** wide: columns and a top bar; roomy: room for a second map. Neither: a phone. */
-export function useWide(): { width: number; height: number; wide: boolean; roomy: boolean } {
+export interface Room {
+  width: number;
+  height: number;
+  /** Columns and a top bar; else a phone. */
+  wide: boolean;
+  /** Room for a second map. */
+  roomy: boolean;
+  /** A phone on its side: every row of pixels counts. */
+  low: boolean;
+}
+
+export function useWide(): Room {
   const { width, height } = useWindowDimensions();
-  return { width, height, wide: width >= breakpoints.wide, roomy: width >= breakpoints.roomy };
+  const wide = width >= breakpoints.wide;
+  return { width, height, wide, roomy: width >= breakpoints.roomy, low: !wide && height < breakpoints.low };
 }
