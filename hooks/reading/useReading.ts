@@ -20,7 +20,7 @@ import { useRead } from '@/hooks/useRead';
 import type { Reading, ReadingDraft } from '@/shared/contract/readings';
 
 /** Marks rest this long before they are sent, so that a row of taps is one save. */
-const DEBOUNCE_MS = 600;
+const DEBOUNCE_MS = 250;
 /** After a lost connection, unless the browser says earlier that it is back. */
 const AGAIN_MS = 4000;
 /** A connection that gives no answer for this long is taken for lost. */
