@@ -6,6 +6,10 @@ const here = __dirname.replace(/[.*+?^${}()|[\]\\]/g, '\\$&'); // anchored: pack
 config.resolver.blockList = [
   new RegExp(`^${here}/(server|workers|migrations|tests|data|dist[^/]*)/.*`),
 ].concat(config.resolver.blockList ?? []);
+// A module runs when it is first used, so that a page does not wait for what other screens are made of.
+config.transformer.getTransformOptions = async () => ({
+  transform: { experimentalImportSupport: false, inlineRequires: true },
+});
 // In dev the page comes from Metro; /api and /auth go on to Express (API_PORT).
 const target = { host: '127.0.0.1', port: Number(process.env.API_PORT ?? 3000) };
 config.server.enhanceMiddleware = (metro) => (req, res, next) => {
