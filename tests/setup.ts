@@ -1,4 +1,4 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import knexFactory from 'knex';
@@ -25,6 +25,8 @@ export default async function setup() {
     throw error;
   }
   process.env.TEST_CLUSTER_URL = cluster.url;
+  process.env.TEST_BROWSERS = join(dir, 'browsers');
+  mkdirSync(process.env.TEST_BROWSERS);
 }
 
 async function makeTemplate(clusterUrl: string) {

@@ -25,8 +25,9 @@ export const needs = {
   chromium: {
     name: 'Chromium',
     present: () =>
-      Boolean(process.env.CHROMIUM) || ['chromium', 'chromium-browser', 'google-chrome'].some(onPath),
-    packages: ['chromium', 'fonts-liberation'],
+      Boolean(process.env.CHROMIUM) ||
+      ['chromium-headless-shell', 'chromium', 'chromium-browser', 'google-chrome'].some(onPath),
+    packages: ['chromium-headless-shell', 'fonts-liberation'],
     otherwise: 'set CHROMIUM to the path of its program',
   },
   numpy: {

@@ -42,7 +42,7 @@ export interface Product {
   stop(): Promise<void>;
 }
 
-const port = () =>
+export const freePort = () =>
   new Promise<number>((resolve) => {
     const probe = createServer().listen(0, '127.0.0.1', () => {
       const found = (probe.address() as AddressInfo).port;
@@ -55,7 +55,7 @@ export async function startProduct(env: Record<string, string> = {}): Promise<Pr
   const dataDir = mkdtempSync(join(tmpdir(), 'outswell-files-'));
   const config = loadConfig({
     NODE_ENV: 'test',
-    PORT: String(await port()),
+    PORT: String(await freePort()),
     DATABASE_URL: database.url,
     DATA_DIR: dataDir,
     SESSION_SECRET: 'a secret of the tests, long enough for anybody',

@@ -1,10 +1,10 @@
 /** A whole product with its built client, and people who use it in Chromium. */
 import { mkdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import type { Browser, BrowserContext, Page } from 'playwright-core';
-import { launch } from '@/scripts/chromium';
+import type { BrowserContext, Page } from 'playwright-core';
 import { signInAt, startProduct, type Product } from '../api/harness';
 import { cookieOf } from '../api/uploading';
+import { makeProfiles, takePlace } from './profiles';
 
 export interface Screen {
   name: string;
@@ -23,37 +23,34 @@ const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
 
 export interface Stage {
   product: Product;
-  browser: Browser;
+  /** A page of a context that nobody else uses until it is closed. */
   open(screen: Screen, login?: string): Promise<{ page: Page; context: BrowserContext; errors: string[] }>;
   close(): Promise<void>;
 }
 
 export async function openStage(env: Record<string, string> = {}): Promise<Stage> {
-  const product = await startProduct(env);
+  const place = await takePlace();
+  const product = await startProduct({ PORT: String(place.port), ...env });
   await product.startWorker();
-  const browser = await launch();
+  const profiles = makeProfiles(product.url, place.folder);
   return {
     product,
-    browser,
     async open(screen, login) {
-      const context = await browser.newContext({
-        viewport: { width: screen.width, height: screen.height },
-        hasTouch: screen.touch,
-        colorScheme: screen.theme,
-        baseURL: product.url,
-        acceptDownloads: true,
-      });
-      // what is offered to new people stays away, except where it is what is tried
-      if (!screen.guide) await context.addInitScript(`localStorage.setItem('outswell.guide.all', 'seen')`);
+      const context = await profiles.lend(screen.touch);
       const page = await context.newPage();
+      await page.setViewportSize({ width: screen.width, height: screen.height });
+      await page.emulateMedia({ colorScheme: screen.theme });
+      // what is offered to new people stays away, except where it is what is tried
+      if (!screen.guide) await page.addInitScript(`localStorage.setItem('outswell.guide.all', 'seen')`);
       const errors: string[] = [];
       page.on('pageerror', (error) => errors.push(String(error)));
       if (login) await context.addCookies([await sessionOf(product.url, login)]);
       return { page, context, errors };
     },
     async close() {
-      await browser.close();
+      await profiles.end();
       await product.stop();
+      place.leave();
     },
   };
 }
@@ -78,8 +75,9 @@ export async function signIn(page: Page, login: string): Promise<void> {
   await page.waitForURL((url) => !/local-sign-in|auth/.test(url.pathname));
 }
 
-/** Kept for a look by eye; no test compares pixels. */
+/** With SHOTS=1 a picture for a look by eye; no test compares pixels, and each takes half a second. */
 export async function shot(page: Page, screen: Screen, name: string): Promise<void> {
+  if (!process.env.SHOTS) return;
   mkdirSync(SHOTS, { recursive: true });
   await page.screenshot({ path: join(SHOTS, `${name}-${screen.name}.png`) });
 }

@@ -56,6 +56,7 @@ describe.each([PHONE, WIDE])('on a $name screen', (screen: Screen) => {
   };
   /** The whole page in one picture, for a look by eye: the frame scrolls inside the window. */
   const wholePage = async (name: string, height: number) => {
+    if (!process.env.SHOTS) return;
     await page.setViewportSize({ width: screen.width, height });
     await page.waitForTimeout(400);
     await shot(page, screen, name);

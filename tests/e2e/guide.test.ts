@@ -16,6 +16,7 @@ test.each<[string, Screen]>([
   ['wide', WIDE],
 ])('five cards on a %s screen, offered once', async (_, screen) => {
   const { page, context, errors } = await stage.open({ ...screen, guide: true }, 'lena');
+  await page.goto('/regions');
   const offer = page.getByRole('region', { name: 'Guide' });
   await offer.waitFor();
   expect(await violations(page)).toEqual([]);
@@ -45,6 +46,7 @@ test.each<[string, Screen]>([
 
 test('who refuses it is not asked again, and finds it under the keys; Escape leaves it', async () => {
   const { page, context } = await stage.open({ ...WIDE, guide: true }, 'lena');
+  await page.goto('/regions');
   await page.getByRole('button', { name: 'No, thanks' }).click();
   await page.reload();
   await page.getByRole('heading', { name: 'Regions' }).waitFor();

@@ -15,6 +15,8 @@ import { painted } from './markingHands';
 jest.setTimeout(60_000);
 const CHANNEL = 16;
 const WHOLE = { zoom: 1, x: 31.5, y: 29.5 };
+/** A sign weighs several times this; a coordinate line or the edge of a label that comes near, less than half of it. */
+const DRAWN = 1000;
 let stage: Stage;
 let people: Record<'lead' | 'analyst' | 'reader', SignedIn>;
 let made: Fixture;
@@ -63,7 +65,7 @@ test('a reader sees the marks that a fit froze and the traced rim where they lie
   for (const mark of marksOnRing(CHANNEL)) {
     const [dx, dy] = await until(
       () => centreOf(page, at(mark), 'warm', 7),
-      ([, , weight]) => weight > 1000,
+      ([, , weight]) => weight > DRAWN,
     );
     expect(Math.hypot(dx, dy)).toBeLessThan(0.1 * scale);
   }
@@ -71,10 +73,11 @@ test('a reader sees the marks that a fit froze and the traced rim where they lie
   const found = outcome!.sectors.filter((s) => s.channel === CHANNEL && s.rejected === null);
   expect(found.length).toBeGreaterThan(20);
   let seen = 0;
-  for (const { x, y } of found) if ((await centreOf(page, at({ x: x!, y: y! }), 'light', 6))[2] > 200) seen++;
+  for (const { x, y } of found)
+    if ((await centreOf(page, at({ x: x!, y: y! }), 'light', 6))[2] > DRAWN) seen++;
   expect(seen / found.length).toBeGreaterThan(0.9); // labels may lie over the others
   const [, , nothing] = await centreOf(page, at({ x: 32, y: 40 }), 'light', 6); // half way to the rim
-  expect(nothing).toBe(0);
+  expect(nothing).toBeLessThan(DRAWN / 2);
   await context.close();
 });
 
@@ -86,7 +89,8 @@ test('who marks sees neither before a fit of the own reading, whatever the addre
   expect(await page.getByRole('checkbox', { name: /Traced rim/ }).isDisabled()).toBe(true);
   await page.keyboard.press('Escape');
   const { at } = await placed(page, WHOLE);
-  for (const mark of marksOnRing(CHANNEL)) expect((await centreOf(page, at(mark), 'warm', 7))[2]).toBe(0);
+  for (const mark of marksOnRing(CHANNEL))
+    expect((await centreOf(page, at(mark), 'warm', 7))[2]).toBeLessThan(DRAWN / 2);
 
   const readingId = await saveMarks(people.analyst, made.shellId, made.cubeId);
   await finishedFit(people.analyst, made.shellId, readingId);
