@@ -119,6 +119,14 @@ describe('npm run fit', () => {
     expect(parameters.vExp.constraint).toBeUndefined();
   });
 
+  it('takes marks of drawn circles for what they are', async () => {
+    const json = await load('cases/01-full-8x10.json');
+    json.marks = json.marks.map((m: object) => ({ ...m, drawn: true }));
+    const { code, stdout } = await fit(await file('drawn.json', json));
+    expect(code).toBe(0);
+    expect(JSON.parse(stdout).warnings).toContainEqual(expect.objectContaining({ code: 'drawn-circles' }));
+  });
+
   it('keeps all marks when told so', async () => {
     const marks = join(reference, 'cases/07-outliers.json');
     const [on, off] = await Promise.all([fit(marks, '--robust=on'), fit(marks, '--robust', 'off')]);

@@ -12,12 +12,12 @@ import { ParameterName, Quantity } from '@/components/ui/Quantity';
 import { Text } from '@/components/ui/Text';
 import { useTheme } from '@/components/ui/theme';
 import { hairline, space } from '@/components/ui/tokens';
-import type { FitResult } from '@/shared/shell/fitResult';
+import type { FitResult, WarningCode } from '@/shared/shell/fitResult';
 import { separation } from '@/shared/sky/greatCircle';
 
 const SHOWN = ['l', 'b', 'theta', 'vSys', 'vExp'] as const;
 const SOURCES = { trial: 'trial model', live: 'live fit', record: 'fit of record' } as const;
-const TITLES: Record<string, string> = {
+const TITLES: Record<WarningCode, string> = {
   'few-channels': 'Few channels',
   'vexp-unconstrained': 'Expansion velocity not bounded',
   'one-sided': 'One side only',
@@ -25,6 +25,11 @@ const TITLES: Record<string, string> = {
   outliers: 'Marks set aside',
   'poor-fit': 'Poor fit',
   'start-failed': 'Not settled',
+  'not-converged': 'Not settled',
+  'at-bound': 'At a bound',
+  'prior-dominated': 'Led by the prior',
+  'coarse-channels': 'Wide channels',
+  'drawn-circles': 'Drawn circles',
 };
 
 /** The fit as the marks stand: diagram, parameters, and what limits them beside them. */

@@ -17,7 +17,7 @@ const LONGEST_NOTE = 500;
 
 /** Error, confidence and note of the selected marks: of one, or of all that a lasso holds. */
 export function MarkDetails() {
-  const { chosen, canMark, describeMarks, usualSigma } = useSession();
+  const { axes, chosen, canMark, describeMarks, usualSigma } = useSession();
   const ids = chosen.map((mark) => mark.id);
   const who = ids.join();
   const sigma = common(chosen.map((mark) => mark.sigma ?? null));
@@ -57,7 +57,11 @@ export function MarkDetails() {
         onBlur={keepSigma}
         onSubmitEditing={keepSigma}
         problem={wrong ? `A number of degrees above 0, at most ${MOST_SIGMA}.` : null}
-        hint={usualSigma === undefined ? undefined : `Half the beam is ${usualSigma}°.`}
+        hint={
+          axes.beam
+            ? `Half the beam is ${usualSigma}°.`
+            : `The header names no beam; half of three pixels is ${usualSigma}°.`
+        }
       />
       <Field
         label="Note"
@@ -68,10 +72,10 @@ export function MarkDetails() {
         onBlur={keepNote}
         onSubmitEditing={keepNote}
       />
-      {usualSigma !== undefined && sigma !== usualSigma && (
+      {sigma !== usualSigma && (
         <Button
           kind="quiet"
-          label="Take half the beam"
+          label={axes.beam ? 'Take half the beam' : 'Take half of three pixels'}
           onPress={() => describeMarks(ids, { sigma: usualSigma })}
         />
       )}

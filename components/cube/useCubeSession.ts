@@ -110,6 +110,7 @@ export function useCubeSession(cube: Cube, axes: CubeAxes, wcs: Wcs, start: Cube
     seen,
     expected:
       own?.theta ?? (model && modelRadius(wcs.velocityOf(channel), axes.spectral.channelWidth, model)),
+    usualSigma,
     addMarks,
     say: marking.said.set,
   });

@@ -1,5 +1,6 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { nudged, nudgeStep } from '@/components/cube/nudge';
+import { degreesPerPixel } from '@/components/cube/Readout';
 import { useSelection, type Selection } from '@/components/cube/useSelection';
 import { degrees } from '@/components/cube/words';
 import type { MapTool } from '@/components/map/gestures';
@@ -11,6 +12,7 @@ import { valueStore, type ValueStore } from '@/hooks/valueStore';
 import type { CubeAxes } from '@/shared/contract/cubes';
 import { inPolygon } from '@/shared/image/polygon';
 import { within, type ImagePoint } from '@/shared/image/viewport';
+import { PIXELS_A_BEAM } from '@/shared/shell/assumedBeam';
 import type { Wcs } from '@/shared/sky/wcs';
 
 export interface Marking extends Selection {
@@ -19,8 +21,8 @@ export interface Marking extends Selection {
   setTool: (tool: MapTool) => void;
   /** What was done, for who does not see the map. */
   said: ValueStore<string>;
-  /** Half the beam, degrees: the error a mark begins with; undefined where the header names no beam. */
-  usualSigma: number | undefined;
+  /** Half the beam, degrees: the error a mark begins with. Where the header names no beam, three pixels are taken for it. */
+  usualSigma: number;
   placeMark: (at: ImagePoint, by?: 'pointer' | 'keys') => void;
   /** Several at once, as one step of undo. Places outside the image are left out. */
   addMarks: (at: readonly (ImagePoint & { sigma?: number })[], placed: 'suggested' | 'ring') => void;
@@ -52,7 +54,10 @@ export function useMarking(input: Input): Marking {
   const [said] = useState(() => valueStore(''));
   const selection = useSelection(marks, channel);
   const { chosen, select, selectMany } = selection;
-  const usualSigma = useMemo(() => (axes.beam ? fourDigits(axes.beam.major / 2) : undefined), [axes.beam]);
+  const usualSigma = useMemo(
+    () => fourDigits(axes.beam ? axes.beam.major / 2 : 0.5 * PIXELS_A_BEAM * degreesPerPixel(axes, wcs)),
+    [axes, wcs],
+  );
   const burst = useRef({ name: '', time: 0 });
   const here = useRef({ ...input, chosen });
   useEffect(() => {
@@ -159,12 +164,12 @@ export function useMarking(input: Input): Marking {
   };
 }
 
-const newMark = (at: ImagePoint, channel: number, sigma: number | undefined) => ({
+const newMark = (at: ImagePoint, channel: number, sigma: number) => ({
   id: newMarkId(),
   channel,
   x: round(at.x),
   y: round(at.y),
-  ...(sigma !== undefined && { sigma }),
+  sigma,
 });
 
 /** A thousandth of a pixel is finer than any hand. */

@@ -13,6 +13,7 @@ import {
   ringPlaces,
   ringThrough,
   sectorAt,
+  sigmaFactor,
   SECTORS,
   withErased,
   withTheta,
@@ -39,7 +40,9 @@ interface Input {
   seen: Pick<SeenSky, 'sky' | 'nx' | 'ny'>;
   /** What a ring begun by keys is as wide as, degrees: the ring or the model seen here; null where there is none. */
   expected: number | null;
-  addMarks: (at: readonly ImagePoint[], placed: 'ring') => void;
+  /** Of one mark by hand, degrees. */
+  usualSigma: number;
+  addMarks: (at: readonly (ImagePoint & { sigma: number })[], placed: 'ring') => void;
   say: (what: string) => void;
 }
 
@@ -116,8 +119,11 @@ export function useRingTool(input: Input): RingTool {
   const confirm = useCallback(() => {
     const draft = store.ring.get();
     if (!draft) return;
-    latest.current.addMarks(
-      ringPlaces(draft).flatMap(({ lon, lat }) => wcs.galacticToPixel(lon, lat) ?? []),
+    const { addMarks, usualSigma } = latest.current;
+    const sigma = Number((usualSigma * sigmaFactor(draft)).toPrecision(4));
+    const places = ringPlaces(draft).flatMap(({ lon, lat }) => wcs.galacticToPixel(lon, lat) ?? []);
+    addMarks(
+      places.map((at) => ({ ...at, sigma })),
       'ring',
     );
     store.ring.set(null);

@@ -12,7 +12,7 @@ export function useWhereNext(
   live: LiveFit,
   axes: CubeAxes,
   wcs: Wcs,
-  usualSigma: number | undefined,
+  usualSigma: number,
 ): readonly NextChannel[] {
   // Rings and fit follow the marks first.
   const { fit, marks } = useDeferredValue(live);
@@ -35,7 +35,7 @@ export function useWhereNext(
       shell,
       channelWidth: axes.spectral.channelWidth,
       velocities,
-      sigma: usualSigma ?? fit.extra.sigmaUsedDeg,
+      sigma: usualSigma,
       shared: Math.max(fit.extra.scales.ringDeg, 0),
     });
     return bestApart(channels, APART * shell.vExp);

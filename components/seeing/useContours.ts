@@ -21,7 +21,15 @@ export interface Contours {
   problem: string | null;
 }
 
-const NONE: Contours = { lines: [], levels: [], ends: null, unit: null, of: null, words: null, problem: null };
+const NONE: Contours = {
+  lines: [],
+  levels: [],
+  ends: null,
+  unit: null,
+  of: null,
+  words: null,
+  problem: null,
+};
 /** The usual levels lie in the upper part of what a map spans: lower down they follow noise. */
 const LOWEST_SHARE = 0.35;
 

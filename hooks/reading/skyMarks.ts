@@ -11,11 +11,11 @@ export interface SkyRimMark extends SkyMark {
 
 /** Marks on the sky; a mark outside the projection has no place there and is left out. */
 export function skyMarks(marks: readonly PlacedMark[], wcs: Wcs): SkyRimMark[] {
-  return marks.flatMap(({ id, channel, x, y, sigma }) => {
+  return marks.flatMap(({ id, channel, x, y, sigma, placed }) => {
     const at = wcs.pixelToGalactic(x, y);
     if (!at) return [];
     const mark: SkyRimMark = { id, channel, l: at.l, b: at.b, velocity: wcs.velocityOf(channel) };
-    return [sigma === undefined ? mark : { ...mark, sigma }];
+    return [{ ...mark, ...(sigma !== undefined && { sigma }), ...(placed === 'ring' && { drawn: true }) }];
   });
 }
 

@@ -21,7 +21,7 @@ export function marksOnSky(json: unknown, file: string): Placed {
 export function marksOnCube(head: CubeHead, json: unknown, file: string): Placed {
   const { marks, channelWidth, vSys } = check(PixelMarksFile, json, file);
   const wcs = buildWcs(head.wcs);
-  const placed = marks.map(({ channel, x, y, sigma }, i) => {
+  const placed = marks.map(({ channel, x, y, ...said }, i) => {
     if (channel >= head.shape.channels)
       throw new Problem(
         'invalid-input',
@@ -33,7 +33,7 @@ export function marksOnCube(head: CubeHead, json: unknown, file: string): Placed
       throw new Problem('invalid-input', `Mark ${i} lies where this projection shows no sky. Remove it.`, {
         field: `marks.${i}`,
       });
-    return { ...place, velocity: wcs.velocityOf(channel), ...(sigma === undefined ? {} : { sigma }) };
+    return { ...place, velocity: wcs.velocityOf(channel), ...said };
   });
   return {
     input: { marks: placed, channelWidth: channelWidth ?? wcs.velocityStep, vSys },

@@ -8,7 +8,11 @@ export const engineInput = (
   { vSys, constraints }: Pick<FitOptions, 'vSys' | 'constraints'>,
 ): FitInput => ({
   channelWidth,
-  marks: marks.map(({ l, b, velocity, sigma }) => ({ l, b, velocity, ...(sigma !== null && { sigma }) })),
+  marks: marks.map(({ l, b, velocity, sigma, placed }) => ({
+    ...{ l, b, velocity },
+    ...(sigma !== null && { sigma }),
+    ...(placed === 'ring' && { drawn: true }),
+  })),
   ...(vSys && { vSys }),
   ...(constraints && { constraints }),
   ...(traced && { traced }),

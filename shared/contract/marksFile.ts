@@ -2,12 +2,17 @@ import { z } from 'zod';
 
 /** marks.json of the headless fit: rim marks on the sky, or, beside a cube, in its pixels and channels. */
 const sigma = z.number().positive().optional().describe('position error, degrees');
+const drawn = z
+  .boolean()
+  .optional()
+  .describe('made by drawing a circle: its own marks do not scatter about it');
 
 export const SkyMarkEntry = z.strictObject({
   l: z.number().describe('galactic longitude, degrees'),
   b: z.number().min(-90).max(90).describe('galactic latitude, degrees'),
   velocity: z.number().describe('km/s'),
   sigma,
+  drawn,
 });
 
 export const PixelMarkEntry = z.strictObject({
@@ -15,6 +20,7 @@ export const PixelMarkEntry = z.strictObject({
   x: z.number().describe('pixel, 0 at the centre of the first'),
   y: z.number(),
   sigma,
+  drawn,
 });
 
 const vSys = z

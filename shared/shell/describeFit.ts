@@ -53,6 +53,7 @@ export function describeFit(solved: Solved, options: FitOptions): FitResult {
     unconstrained: outcome.atBound === 'high',
     channels: marks.channels,
     marks: all.count,
+    drawn: all.drawn,
     setAside: setAside.length,
     seLnVExp,
     reach: { low: (marks.velocity[0]! - p[V0]!) / w, high: (marks.velocity.at(-1)! - p[V0]!) / w },

@@ -12,6 +12,8 @@ export interface SkyMark {
   b: number;
   velocity: number;
   sigma?: number;
+  /** It was made, with others, by one circle that a person drew: their scatter about it says nothing of their error. */
+  drawn?: boolean;
 }
 
 export interface FitInput {
@@ -61,6 +63,7 @@ export function readMarks(input: FitInput, model: ModelName): MarkSet {
     channel: Int32Array.from(channelOf),
     velocity: Float64Array.from(velocity),
     width: channelWidth,
+    drawn: marks.filter((m) => m.drawn).length,
     ...errorBlocks(
       marks.map((m) => m.velocity),
       channelOf,

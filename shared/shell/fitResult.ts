@@ -33,7 +33,8 @@ export type WarningCode =
   | 'not-converged'
   | 'at-bound'
   | 'prior-dominated'
-  | 'coarse-channels';
+  | 'coarse-channels'
+  | 'drawn-circles';
 
 export interface FitWarning {
   code: WarningCode;

@@ -19,6 +19,8 @@ export interface MarkSet {
   blocks: number;
   /** What no scatter among the marks of a traced rim shows; null for a person's marks. */
   unseen: UnseenErrors | null;
+  /** How many of the marks came from drawn circles. */
+  drawn: number;
 }
 
 /** Standard errors that come on top: of theta (rad), of v_sys (km/s) and of ln v_exp. */
@@ -43,6 +45,7 @@ export function subset(marks: MarkSet, keep: (mark: number) => boolean): MarkSet
     width: marks.width,
     ...numbered(kept.map((i) => marks.block[i]!)),
     unseen: marks.unseen,
+    drawn: marks.drawn,
   };
 }
 

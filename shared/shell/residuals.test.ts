@@ -119,6 +119,7 @@ describe('residuals of the marks', () => {
       block: Int32Array.from(points, (_, i) => i % 5),
       blocks: 5,
       unseen: null,
+      drawn: 0,
     };
   }
 

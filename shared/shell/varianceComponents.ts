@@ -21,6 +21,8 @@ const TIE = 0.1;
 /** Fewer spare rings than this: the ring scatter is invisible and assumed to equal one mark's error. */
 const SPARE_RINGS = 0.5;
 const LEAST_MARK_SCALE = 0.02;
+/** Marks of one drawn circle lie on it exactly: their stated error is then the least that is believed. */
+const LEAST_DRAWN_SCALE = 1;
 
 /**
  * Estimate the scales by equating four quadratic forms of the residuals to their expectations (Henderson 1953;
@@ -73,7 +75,8 @@ export function estimateScales(
     Q[2] = 0;
   }
   const [mark, spread, ring, shift] = solveScaled(E, Q) as [number, number, number, number];
-  return { mark: Math.max(mark, LEAST_MARK_SCALE), spread: Math.max(spread, 0), ring, shift };
+  const least = marks.drawn > 0 ? LEAST_DRAWN_SCALE : LEAST_MARK_SCALE;
+  return { mark: Math.max(mark, least), spread: Math.max(spread, 0), ring, shift };
 }
 
 /**

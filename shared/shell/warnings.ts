@@ -18,6 +18,8 @@ export interface Findings {
   unconstrained: boolean;
   channels: number;
   marks: number;
+  /** Marks that drawn circles made. */
+  drawn: number;
   setAside: number;
   seLnVExp: number;
   /** Lowest and highest (v - v_sys)/v_exp among the marks in the fit. */
@@ -59,6 +61,12 @@ export function warningsOf(f: Findings): FitWarning[] {
       'start-failed',
       'The fit did not settle from any of its start values, so its numbers are only where it stopped. ' +
         'Look at the marks with the largest residuals, or mark more channels.',
+    );
+  if (f.drawn > 0)
+    warn(
+      'drawn-circles',
+      `${f.drawn} of ${f.marks} marks were made by drawing circles. Marks of one circle cannot scatter about it, so the ` +
+        'error bars rest on the position error that is stated for them. Marks by hand, or a traced rim, would show it.',
     );
   if (f.channels <= FEW_CHANNELS)
     warn(

@@ -211,6 +211,7 @@ test('mouse: a ring from centre to rim is adjusted, partly erased, and becomes m
     const angle = (Math.atan2(m.y - SHELL.y, m.x - SHELL.x) * 180) / Math.PI;
     expect(angle > 98 || angle < -158).toBe(false);
     expect(m.placed).toBe('ring');
+    expect(m.sigma).toBeGreaterThan(0.075); // nine marks on three quarters of a circle tell less each than eight on all of it
   }
   await page.getByRole('button', { name: 'Undo', exact: true }).click();
   await saved(shellId, (r) => r.marks.length === 0);

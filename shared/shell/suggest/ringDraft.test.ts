@@ -5,6 +5,7 @@ import {
   ringPlaces,
   ringThrough,
   seenArcs,
+  sigmaFactor,
   withErased,
   withMarks,
   withTheta,
@@ -21,6 +22,13 @@ test('a circle goes through its rim, and its marks lie on it at great-circle dis
   expect(positionAngle(centre, places[0]!)).toBeCloseTo(draft.handle, 8);
   const angles = markAngles(draft);
   expect((angles[1]! - angles[0]! + 360) % 360).toBeCloseTo(45, 8);
+});
+
+test('a circle weighs as much whatever number of marks it becomes, in proportion to what of it is seen', () => {
+  const weight = (d: typeof draft) => d.marks / sigmaFactor(d) ** 2;
+  for (const marks of [6, 8, 16]) expect(weight(withMarks(draft, marks))).toBeCloseTo(MARKS.usual, 9);
+  const half = withErased(draft, 2, 178, true); // 36 of 72 sectors
+  for (const marks of [6, 16]) expect(weight(withMarks(half, marks))).toBeCloseTo(MARKS.usual / 2, 9);
 });
 
 test('marks keep to what is seen, and as many of them as wished', () => {

@@ -45,6 +45,16 @@ export const withMarks = (draft: RingDraft, marks: number): RingDraft => ({
   marks: Math.min(Math.max(Math.round(marks), MARKS.least), MARKS.most),
 });
 
+/**
+ * How many times the usual position error each mark of the circle has, so that the circle weighs as much whatever number
+ * of marks it becomes: as much as `MARKS.usual` marks around the whole of it, in proportion to what of it is seen. A
+ * convention: nobody draws a circle better because it is cut into more pieces.
+ */
+export function sigmaFactor({ marks, erased }: RingDraft): number {
+  const seen = erased.filter((e) => !e).length / SECTORS;
+  return Math.sqrt(marks / (MARKS.usual * Math.max(seen, 1 / SECTORS)));
+}
+
 export const sectorAt = (angle: number): number => Math.floor(wrap360(angle) / SECTOR) % SECTORS;
 
 /** Erase, or restore, the sectors from one direction to another, the shorter way round and both ends with it. */

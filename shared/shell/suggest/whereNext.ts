@@ -106,6 +106,7 @@ function addInformation(sum: Float64Array, marks: readonly SkyMark[], task: Next
     block: new Int32Array(marks.length),
     blocks: 1,
     unseen: null,
+    drawn: 0,
   };
   const frame = frameAt(set, unitVector({ lon: shell.l, lat: shell.b }));
   const p = Float64Array.of(0, 0, shell.theta * DEGREE, shell.vSys, Math.log(shell.vExp));

@@ -2,6 +2,7 @@ import { Problem } from '@/shared/contract/problem';
 import type { Edge } from '@/shared/contract/traces';
 import { separation } from '@/shared/sky/greatCircle';
 import type { Wcs } from '@/shared/sky/wcs';
+import { PIXELS_A_BEAM } from '@/shared/shell/assumedBeam';
 import { modelRing, type FittedShell, type ModelRing } from '@/shared/shell/modelRing';
 
 /** What a trace starts from. */
@@ -32,7 +33,6 @@ export interface TracePlan extends Omit<TraceTask, 'beam'> {
 
 /** Nearer to a cap than this the ring is a smudge; and what is seen there bends v_exp. */
 const FURTHEST = 0.9;
-const PIXELS_A_BEAM = 3;
 
 /**
  * Which channels of a cube to trace, and with what.
