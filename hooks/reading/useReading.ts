@@ -21,6 +21,8 @@ import type { Reading, ReadingDraft } from '@/shared/contract/readings';
 
 /** Marks rest this long before they are sent, so that a row of taps is one save. */
 const DEBOUNCE_MS = 250;
+/** So many marks are written to the browser's storage within a frame. */
+const AT_ONCE = 1000;
 /** After a lost connection, unless the browser says earlier that it is back. */
 const AGAIN_MS = 4000;
 /** A connection that gives no answer for this long is taken for lost. */
@@ -164,7 +166,7 @@ function useHistory(personId: string | null, { ready, shellId, marks, undo, redo
 }
 
 /**
- * Keep unsaved marks in the browser: a moment after each change, when the page may go away, and when the person turns
+ * Keep unsaved marks in the browser: with each change, when the page may go away, and when the person turns
  * to another shell. In the last case they are sent as well; should that fail, they wait here for the next visit.
  */
 function useDraft(personId: string | null, state: ReadingState, cubeId: string): void {
@@ -178,6 +180,8 @@ function useDraft(personId: string | null, state: ReadingState, cubeId: string):
       keepDraft(key, null);
       return;
     }
+    // at once, since a page can end without notice; of very many marks only once they rest
+    if (state.marks.length <= AT_ONCE) return void keepDraft(key, draftOf(state));
     const timer = setTimeout(() => keepDraft(key, draftOf(state)), 120);
     return () => clearTimeout(timer);
   }, [key, ready, dirty, state]);

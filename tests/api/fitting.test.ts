@@ -68,7 +68,7 @@ test('a fit begins where it is told to, keeps that, and finds the same shell', a
   for (const wrong of [{ theta: 0 }, { theta: 90 }, { vExp: -1 }]) {
     const refused = await lead
       .post(`/shells/${shellId}/fits`, { readingId, options: { start: { ...start, ...wrong } } })
-      .expect(400);
+      .expect(422);
     expect(refused.body.field).toBe(`options.start.${Object.keys(wrong)[0]}`);
   }
 });
