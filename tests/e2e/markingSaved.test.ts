@@ -86,20 +86,22 @@ test('without a line nothing is lost: marks, moves and undo wait, through a clos
   await shot(page, WIDE, 'marking-offline');
   expect((await readingOf(lead, shellId)).marks).toHaveLength(1);
   const address = page.url();
+  // while a page closes, the browser gives it the line back for a moment
+  await page.evaluate(`window.fetch = () => Promise.reject(new TypeError('no line'))`);
   await page.close();
 
   // back, but the first attempts to save still fail
   await context.setOffline(false);
-  const again = await context.newPage();
-  await again.route('**/readings/mine', (route) =>
+  await context.route('**/readings/mine', (route) =>
     route.request().method() === 'PUT' ? route.abort() : route.continue(),
   );
+  const again = await context.newPage();
   await again.goto(address);
   await again
     .getByTestId('save-state')
     .getByText(/^offline: 3 waiting$/)
     .waitFor();
-  await again.unroute('**/readings/mine');
+  await context.unroute('**/readings/mine');
   await again.evaluate(`window.dispatchEvent(new Event('online'))`);
   const { marks } = await until(
     () => readingOf(lead, shellId),

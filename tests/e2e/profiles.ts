@@ -75,6 +75,7 @@ async function begin(url: string, folder: string, touch: boolean): Promise<Kept>
   };
   const clean = async () => {
     for (const page of context.pages()) if (page !== blank) await page.close();
+    await context.unrouteAll({ behavior: 'ignoreErrors' });
     await context.setOffline(false);
     await context.clearPermissions();
     await context.clearCookies();
