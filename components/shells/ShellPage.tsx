@@ -71,7 +71,11 @@ function Content({ shell }: { shell: Shell }) {
   const fits = useFits(shell.id);
   const done = (fits.data?.items ?? []).filter(isDone);
   const shown = done.find((f) => f.id === shell.adoptedFitId) ?? done[0] ?? null;
-  const side = (
+  const settled = fits.data !== undefined || fits.problem !== null;
+  // the list of fits pushes down what is below it, and the measures are longer where no fit stands beside them
+  const side = !settled ? (
+    <SkeletonRows rows={4} height={140} label="Loading fits and distances" />
+  ) : (
     <View style={{ gap: space(4), alignSelf: 'stretch' }}>
       <MeasuresPanel shell={shell} brief={shown !== null && shown.id === shell.adoptedFitId} />
       <FitList shell={shell} />
