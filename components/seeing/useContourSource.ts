@@ -44,6 +44,6 @@ const nameOfImage = (image: SkyImage | undefined) => ({
   unit: image?.unit ?? null,
 });
 const nameOfMap = (cube: Cube | undefined, kind: MapKind | null) => ({
-  name: cube && kind ? `${VIEWS[kind].long.toLowerCase()} of ${cube.name}` : null,
+  name: cube && kind ? `${VIEWS[kind].label.toLowerCase()} of ${cube.name}` : null,
   unit: kind ? unitOf(kind, cube?.axes?.unit ?? null) : null,
 });

@@ -327,6 +327,10 @@ test('the diagram sets a trial model by mouse and keyboard, its ring follows on 
   expect(await violations(page)).toEqual([]);
   await page.getByRole('button', { name: 'Fit from here' }).click();
   await page.getByText(/^Started from Θ/).waitFor();
+  await page.getByRole('button', { name: 'Options of the fit' }).click();
+  expect(await page.getByRole('checkbox', { name: /^Begin with Θ .*, set by hand$/ }).isChecked()).toBe(true);
+  await shot(page, WIDE, 'marking-start');
+  await page.getByRole('button', { name: 'Cancel' }).click();
   expect(await crown.getAttribute('aria-valuetext')).toBe(fitted);
   await page.getByRole('button', { name: 'Usual start' }).click();
   await foot.press('ArrowLeft');
